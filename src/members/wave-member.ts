@@ -30,8 +30,10 @@ export interface WaveMember {
   /** Whether the ends are held. */
   readonly nearFixed: boolean;
   readonly farFixed: boolean;
-  /** Index of the request's attachment that stands at each node, or −1, shape [n + 1]. */
-  readonly attachment: Int32Array;
+  /** Node at which each attachment of the request stands, shape [attachments]; several may share one. */
+  readonly attachmentNode: Int32Array;
+  /** Spring of each attachment of the request (N/m, or N·m/rad), shape [attachments]. */
+  readonly attachmentSpring: Float64Array;
   /** Damping that leaves the modes uncoupled. */
   readonly damping: ModalDamping;
 }
