@@ -1,0 +1,179 @@
+import type { WaveMember } from '../members/wave-member.ts';
+import { cosine, meanSquare, meanSquareBetween, sinc } from '../numerics/wave-functions.ts';
+
+/** Numbers kept a node side: displacement, flux and ∫ρu² + ΣMu² gathered, with a common log factor. */
+interface Branch {
+  readonly u: Float64Array;
+  readonly g: Float64Array;
+  readonly mass: Float64Array;
+  /** True displacement is e^{log} u; mass gathered goes with e^{2 log}. */
+  readonly log: Float64Array;
+}
+
+/**
+ * Static response of the member with stiffness shifted by σ times the inertia: (k u′)′ = (s + σρ) u,
+ * nodes K + σM. Everything marched is positive, so flexibilities keep full relative precision.
+ *
+ * With u_L, u_R the static solutions that meet the near and the far end conditions and
+ * W = u_R p_L − u_L p_R:
+ *
+ *   G(x,x) = u_L u_R / W,   G(x,z) = u_L(min) u_R(max) / W
+ *   H(x)   = [p_L² m_{z>x}(u_R,u_R) + p_R² m_{z<x}(u_L,u_L)] / W²
+ *
+ * where m_{z<x} and m_{z>x} are the inertia integrals on either side, node masses included; at a
+ * node with mass the side of x decides to which of the two the mass belongs.
+ * Needs σ > 0 or a restraint. Cost: O(segments) once, O(1) a station.
+ */
+export class StaticResponse {
+  private readonly member: WaveMember;
+  private readonly shift: number;
+  /** At the near end of each segment, lump of its near node passed. */
+  private readonly near: Branch;
+  /** At the far end of each segment, lump of its far node passed; flux counted positive (−p). */
+  private readonly far: Branch;
+
+  constructor(member: WaveMember, shift = 0) {
+    this.member = member;
+    this.shift = shift;
+    const n = member.segmentCount;
+    this.near = branch(n);
+    this.far = branch(n);
+    const flow = { u: 0, g: 0, mass: 0, log: 0 };
+    begin(flow, member.nearFixed, this.lump(0), member.mass[0]);
+    for (let i = 0; i < n; i++) {
+      store(this.near, i, flow);
+      this.cross(i, member.length[i], flow);
+      this.pass(i + 1, flow);
+    }
+    begin(flow, member.farFixed, this.lump(n), member.mass[n]);
+    for (let i = n - 1; i >= 0; i--) {
+      store(this.far, i, flow);
+      this.cross(i, member.length[i], flow);
+      this.pass(i, flow);
+    }
+  }
+
+  /** G(x,x), m/N, at a distance from the near end of segment i. */
+  flexibility(i: number, distance: number): number {
+    const { left, right } = this.meet(i, distance);
+    return 1 / (left.g / left.u + right.g / right.u);
+  }
+
+  /** H(x) = Σ p_n²/(ω_n²+σ)², kg (shaft: kg·m²), inside segment i; segment ends are the node sides. */
+  fluxInertia(i: number, distance: number): number {
+    const { left, right } = this.meet(i, distance);
+    const wronskian = right.u * left.g + left.u * right.g;
+    const a = left.g / wronskian;
+    const b = right.g / wronskian;
+    return a * a * right.mass + b * b * left.mass;
+  }
+
+  /** G(x,z), m/N: displacement at one station under a unit static force at the other. */
+  mutualFlexibility(i: number, distance: number, j: number, other: number): number {
+    const swap = j < i || (j === i && other < distance);
+    const [a, x, b, z] = swap ? [j, other, i, distance] : [i, distance, j, other];
+    const first = this.meet(a, x);
+    const second = this.meet(b, z);
+    const decay = Math.exp(second.right.log - first.right.log);
+    const wronskian = first.right.u * first.left.g + first.left.u * first.right.g;
+    return (first.left.u / wronskian) * second.right.u * decay;
+  }
+
+  /** Flux at a station (segment i, distance) under a unit static force at (j, other). */
+  influence(i: number, distance: number, j: number, other: number): number {
+    const before = i < j || (i === j && distance <= other);
+    const load = this.meet(j, other);
+    const wronskian = load.right.u * load.left.g + load.left.u * load.right.g;
+    const here = this.meet(i, distance);
+    return before
+      ? (load.right.u / wronskian) * here.left.g * Math.exp(here.left.log - load.left.log)
+      : -(load.left.u / wronskian) * here.right.g * Math.exp(here.right.log - load.right.log);
+  }
+
+  private meet(i: number, distance: number): { left: Flow; right: Flow } {
+    const left = recall(this.near, i);
+    this.cross(i, distance, left);
+    const right = recall(this.far, i);
+    this.cross(i, this.member.length[i] - distance, right);
+    return { left, right };
+  }
+
+  private lump(node: number): number {
+    return this.member.spring[node] + this.shift * this.member.mass[node];
+  }
+
+  private pass(node: number, flow: Flow): void {
+    flow.g += this.lump(node) * flow.u;
+    flow.mass += this.member.mass[node] * flow.u * flow.u;
+  }
+
+  /** Carries a branch over a stretch of segment i; all terms are positive. */
+  private cross(i: number, stretch: number, flow: Flow): void {
+    if (stretch <= 0) return;
+    const { member } = this;
+    const k = member.stiffness[i];
+    const rho = member.inertia[i];
+    const bedding = member.foundation[i] + this.shift * rho;
+    const square = (bedding * stretch * stretch) / k;
+    const e = (stretch / k) * flow.g;
+    if (square > 1) {
+      const a = Math.sqrt(square);
+      const impedance = (k / stretch) * a;
+      const e2 = Math.exp(-2 * a);
+      const u = flow.u * 0.5 * (1 + e2) + (e / a) * 0.5 * (1 - e2);
+      const g = flow.g * 0.5 * (1 + e2) + impedance * flow.u * 0.5 * (1 - e2);
+      flow.mass = flow.mass * e2 + rho * stretch * meanSquareBetween(flow.u * Math.exp(-a), u, a);
+      flow.u = u;
+      flow.g = g;
+      flow.log += a;
+    } else {
+      const c = cosine(-square);
+      const s = sinc(-square);
+      flow.mass += rho * stretch * meanSquare(flow.u, e, -square, c, s);
+      const g = flow.g * c + bedding * stretch * s * flow.u;
+      flow.u = flow.u * c + e * s;
+      flow.g = g;
+    }
+    const size = flow.u * (k / member.length[i]) + flow.g;
+    if (size > 1e70 || size < 1e-70) {
+      flow.u /= size;
+      flow.g /= size;
+      flow.mass /= size * size;
+      flow.log += Math.log(size);
+    }
+  }
+}
+
+interface Flow {
+  u: number;
+  g: number;
+  mass: number;
+  log: number;
+}
+
+function begin(flow: Flow, fixed: boolean, flux: number, mass: number): void {
+  flow.u = fixed ? 0 : 1;
+  flow.g = fixed ? 1 : flux;
+  flow.mass = fixed ? 0 : mass;
+  flow.log = 0;
+}
+
+function branch(n: number): Branch {
+  return {
+    u: new Float64Array(n),
+    g: new Float64Array(n),
+    mass: new Float64Array(n),
+    log: new Float64Array(n),
+  };
+}
+
+function store(into: Branch, i: number, flow: Flow): void {
+  into.u[i] = flow.u;
+  into.g[i] = flow.g;
+  into.mass[i] = flow.mass;
+  into.log[i] = flow.log;
+}
+
+function recall(from: Branch, i: number): Flow {
+  return { u: from.u[i], g: from.g[i], mass: from.mass[i], log: from.log[i] };
+}
