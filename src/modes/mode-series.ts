@@ -13,16 +13,16 @@ export interface Mode {
 }
 
 /** Neighbours closer than this (relative) are shaped together. */
-const CLOSE = 1e-6;
+const CLOSE = 1e-3;
 /** Segments tried as joints for the shapes of a close group. */
 const JOINT_LIMIT = 64;
-/** Independent part below which a shape counts as a copy of one already found. */
-const INDEPENDENT = 0.1;
+/** Least independent part, match counted, below which no second shape was found. */
+const INDEPENDENT = 1e-9;
 
 /**
  * The modes of a member in ascending order, made on demand.
  *
- * Shapes of neighbours whose frequencies differ by less than 1e-6 are made together: within such a
+ * Shapes of neighbours whose frequencies differ by less than 1e-3 are made together: within such a
  * group a single shape is defined only up to rounding over the gap, and two careless matches can
  * give the same shape twice. The group's shapes are therefore chosen independent, from joints in
  * different segments if need be, and made orthonormal in the mass product.
@@ -68,7 +68,7 @@ export class ModeSeries {
       if (next === null || next.omega - group[group.length - 1].omega > CLOSE * next.omega) break;
       // a dense spectrum is not a close group: spacing must also be small against the mean spacing
       const mean = Math.PI / this.frequencies.travelTime;
-      if (next.omega - group[group.length - 1].omega > 1e-2 * mean) break;
+      if (next.omega - group[group.length - 1].omega > 0.05 * mean) break;
       group.push(next);
     }
     if (group.length === 1) {
@@ -89,15 +89,15 @@ function shapeGroup(member: WaveMember, group: readonly NaturalFrequency[]): Mod
     for (const joint of joints(member, frequency.joint)) {
       const candidate = shapeAt(member, frequency.omega, joint);
       const freed = free(member, candidate, modes);
-      // a good match counts for more than independence beyond the threshold
-      const part = Math.min(freed.part, 0.5) / (1 + candidate.mismatch * 1e8);
+      // a poor match brings other modes in; beyond some independence nothing is gained
+      const part = Math.min(freed.part, 0.7) / (1 + candidate.mismatch * 1e11);
       if (part > bestPart) {
         bestPart = part;
         best = freed.shape;
       }
-      if (joint === frequency.joint && freed.part > 0.5) break;
+      if (part > 0.5) break;
     }
-    if (best === null || bestPart < INDEPENDENT * 1e-6) {
+    if (best === null || bestPart < INDEPENDENT) {
       best = free(member, shapeAt(member, frequency.omega, frequency.joint), []).shape;
     }
     let coupling = 0;

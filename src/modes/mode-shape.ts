@@ -14,8 +14,8 @@ export interface ModeShape {
   /** φ and p = k φ′ at both ends of each segment, shape [segments × 4]: u near, p near, u far, p far. */
   readonly ends: Float64Array;
   /**
-   * Defect of the match relative to the mode's energy, |Δp φ|/ω²: how far the two marched sides
-   * miss each other at the joint.
+   * How far the two marched sides miss each other at the joint: the amplitude that the missing force
+   * would drive in a mode living in the joining segment, relative to this one, |Δp|/(ω² √(ρ l)).
    */
   readonly mismatch: number;
 }
@@ -90,8 +90,9 @@ export function shapeAt(member: WaveMember, omega: number, joint: number): ModeS
   const mass = modalMass(member, lambda, ends);
   const size = 1 / Math.sqrt(mass);
   for (let i = 0; i < ends.length; i++) ends[i] *= size;
-  const defect = (pNear * uFar - pFar * uNear) * factor;
-  return { lambda, ends, mismatch: Math.abs(defect) / (mass * lambda) };
+  const missing = Math.hypot(scale * (uNear - factor * uFar), pNear - factor * pFar) / Math.sqrt(mass);
+  const local = member.inertia[joint] * member.length[joint];
+  return { lambda, ends, mismatch: missing / (lambda * Math.sqrt(local > 0 ? local : 1 / size ** 2)) };
 }
 
 /** The rigid-body mode: φ = 1/√m, no flux. */
