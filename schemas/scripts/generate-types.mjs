@@ -21,7 +21,7 @@ export type Numbers = readonly number[] | Float64Array;
 
 const files = readdirSync(schemas)
   .filter((name) => name.endsWith('.json'))
-  .sort();
+  .toSorted();
 const byName = new Map(
   files.map((name) => [name.slice(0, -5), JSON.parse(readFileSync(new URL(name, schemas), 'utf8'))]),
 );

@@ -1,13 +1,12 @@
+import { memberFaultWordings } from './member-faults.ts';
+
 /**
  * Every fault that the service can report: stable code, title and wording with the remedy.
  * `{names}` are filled in where the fault is raised. No HTTP status here: http/ maps codes to it.
  */
 export const catalogue = {
-  'no-inertia': {
-    title: 'The member has no inertia',
-    detail:
-      'No segment and no moving node carries inertia, so nothing can vibrate. Give at least one segment or attachment a mass.',
-  },
+  ...memberFaultWordings,
+
   'pull-without-restraint': {
     title: 'A pull needs a restraint',
     detail:

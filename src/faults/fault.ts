@@ -35,7 +35,9 @@ export type FaultValues = Readonly<Record<string, string | number>>;
  * @param values values for the `{names}` in the wording; every name must be given
  */
 export function faultRecord(code: FaultCode, pointer: string, values: FaultValues = {}): FaultRecord {
-  const detail = catalogue[code].detail.replace(/\{(\w+)\}/g, (_, name: string) => String(values[name] ?? '?'));
+  const detail = catalogue[code].detail.replace(/\{(\w+)\}/g, (_, name: string) =>
+    String(values[name] ?? '?'),
+  );
   return { code, pointer, detail };
 }
 
