@@ -29,6 +29,15 @@ export const catalogue = {
     title: 'No mass to move',
     detail: 'There is no mass at {at} m that could have a velocity of its own. Masses stand at: {places}.',
   },
+  'moving-end-not-fixed': {
+    title: 'The moving end is not a fixed end',
+    detail:
+      'Participation for "{ends}" moves the {end} end as a support, but that end is not fixed. Make it fixed, or choose other ends, or "uniform" where no end is fixed.',
+  },
+  'uniform-motion-held': {
+    title: 'A fixed end cannot follow a uniform motion',
+    detail: 'Participation for "uniform" moves every point by one unit, but the {end} end is fixed. Choose "near", "far" or "both".',
+  },
   'mode-out-of-reach': {
     title: 'Modes out of reach',
     detail:

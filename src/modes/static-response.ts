@@ -90,6 +90,26 @@ export class StaticResponse {
       : -(load.left.u / wronskian) * here.right.g * Math.exp(here.right.log - load.right.log);
   }
 
+  /**
+   * Static displacement of the nodes when one end is moved by 1 and the other keeps its condition,
+   * shape [segments + 1].
+   */
+  endMotion(end: 'near' | 'far'): Float64Array {
+    const n = this.member.segmentCount;
+    const nodes = new Float64Array(n + 1);
+    const moving = end === 'near' ? recall(this.far, 0) : recall(this.near, n - 1);
+    this.cross(end === 'near' ? 0 : n - 1, this.member.length[end === 'near' ? 0 : n - 1], moving);
+    for (let i = 0; i < n; i++) {
+      if (end === 'near') {
+        nodes[i + 1] = (this.far.u[i] / moving.u) * Math.exp(this.far.log[i] - moving.log);
+      } else {
+        nodes[i] = (this.near.u[i] / moving.u) * Math.exp(this.near.log[i] - moving.log);
+      }
+    }
+    nodes[end === 'near' ? 0 : n] = 1;
+    return nodes;
+  }
+
   private meet(i: number, distance: number): { left: Flow; right: Flow } {
     const left = recall(this.near, i);
     this.cross(i, distance, left);
