@@ -1,0 +1,220 @@
+import { performance } from 'node:perf_hooks';
+import { Piscina } from 'piscina';
+import { faultRecord, type FaultRecord } from '../faults/fault.ts';
+import { LoadEstimate } from './load-estimate.ts';
+import type { SolveResult, SolveTask } from './task.ts';
+
+export interface SolverPoolOptions {
+  /** Compiled module whose default export serves the tasks. */
+  readonly workerFile: string;
+  /** Number of worker threads, ≥ 1. */
+  readonly workers: number;
+  /** Requests that may wait for a worker, ≥ 0. */
+  readonly queueLimit: number;
+  /** Heap of one worker in MiB; typed arrays are not counted. */
+  readonly memoryLimit: number;
+  /** Told of a worker that fails while it has no task. */
+  readonly onWorkerError: (error: Error) => void;
+}
+
+export interface SolveLimits {
+  /** Moment of arrival of the request, in ms of performance.now(). */
+  readonly arrived: number;
+  /** Seconds from arrival to the answer, waiting included. */
+  readonly deadline: number;
+  /** Aborts when nobody waits for the answer any more. */
+  readonly gone?: AbortSignal;
+}
+
+/** What comes of one request; `cause` is for the log, not for the client. */
+export type SolveOutcome =
+  | { readonly kind: 'answer'; readonly bytes: Uint8Array<ArrayBuffer>; readonly seconds: number }
+  | { readonly kind: 'faults'; readonly records: readonly FaultRecord[]; readonly cause?: string }
+  | { readonly kind: 'gone' };
+
+/** One request on its way through the pool. */
+interface Job {
+  readonly task: SolveTask;
+  readonly stopper: AbortController;
+  /** Settles the request; later calls do nothing. */
+  readonly settle: (outcome: SolveOutcome) => void;
+}
+
+/**
+ * A fixed number of worker threads behind a bounded line of waiting requests, first come, first
+ * served. Every request is settled exactly once: by its answer, by faults, or because its client has
+ * gone. A worker whose task is stopped, crashes or runs out of memory is ended and replaced.
+ *
+ * The line is kept here because the pool library counts only tasks without an abort signal against
+ * its own queue limit, and moves those with one out of order.
+ */
+export class SolverPool {
+  readonly #options: SolverPoolOptions;
+  readonly #threads: Piscina;
+  readonly #load = new LoadEstimate();
+  readonly #waiting: Job[] = [];
+  readonly #running = new Set<Job>();
+  #stopping = false;
+  #ready = false;
+  #drained: () => void = () => undefined;
+
+  constructor(options: SolverPoolOptions) {
+    this.#options = options;
+    this.#threads = new Piscina({
+      filename: options.workerFile,
+      minThreads: options.workers,
+      maxThreads: options.workers,
+      idleTimeout: Infinity,
+      resourceLimits: { maxOldGenerationSizeMb: options.memoryLimit },
+    });
+    // Without a listener an error of an idle worker would end the process.
+    this.#threads.on('error', options.onWorkerError);
+  }
+
+  get isReady(): boolean {
+    return this.#ready && !this.#stopping;
+  }
+
+  get running(): number {
+    return this.#running.size;
+  }
+
+  get waiting(): number {
+    return this.#waiting.length;
+  }
+
+  /** Whole seconds after which a refused client may try again, 1 to 60. */
+  get retryAfter(): number {
+    return this.#load.secondsUntilFree(this.#running.size + this.#waiting.length, this.#options.workers);
+  }
+
+  /** Waits until every worker has loaded and warmed up; rejects when one cannot. */
+  async start(): Promise<void> {
+    const signs = Array.from({ length: this.#options.workers }, () =>
+      this.#threads.run({ kind: 'ready' } satisfies SolveTask),
+    );
+    await Promise.all(signs);
+    this.#ready = true;
+  }
+
+  /**
+   * Solves one request in a worker.
+   *
+   * Faults of the pool itself: `queue-full`, `deadline-exceeded`, `solver-out-of-memory`,
+   * `solver-crashed`, `internal-error`, `stopping`.
+   */
+  run(task: SolveTask, limits: SolveLimits): Promise<SolveOutcome> {
+    if (this.#stopping) return Promise.resolve(refusal('stopping'));
+    if (this.#running.size >= this.#options.workers && this.#waiting.length >= this.#options.queueLimit) {
+      return Promise.resolve(refusal('queue-full', { limit: this.#options.queueLimit }));
+    }
+    return new Promise((resolve) => this.#admit(task, limits, resolve));
+  }
+
+  /** Refuses new work, lets work under way finish for up to `grace` seconds, refuses the rest, ends the workers. */
+  async stop(grace: number): Promise<void> {
+    this.#stopping = true;
+    if (this.#running.size > 0) {
+      const timer = setTimeout(() => this.#refuseAll(), grace * 1000);
+      await new Promise<void>((resolve) => (this.#drained = resolve));
+      clearTimeout(timer);
+    }
+    await this.#threads.destroy();
+  }
+
+  #admit(task: SolveTask, limits: SolveLimits, resolve: (outcome: SolveOutcome) => void): void {
+    const left = Math.max(0, limits.arrived + limits.deadline * 1000 - performance.now());
+    const timer = setTimeout(
+      () => job.settle(refusal('deadline-exceeded', { seconds: limits.deadline })),
+      left,
+    );
+    const leave = (): void => job.settle({ kind: 'gone' });
+    const job: Job = {
+      task,
+      stopper: new AbortController(),
+      settle: (outcome) => {
+        clearTimeout(timer);
+        limits.gone?.removeEventListener('abort', leave);
+        resolve(outcome);
+        this.#remove(job);
+      },
+    };
+    if (limits.gone?.aborted) return leave();
+    limits.gone?.addEventListener('abort', leave, { once: true });
+    this.#waiting.push(job);
+    this.#next();
+  }
+
+  /** Takes a settled request out of the pool; a worker still at it is ended and replaced. */
+  #remove(job: Job): void {
+    if (this.#running.delete(job)) {
+      job.stopper.abort();
+    } else {
+      const place = this.#waiting.indexOf(job);
+      if (place >= 0) this.#waiting.splice(place, 1);
+    }
+    this.#next();
+    if (this.#running.size === 0) this.#drained();
+  }
+
+  #next(): void {
+    while (this.#running.size < this.#options.workers) {
+      const job = this.#waiting.shift();
+      if (job === undefined) return;
+      this.#running.add(job);
+      void this.#solve(job);
+    }
+  }
+
+  async #solve(job: Job): Promise<void> {
+    const { task, stopper } = job;
+    const transferList = task.kind === 'body' ? movableBuffers(task.body) : [];
+    let outcome: SolveOutcome;
+    try {
+      const result = (await this.#threads.run(task, { signal: stopper.signal, transferList })) as SolveResult;
+      outcome = this.#outcomeOf(result);
+    } catch (error) {
+      outcome = outcomeOfCrash(error);
+    }
+    this.#running.delete(job);
+    job.settle(outcome);
+  }
+
+  #outcomeOf(result: SolveResult): SolveOutcome {
+    switch (result.kind) {
+      case 'answer':
+        this.#load.record(result.seconds);
+        return result;
+      case 'faults':
+        return result;
+      case 'error':
+        return { ...refusal(result.memory ? 'solver-out-of-memory' : 'internal-error'), cause: result.stack };
+      case 'ready':
+        return { ...refusal('internal-error'), cause: 'a sign of life is no answer' };
+    }
+  }
+
+  #refuseAll(): void {
+    for (const job of [...this.#waiting, ...this.#running]) job.settle(refusal('stopping'));
+  }
+}
+
+type PoolFault = Parameters<typeof faultRecord>[0];
+
+function refusal(
+  code: PoolFault,
+  values: Record<string, number> = {},
+): Extract<SolveOutcome, { kind: 'faults' }> {
+  return { kind: 'faults', records: [faultRecord(code, '', values)] };
+}
+
+function outcomeOfCrash(error: unknown): SolveOutcome {
+  const memory = (error as NodeJS.ErrnoException).code === 'ERR_WORKER_OUT_OF_MEMORY';
+  return { ...refusal(memory ? 'solver-out-of-memory' : 'solver-crashed'), cause: String(error) };
+}
+
+/** The buffer under a body, if it holds nothing else: small bodies share one slab, which must not be moved. */
+function movableBuffers(body: Uint8Array): ArrayBuffer[] {
+  const { buffer } = body;
+  return buffer instanceof ArrayBuffer && buffer.byteLength === body.byteLength ? [buffer] : [];
+}
