@@ -1,16 +1,29 @@
+import { formFaultWordings } from './form-faults.ts';
 import { memberFaultWordings } from './member-faults.ts';
+import { senseFaultWordings } from './sense-faults.ts';
 
 /**
  * Every fault that the service can report: stable code, title and wording with the remedy.
  * `{names}` are filled in where the fault is raised. No HTTP status here: http/ maps codes to it.
  */
 export const catalogue = {
+  ...formFaultWordings,
+  ...senseFaultWordings,
   ...memberFaultWordings,
 
   'pull-without-restraint': {
     title: 'A pull needs a restraint',
     detail:
       'The member can move as a rigid body (no fixed end, spring or foundation), so a static pull at {at} m has no shape of rest. Restrain the member or describe the shape by a polyline.',
+  },
+  'pull-at-fixed-end': {
+    title: 'A fixed end cannot be pulled',
+    detail: 'The pull at {at} m acts on a fixed end, which does not move. Pull at another place.',
+  },
+  'force-in-velocity': {
+    title: 'A force is no velocity',
+    detail:
+      'The velocity shape of the pull at {at} m is given by a force. Give its amplitude, the velocity at that place, in m/s (shaft: rad/s).',
   },
   'infinite-energy': {
     title: 'The initial displacement has infinite energy',

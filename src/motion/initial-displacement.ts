@@ -1,0 +1,163 @@
+import { fault } from '../faults/fault.ts';
+import type { WaveMember } from '../members/wave-member.ts';
+import type { MasslessStretch } from '../modes/massless-stretches.ts';
+import type { StaticResponse } from '../modes/static-response.ts';
+import type { PullShape, Shape } from '../spec/types.ts';
+import { pieceValue, type Piece, type PiecewiseField, type WaveTerm } from './piecewise-field.ts';
+import { place, shapePieces, type GivenShape } from './shape-pieces.ts';
+
+/** A static force held until t = 0, whose shape of rest is part of the initial displacement. */
+export interface HeldForce {
+  readonly segment: number;
+  /** Distance from the near end of the segment, m. */
+  readonly distance: number;
+  /** N (shaft: N·m). */
+  readonly force: number;
+}
+
+/** The initial displacement: given pieces plus the static shapes of held forces. */
+export interface InitialDisplacement {
+  readonly pieces: PiecewiseField;
+  readonly pulls: readonly HeldForce[];
+}
+
+/** Units of rounding, times the terms summed, within which a value counts as 0 or continuous. */
+const CONTINUITY = 256 * Number.EPSILON;
+
+/**
+ * Reads the shapes of the initial displacement.
+ *
+ * Faults: `pull-without-restraint`, `pull-at-fixed-end`, `infinite-energy` (a jump, or a fixed end
+ * that is displaced).
+ */
+export function readDisplacement(
+  member: WaveMember,
+  shapes: readonly Shape[],
+  response: StaticResponse | null,
+): InitialDisplacement {
+  const given = shapes.filter((shape): shape is GivenShape => shape.type !== 'pull');
+  const pieces = shapePieces(member, given);
+  requireContinuity(member, pieces);
+  const pulls: HeldForce[] = [];
+  shapes.forEach((shape, index) => {
+    if (shape.type !== 'pull') return;
+    pulls.push(readPull(member, shape, response, index));
+  });
+  return { pieces, pulls };
+}
+
+function readPull(
+  member: WaveMember,
+  shape: PullShape,
+  response: StaticResponse | null,
+  index: number,
+): HeldForce {
+  const pointer = `/initial/displacement/${index}/at`;
+  if (response === null) throw fault('pull-without-restraint', pointer, { at: shape.at });
+  const { segment, distance } = place(member, shape.at);
+  if ('force' in shape) return { segment, distance, force: shape.force };
+  const flexibility = response.flexibility(segment, distance);
+  if (flexibility === 0) throw fault('pull-at-fixed-end', pointer, { at: shape.at });
+  return { segment, distance, force: shape.amplitude / flexibility };
+}
+
+function requireContinuity(member: WaveMember, pieces: PiecewiseField): void {
+  const refuse = (at: number, reason: string, remedy: string): never => {
+    throw fault('infinite-energy', '/initial/displacement', { at, reason, remedy });
+  };
+  const first = pieceValue(pieces[0], 0);
+  const last = pieces[pieces.length - 1];
+  const end = pieceValue(last, last.length);
+  const release = 'Let it end at 0 there, or change the end.';
+  if (member.nearFixed && Math.abs(first.value) > CONTINUITY * first.scale) {
+    refuse(0, `is ${first.value} at the fixed near end`, release);
+  }
+  if (member.farFixed && Math.abs(end.value) > CONTINUITY * end.scale) {
+    refuse(member.position[member.segmentCount], `is ${end.value} at the fixed far end`, release);
+  }
+  for (let c = 1; c < pieces.length; c++) {
+    const before = pieceValue(pieces[c - 1], pieces[c - 1].length);
+    const after = pieceValue(pieces[c], 0);
+    if (Math.abs(after.value - before.value) > CONTINUITY * (before.scale + after.scale)) {
+      const at = member.position[pieces[c].segment] + pieces[c].start;
+      refuse(
+        at,
+        `jumps from ${before.value} to ${after.value}`,
+        'Join the values, for example by a polyline with a short slope.',
+      );
+    }
+  }
+}
+
+/**
+ * The displacement that the member keeps for t > 0: in massless stretches the static interpolation
+ * of the end nodes, held forces inside one shared between its end nodes. The strain energy given up
+ * is radiated at once by the massless parts.
+ */
+export function settle(
+  member: WaveMember,
+  given: InitialDisplacement,
+  stretches: readonly MasslessStretch[],
+): InitialDisplacement {
+  if (stretches.length === 0) return given;
+  const value = nodeValues(member, given.pieces);
+  const pulls: HeldForce[] = [];
+  for (const pull of given.pulls) {
+    const stretch = stretches.find((run) => pull.segment >= run.first && pull.segment <= run.last);
+    if (!stretch) {
+      pulls.push(pull);
+      continue;
+    }
+    const share = (nodes: Float64Array): number =>
+      interpolate(member, stretch, nodes, pull.segment).at(pull.distance);
+    const near = pull.force * share(stretch.nearShape);
+    const far = pull.force * share(stretch.farShape);
+    if (near !== 0) pulls.push({ segment: stretch.first, distance: 0, force: near });
+    if (far !== 0) pulls.push({ segment: stretch.last, distance: member.length[stretch.last], force: far });
+  }
+  const pieces: Piece[] = given.pieces.filter((piece) => member.inertia[piece.segment] > 0);
+  for (const stretch of stretches) {
+    const near = value[stretch.first];
+    const far = value[stretch.last + 1];
+    const nodes = stretch.nearShape.map((shape, j) => near * shape + far * stretch.farShape[j]);
+    for (let i = stretch.first; i <= stretch.last; i++) pieces.push(interpolate(member, stretch, nodes, i).piece);
+  }
+  pieces.sort((a, b) => a.segment - b.segment || a.start - b.start);
+  return { pieces, pulls };
+}
+
+/** The static curve between two node values on one massless segment. */
+function interpolate(
+  member: WaveMember,
+  stretch: MasslessStretch,
+  nodes: Float64Array,
+  segment: number,
+): { piece: Piece; at: (distance: number) => number } {
+  const near = nodes[segment - stretch.first];
+  const far = nodes[segment - stretch.first + 1];
+  const length = member.length[segment];
+  const square = -member.foundation[segment] / member.stiffness[segment];
+  const waves: WaveTerm[] = [];
+  const powers: number[] = [];
+  if (square === 0) {
+    powers.push(near, far - near);
+  } else {
+    const a = Math.sqrt(-square) * length;
+    const slope = ((far - near * Math.cosh(Math.min(a, 700))) * a) / Math.sinh(Math.min(a, 700)) / length;
+    waves.push({ square, value: near, slope, farValue: far });
+  }
+  const piece: Piece = { segment, start: 0, length, powers, waves };
+  return { piece, at: (distance) => pieceValue(piece, distance).value };
+}
+
+/** Displacement of the nodes, shape [segments + 1]. */
+export function nodeValues(member: WaveMember, pieces: PiecewiseField): Float64Array {
+  const nodes = new Float64Array(member.segmentCount + 1);
+  for (const piece of pieces) {
+    if (piece.start === 0) nodes[piece.segment] = pieceValue(piece, 0).value;
+    nodes[piece.segment + 1] = pieceValue(piece, piece.length).value;
+  }
+  if (member.nearFixed) nodes[0] = 0;
+  if (member.farFixed) nodes[member.segmentCount] = 0;
+  return nodes;
+}
