@@ -75,6 +75,10 @@ export class SolverPool {
     return this.#ready && !this.#stopping;
   }
 
+  get isStopping(): boolean {
+    return this.#stopping;
+  }
+
   get running(): number {
     return this.#running.size;
   }

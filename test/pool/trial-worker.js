@@ -45,6 +45,10 @@ const solvers = {
   numbers: ({ count }) => ({ values: Float64Array.from({ length: count }, (_, i) => Math.sin(i)) }),
 };
 
+// What a request over HTTP asks for in `do`.
+solvers.modes = (request) => solvers[request.do ?? 'echo'](request);
+solvers.responses = solvers.modes;
+
 const operations = Object.fromEntries(
   Object.entries(solvers).map(([name, solve]) => [name, { read, solve }]),
 );

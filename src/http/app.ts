@@ -1,0 +1,98 @@
+import accepts from '@fastify/accepts';
+import helmet from '@fastify/helmet';
+import { fastify, LogController, type FastifyBaseLogger, type FastifyInstance } from 'fastify';
+import { faultRecord } from '../faults/fault.ts';
+import { clientErrorHandler } from './client-errors.ts';
+import { addDocumentResources, type ReferenceDocument } from './document-resources.ts';
+import { addHealthResources } from './health-resources.ts';
+import { addProblemReplies, pathOf, sendProblem } from './problem-replies.ts';
+import { requestId } from './request-id.ts';
+import { knowAllMethods } from './resource.ts';
+import { addSolveResource, type SolveOptions } from './solve-resource.ts';
+
+/** Time that a request may take to arrive, s. */
+const requestTimeout = 60;
+
+export interface AppOptions extends SolveOptions {
+  /** Largest body in bytes. */
+  readonly bodyLimit: number;
+  /** Seconds that work under way may take once the service is being stopped. */
+  readonly stopGrace: number;
+  readonly document: ReferenceDocument;
+  readonly logger?: FastifyBaseLogger;
+}
+
+/** The service as an app that is ready to listen; closing it stops the pool gracefully. */
+export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
+  const { pool, bodyLimit, document, logger } = options;
+  const app = fastify({
+    ...(logger === undefined ? {} : { loggerInstance: logger }),
+    logController: new LogController({ disableRequestLogging: true }),
+    genReqId: requestId,
+    bodyLimit,
+    requestTimeout: requestTimeout * 1000,
+    // A request that meets a stopping service gets a problem document from the pool instead.
+    return503OnClosing: false,
+    clientErrorHandler: clientErrorHandler(requestTimeout),
+    frameworkErrors: (error, request, reply) => {
+      const reason = error.code === 'FST_ERR_BAD_URL' ? 'the path is not percent-encoded' : error.message;
+      sendProblem(request, reply, [faultRecord('malformed-http', '', { reason })], pool);
+    },
+  });
+  knowAllMethods(app);
+  app.removeAllContentTypeParsers();
+  app.addContentTypeParser('application/json', { parseAs: 'buffer' }, (_request, body, done) =>
+    done(null, body),
+  );
+  await app.register(accepts);
+  await app.register(helmet, {
+    contentSecurityPolicy: {
+      useDefaults: false,
+      directives: { defaultSrc: ["'none'"], frameAncestors: ["'none'"] },
+    },
+    // Whoever ends TLS decides on that.
+    strictTransportSecurity: false,
+  });
+
+  const paths = new Set<string>();
+  app.addHook('onRoute', (route) => {
+    paths.add(route.url);
+  });
+  addRequestLog(app);
+  addProblemReplies(app, { pool, bodyLimit, paths: () => [...paths] });
+  addGracefulStop(app, options);
+  addSolveResource(app, '/v1/modes', 'modes', options);
+  addSolveResource(app, '/v1/responses', 'responses', options);
+  addHealthResources(app, pool);
+  addDocumentResources(app, document);
+  return app;
+}
+
+/** One line per request, with its id; never a body. */
+function addRequestLog(app: FastifyInstance): void {
+  app.addHook('onRequest', async (request, reply) => {
+    reply.header('x-request-id', request.id);
+  });
+  app.addHook('onResponse', async (request, reply) => {
+    const { method, ip } = request;
+    const milliseconds = Math.round(reply.elapsedTime * 10) / 10;
+    request.log.info(
+      { method, path: pathOf(request), ip, status: reply.statusCode, milliseconds },
+      'request answered',
+    );
+  });
+}
+
+/**
+ * Closing first stops the pool (work under way finishes or is refused), then the server. Answers
+ * given meanwhile end their connections: an idle kept-alive one would hold the server open for its
+ * whole time-out.
+ */
+function addGracefulStop(app: FastifyInstance, { pool, stopGrace }: AppOptions): void {
+  app.addHook('preClose', async () => {
+    await pool.stop(stopGrace);
+  });
+  app.addHook('onSend', async (_request, reply) => {
+    if (pool.isStopping) reply.header('connection', 'close');
+  });
+}

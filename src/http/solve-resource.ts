@@ -1,0 +1,62 @@
+import { performance } from 'node:perf_hooks';
+import type { FastifyInstance, FastifyRequest } from 'fastify';
+import { readJson } from '../encoding/read-json.ts';
+import { Fault } from '../faults/fault.ts';
+import type { SolverPool } from '../pool/solver-pool.ts';
+import type { SolveTask } from '../pool/task.ts';
+import { goneSignal } from './client-gone.ts';
+import { preferredWait } from './prefer.ts';
+import { addResource } from './resource.ts';
+
+/**
+ * Largest body in bytes that is read on the event loop; larger ones are read in the worker. Chosen so
+ * that reading and checking hold the loop for less than 5 ms (test/bench); the contract allows 256 KiB.
+ */
+export const inlineBodyLimit = 64 * 1024;
+
+export interface SolveOptions {
+  readonly pool: SolverPool;
+  /** Reads a parsed body of an operation into the canonical request; throws Fault. */
+  readonly readRequest: (operation: string, body: unknown) => unknown;
+  /** Longest time from the arrival of a request to its answer, s. */
+  readonly solveDeadline: number;
+}
+
+/** `POST url` solves one operation: read, pool, reply. */
+export function addSolveResource(
+  app: FastifyInstance,
+  url: string,
+  operation: string,
+  options: SolveOptions,
+): void {
+  const { pool, solveDeadline } = options;
+  addResource(app, {
+    url,
+    offers: ['application/json'],
+    post: async (request, reply) => {
+      const arrived = performance.now();
+      const wait = preferredWait(request.headers.prefer);
+      const deadline = Math.min(wait ?? solveDeadline, solveDeadline);
+      const task = taskOf(request, operation, options);
+      const outcome = await pool.run(task, { arrived, deadline, gone: goneSignal(reply) });
+      if (outcome.kind === 'gone') {
+        request.log.info({ operation }, 'client gone');
+        return reply.hijack();
+      }
+      if (outcome.kind === 'faults') {
+        if (outcome.cause !== undefined)
+          request.log.error({ operation, cause: outcome.cause }, 'solver failed');
+        throw new Fault(outcome.records);
+      }
+      if (wait !== null && wait === deadline) reply.header('preference-applied', `wait=${wait}`);
+      const { buffer, byteOffset, byteLength } = outcome.bytes;
+      return reply.type('application/json').send(Buffer.from(buffer, byteOffset, byteLength));
+    },
+  });
+}
+
+function taskOf(request: FastifyRequest, operation: string, { readRequest }: SolveOptions): SolveTask {
+  const body = (request.body as Buffer | undefined) ?? Buffer.alloc(0);
+  if (body.byteLength > inlineBodyLimit) return { kind: 'body', operation, body };
+  return { kind: 'request', operation, request: readRequest(operation, readJson(body)) };
+}
