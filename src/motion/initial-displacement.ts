@@ -100,7 +100,6 @@ export function settle(
   stretches: readonly MasslessStretch[],
 ): InitialDisplacement {
   if (stretches.length === 0) return given;
-  const value = nodeValues(member, given.pieces);
   const pulls: HeldForce[] = [];
   for (const pull of given.pulls) {
     const stretch = stretches.find((run) => pull.segment >= run.first && pull.segment <= run.last);
@@ -115,7 +114,18 @@ export function settle(
     if (near !== 0) pulls.push({ segment: stretch.first, distance: 0, force: near });
     if (far !== 0) pulls.push({ segment: stretch.last, distance: member.length[stretch.last], force: far });
   }
-  const pieces: Piece[] = given.pieces.filter((piece) => member.inertia[piece.segment] > 0);
+  return { pieces: settlePieces(member, given.pieces, nodeValues(member, given.pieces), stretches), pulls };
+}
+
+/** Pieces with the massless stretches replaced by the static interpolation of the given node values. */
+export function settlePieces(
+  member: WaveMember,
+  given: PiecewiseField,
+  value: Float64Array,
+  stretches: readonly MasslessStretch[],
+): PiecewiseField {
+  if (stretches.length === 0) return given;
+  const pieces: Piece[] = given.filter((piece) => member.inertia[piece.segment] > 0);
   for (const stretch of stretches) {
     const near = value[stretch.first];
     const far = value[stretch.last + 1];
@@ -123,7 +133,7 @@ export function settle(
     for (let i = stretch.first; i <= stretch.last; i++) pieces.push(interpolate(member, stretch, nodes, i).piece);
   }
   pieces.sort((a, b) => a.segment - b.segment || a.start - b.start);
-  return { pieces, pulls };
+  return pieces;
 }
 
 /** The static curve between two node values on one massless segment. */

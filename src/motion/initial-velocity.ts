@@ -12,8 +12,6 @@ export interface InitialVelocity {
   readonly pieces: PiecewiseField;
   /** Velocity of the node masses, shape [segments + 1]; 0 where there is no mass. */
   readonly masses: Float64Array;
-  /** Whether every node mass moves with the density at its place. */
-  readonly massesFollow: boolean;
 }
 
 /**
@@ -58,20 +56,17 @@ export function readVelocity(
 
   const atNodes = velocityAtNodes(member, pieces);
   const masses = new Float64Array(member.segmentCount + 1);
-  for (let j = 0; j <= member.segmentCount; j++) if (member.mass[j] > 0) masses[j] = atNodes.value[j];
-  let massesFollow = atNodes.continuous;
+  for (let j = 0; j <= member.segmentCount; j++) if (member.mass[j] > 0) masses[j] = atNodes[j];
   for (const own of initial.massVelocities ?? []) {
     const j = massNode(member, own.at) as number;
-    if (own.velocity !== masses[j]) massesFollow = false;
     masses[j] = own.velocity;
   }
   for (const impulse of impulses) {
     if (impulse.width !== undefined && impulse.width > 0) continue;
     const j = massNode(member, impulse.at) as number;
     masses[j] += impulse.impulse / member.mass[j];
-    if (impulse.impulse !== 0) massesFollow = false;
   }
-  return { pieces, masses, massesFollow };
+  return { pieces, masses };
 }
 
 /** One or several as a list. */
@@ -129,12 +124,7 @@ function reach(impulse: Impulse): [number, number] {
   return [impulse.at - half, impulse.at + half];
 }
 
-function velocityAtNodes(
-  member: WaveMember,
-  pieces: PiecewiseField,
-): { value: Float64Array; continuous: boolean } {
-  const value = new Float64Array(member.segmentCount + 1);
-  let continuous = true;
+function velocityAtNodes(member: WaveMember, pieces: PiecewiseField): Float64Array {
   const near = new Float64Array(member.segmentCount + 1);
   const far = new Float64Array(member.segmentCount + 1);
   for (const piece of pieces) {
@@ -143,13 +133,7 @@ function velocityAtNodes(
   }
   near[0] = far[0];
   far[member.segmentCount] = near[member.segmentCount];
-  for (let j = 0; j <= member.segmentCount; j++) {
-    if (member.mass[j] === 0) continue;
-    const jump = Math.abs(near[j] - far[j]) > 256 * Number.EPSILON * (Math.abs(near[j]) + Math.abs(far[j]));
-    if (jump) continuous = false;
-    value[j] = near[j] === 0 ? far[j] : far[j] === 0 ? near[j] : 0.5 * (near[j] + far[j]);
-  }
-  return { value, continuous };
+  return near.map((value, j) => (value === 0 ? far[j] : far[j] === 0 ? value : 0.5 * (value + far[j])));
 }
 
 /** Node of the mass at a place, or null. */
