@@ -145,9 +145,9 @@ describe('the service under load', () => {
       response.arrayBuffer(),
     );
     const times: number[] = [];
-    let done = false;
-    void large.finally(() => (done = true));
-    while (!done) {
+    const progress = { done: false };
+    void large.finally(() => (progress.done = true));
+    while (!progress.done) {
       const started = performance.now();
       await (await fetch(`${url}/health/live`)).arrayBuffer();
       times.push(performance.now() - started);
