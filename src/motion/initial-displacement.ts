@@ -3,7 +3,7 @@ import type { WaveMember } from '../members/wave-member.ts';
 import type { MasslessStretch } from '../modes/massless-stretches.ts';
 import type { StaticResponse } from '../modes/static-response.ts';
 import type { PullShape, Shape } from '../spec/types.ts';
-import { pieceValue, type Piece, type PiecewiseField, type WaveTerm } from './piecewise-field.ts';
+import { nodeValuesOf, pieceValue, type Piece, type PiecewiseField, type WaveTerm } from './piecewise-field.ts';
 import { place, shapePieces, type GivenShape } from './shape-pieces.ts';
 
 /** A static force held until t = 0, whose shape of rest is part of the initial displacement. */
@@ -114,7 +114,7 @@ export function settle(
     if (near !== 0) pulls.push({ segment: stretch.first, distance: 0, force: near });
     if (far !== 0) pulls.push({ segment: stretch.last, distance: member.length[stretch.last], force: far });
   }
-  return { pieces: settlePieces(member, given.pieces, nodeValues(member, given.pieces), stretches), pulls };
+  return { pieces: settlePieces(member, given.pieces, nodeValuesOf(given.pieces, member.segmentCount), stretches), pulls };
 }
 
 /** Pieces with the massless stretches replaced by the static interpolation of the given node values. */
@@ -158,16 +158,4 @@ function interpolate(
   }
   const piece: Piece = { segment, start: 0, length, powers, waves };
   return { piece, at: (distance) => pieceValue(piece, distance).value };
-}
-
-/** Displacement of the nodes, shape [segments + 1]. */
-export function nodeValues(member: WaveMember, pieces: PiecewiseField): Float64Array {
-  const nodes = new Float64Array(member.segmentCount + 1);
-  for (const piece of pieces) {
-    if (piece.start === 0) nodes[piece.segment] = pieceValue(piece, 0).value;
-    nodes[piece.segment + 1] = pieceValue(piece, piece.length).value;
-  }
-  if (member.nearFixed) nodes[0] = 0;
-  if (member.farFixed) nodes[member.segmentCount] = 0;
-  return nodes;
 }

@@ -129,3 +129,13 @@ function amplitude(term: WaveTerm): number {
     ? Math.hypot(term.value, term.slope / kappa)
     : Math.abs(term.value) + Math.abs(term.farValue);
 }
+
+/** Values at the nodes, shape [segments + 1]. */
+export function nodeValuesOf(pieces: PiecewiseField, segmentCount: number): Float64Array {
+  const nodes = new Float64Array(segmentCount + 1);
+  for (const piece of pieces) {
+    if (piece.start === 0) nodes[piece.segment] = pieceValue(piece, 0).value;
+    nodes[piece.segment + 1] = pieceValue(piece, piece.length).value;
+  }
+  return nodes;
+}

@@ -1,0 +1,151 @@
+import type { WaveMember } from '../members/wave-member.ts';
+import { InertiaRelief } from '../modes/inertia-relief.ts';
+import { masslessStretches } from '../modes/massless-stretches.ts';
+import { evaluateShape, waveNumberSquare } from '../modes/mode-shape.ts';
+import type { Mode } from '../modes/mode-series.ts';
+import { StaticResponse } from '../modes/static-response.ts';
+import type { Stations } from '../modes/stations.ts';
+import { canDriftFreely, totalMass, travelTime } from '../spectrum/spectrum-size.ts';
+
+const EPS = Number.EPSILON;
+
+/**
+ * What the modes kept so far leave of the static flexibility at a set of stations:
+ *
+ *   ΔG(x) = G(x,x) − G_held(x) − Σ φ_n²/ω_n²,   ΔH(x) = H(x) − Σ p_n²/ω_n⁴,
+ *
+ * known without any later mode. An unrestrained member uses G⊥ and H⊥ (rigid-body mode left out); a
+ * nearly unrestrained one also the form shifted by σ, G_σ − Σ φ²/(ω² + σ), in which nothing cancels.
+ *
+ * The remainder is carried by successive subtraction, so each rounding is relative to what is left;
+ * the floor 64·2⁻⁵² G + Σ 2 φ δφ/ω² covers the rounding of G and the errors of the shapes.
+ *
+ * Cost: O(segments) once, O(stations) a mode.
+ */
+export class TailFlexibility {
+  /** Flexibility of all modes, G − G_held (unrestrained: G⊥), m/N, shape [stations]. */
+  readonly whole: Float64Array;
+  /** H of all modes (unrestrained: H⊥), kg, shape [stations]. */
+  readonly wholeFlux: Float64Array;
+  /** φ and p of the mode added last, shape [stations]. */
+  readonly displacement: Float64Array;
+  readonly flux: Float64Array;
+  readonly stations: Stations;
+
+  private readonly member: WaveMember;
+  private readonly travelTime: number;
+  private readonly rest: Float64Array;
+  private readonly restFlux: Float64Array;
+  private readonly floor: Float64Array;
+  private readonly floorFlux: Float64Array;
+  private readonly shift: number;
+  private readonly shifted: Float64Array | null;
+  private readonly shiftedFloor: Float64Array | null;
+  private readonly pair = new Float64Array(2);
+
+  constructor(member: WaveMember, stations: Stations) {
+    this.member = member;
+    this.stations = stations;
+    this.travelTime = travelTime(member);
+    const count = stations.segment.length;
+    const drifts = canDriftFreely(member);
+    const source = drifts ? new InertiaRelief(member) : new StaticResponse(member);
+    const held = new Float64Array(count);
+    for (const stretch of masslessStretches(member)) {
+      for (let q = 0; q < count; q++) {
+        const i = stations.segment[q];
+        if (i < stretch.first || i > stretch.last) continue;
+        held[q] = stretch.held.flexibility(i - stretch.first, stations.distance[q]);
+        if (!Number.isFinite(held[q])) held[q] = 0;
+      }
+    }
+    const at = (f: (i: number, distance: number) => number): Float64Array =>
+      Float64Array.from({ length: count }, (_, q) => f(stations.segment[q], stations.distance[q]));
+    const all = at((i, d) => source.flexibility(i, d));
+    this.whole = all.map((g, q) => Math.max(0, g - held[q]));
+    this.wholeFlux = at((i, d) => source.fluxInertia(i, d));
+    this.rest = Float64Array.from(this.whole);
+    this.restFlux = Float64Array.from(this.wholeFlux);
+    this.floor = all.map((g) => 64 * EPS * g);
+    this.floorFlux = this.wholeFlux.map((h) => 64 * EPS * h);
+    this.displacement = new Float64Array(count);
+    this.flux = new Float64Array(count);
+
+    const elastic = elasticFlexibility(member);
+    const nearlyFree = !drifts && this.whole.some((g) => g > 100 * elastic);
+    this.shift = nearlyFree ? 1 / (elastic * totalMass(member)) : 0;
+    if (nearlyFree) {
+      const shiftedResponse = new StaticResponse(member, this.shift);
+      const start = at((i, d) => shiftedResponse.flexibility(i, d));
+      this.shifted = start.map((g, q) => Math.max(0, g - held[q]));
+      this.shiftedFloor = start.map((g) => 64 * EPS * g);
+    } else {
+      this.shifted = null;
+      this.shiftedFloor = null;
+    }
+  }
+
+  /** Takes one more mode out of the remainder. */
+  add(mode: Mode): void {
+    const { member, stations, pair } = this;
+    const { omega, lower, upper } = mode.frequency;
+    const { lambda } = mode.shape;
+    // relative error of the shape: phase error over the member plus rounding of the march
+    const error =
+      omega * this.travelTime * ((0.5 * (upper - lower)) / (omega || 1) + EPS) + 4 * EPS * member.segmentCount;
+    for (let q = 0; q < stations.segment.length; q++) {
+      const i = stations.segment[q];
+      evaluateShape(member, mode.shape, i, stations.distance[q], pair);
+      const [u, p] = pair;
+      this.displacement[q] = u;
+      this.flux[q] = p;
+      if (lambda === 0) continue;
+      const k = member.stiffness[i];
+      const impedance = k * Math.sqrt(Math.max(0, waveNumberSquare(member, i, lambda)));
+      const uAmplitude = Math.abs(u) + (impedance > 0 ? Math.abs(p) / impedance : 0);
+      const pAmplitude = Math.abs(p) + impedance * Math.abs(u);
+      const square = (u * u) / lambda;
+      const slack = (2 * error * Math.abs(u) * uAmplitude) / lambda;
+      this.rest[q] -= square;
+      this.floor[q] += slack;
+      const fluxRatio = p / lambda;
+      this.restFlux[q] -= fluxRatio * fluxRatio;
+      this.floorFlux[q] += (2 * error * Math.abs(fluxRatio) * pAmplitude) / lambda;
+      if (this.shifted && this.shiftedFloor) {
+        const reduced = lambda / (lambda + this.shift);
+        this.shifted[q] -= square * reduced;
+        this.shiftedFloor[q] += slack * reduced;
+      }
+    }
+  }
+
+  /**
+   * Bound on ΔG at station q, m/N, given ω_{N+1}² (rad²/s²): the smallest of the valid forms, floor
+   * included. With σ the factor 1 + σ/ω_{N+1}² of the energy belongs to it.
+   */
+  flexibilityTail(q: number, nextLambda: number): number {
+    const plain = Math.max(0, this.rest[q]) + this.floor[q];
+    if (!this.shifted || !this.shiftedFloor) return plain;
+    return Math.min(
+      plain,
+      (1 + this.shift / nextLambda) * (Math.max(0, this.shifted[q]) + this.shiftedFloor[q]),
+    );
+  }
+
+  /** Bound on ΔH at station q, kg, floor included. */
+  fluxTail(q: number): number {
+    return Math.max(0, this.restFlux[q]) + this.floorFlux[q];
+  }
+
+  /** How much of the flexibility tail at station q is rounding floor. */
+  floorOf(q: number): number {
+    return this.floor[q];
+  }
+}
+
+/** Σ l/k, the flexibility of the member as one stretch, m/N. */
+export function elasticFlexibility(member: WaveMember): number {
+  let flexibility = 0;
+  for (let i = 0; i < member.segmentCount; i++) flexibility += member.length[i] / member.stiffness[i];
+  return flexibility;
+}

@@ -1,0 +1,81 @@
+import type { WaveMember } from '../members/wave-member.ts';
+import { totalMass } from '../spectrum/spectrum-size.ts';
+
+/**
+ * Static response of an unrestrained member to a unit force balanced by its own inertia.
+ *
+ * With μ(z) the fraction of the mass before z, the flux is μ before the force and μ − 1 after it, so
+ *
+ *   G⊥(x,x) = ∫₀ˣ μ²/k + ∫ₓᴸ (1 − μ)²/k = Σ_{n≥2} φ_n²/ω_n²,
+ *   H⊥(x) = m μ(x) (1 − μ(x)) = Σ_{n≥2} p_n²/ω_n⁴.
+ *
+ * All terms are positive. Cost: O(segments) once, O(1) a station.
+ */
+export class InertiaRelief {
+  private readonly member: WaveMember;
+  private readonly mass: number;
+  /** μ just after the near node of each segment, and the rest 1 − μ just before its far node. */
+  private readonly before: Float64Array;
+  private readonly after: Float64Array;
+  /** ∫μ²/k up to the near node of each segment, ∫(1 − μ)²/k from its far node on. */
+  private readonly near: Float64Array;
+  private readonly far: Float64Array;
+
+  constructor(member: WaveMember) {
+    const n = member.segmentCount;
+    this.member = member;
+    this.mass = totalMass(member);
+    this.before = new Float64Array(n);
+    this.after = new Float64Array(n);
+    this.near = new Float64Array(n);
+    this.far = new Float64Array(n);
+    let share = 0;
+    let integral = 0;
+    for (let i = 0; i < n; i++) {
+      share += member.mass[i] / this.mass;
+      this.before[i] = share;
+      this.near[i] = integral;
+      const end = share + (member.inertia[i] * member.length[i]) / this.mass;
+      integral += squareIntegral(share, end, member.length[i] / member.stiffness[i]);
+      share = end;
+    }
+    share = 0;
+    integral = 0;
+    for (let i = n - 1; i >= 0; i--) {
+      share += member.mass[i + 1] / this.mass;
+      this.after[i] = share;
+      this.far[i] = integral;
+      const end = share + (member.inertia[i] * member.length[i]) / this.mass;
+      integral += squareIntegral(share, end, member.length[i] / member.stiffness[i]);
+      share = end;
+    }
+  }
+
+  /** G⊥(x,x), m/N. */
+  flexibility(i: number, distance: number): number {
+    const { member } = this;
+    const rest = member.length[i] - distance;
+    const density = member.inertia[i] / this.mass;
+    const mu = this.before[i] + density * distance;
+    const nu = this.after[i] + density * rest;
+    return (
+      this.near[i] +
+      squareIntegral(this.before[i], mu, distance / member.stiffness[i]) +
+      this.far[i] +
+      squareIntegral(this.after[i], nu, rest / member.stiffness[i])
+    );
+  }
+
+  /** H⊥(x), kg (shaft: kg·m²). */
+  fluxInertia(i: number, distance: number): number {
+    const density = this.member.inertia[i] / this.mass;
+    const mu = this.before[i] + density * distance;
+    const nu = this.after[i] + density * (this.member.length[i] - distance);
+    return this.mass * mu * nu;
+  }
+}
+
+/** ∫ of the square of a line from a to b over a stretch. */
+function squareIntegral(a: number, b: number, stretch: number): number {
+  return ((a * a + a * b + b * b) / 3) * stretch;
+}
