@@ -1,0 +1,12 @@
+import { readRequest } from '../contract/read-request.ts';
+import { solveModes } from '../solutions/modes.ts';
+import type { ModesRequest } from '../spec/types.ts';
+import type { SolverOperations } from './task.ts';
+
+/** Every operation that a worker solves: how its body is read, how its request is solved. */
+export const operations: SolverOperations = {
+  modes: {
+    read: (body) => readRequest('modes', body),
+    solve: (request) => solveModes(request as ModesRequest),
+  },
+};

@@ -1,0 +1,53 @@
+import { runTask } from './serve-task.ts';
+import type { SolverOperations } from './task.ts';
+
+/** Rounds until the compiler has seen the solver often enough; tuned by measurement (test/bench). */
+const rounds = 40;
+
+const member = {
+  kind: 'bar',
+  segments: [
+    { length: 3, axialStiffness: 4.2e8, massPerLength: 15.7, area: 0.002 },
+    { length: 2, axialStiffness: 2.1e8, massPerLength: 7.85, area: 0.001, foundation: 1e5 },
+  ],
+  ends: { near: { type: 'fixed' }, far: { type: 'attached', mass: 4, spring: 1e5 } },
+  attachments: [{ at: 1.5, mass: 2 }],
+  damping: { type: 'ratio', value: 0.01 },
+};
+
+/** A small request of every operation. */
+const requests: Readonly<Record<string, object>> = {
+  modes: {
+    member,
+    series: { modes: 24 },
+    shapes: { positions: { count: 11 } },
+    energyShares: true,
+    participation: { ends: 'near' },
+  },
+  responses: {
+    member,
+    initial: { displacement: { type: 'pull', at: 5, amplitude: 0.001 } },
+    series: { modes: 24 },
+    sample: {
+      positions: { count: 11 },
+      times: { start: 0, end: 0.01, count: 11 },
+      quantities: ['displacement', 'velocity', 'force'],
+      gaugeTime: 0.001,
+    },
+  },
+};
+
+/**
+ * Solves small requests until the solver is compiled, so that the first request of a new worker is
+ * not slow. Throws where one of them is not answered: a worker that cannot solve must not serve.
+ */
+export function warmUp(operations: SolverOperations): void {
+  for (const operation of Object.keys(operations)) {
+    const body = new TextEncoder().encode(JSON.stringify(requests[operation]));
+    for (let round = 0; round < rounds; round++) {
+      const result = runTask(operations, { kind: 'body', operation, body });
+      if (result.kind !== 'answer')
+        throw new Error(`warm-up of ${operation} failed: ${JSON.stringify(result)}`);
+    }
+  }
+}
