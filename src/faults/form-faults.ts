@@ -14,7 +14,7 @@ export const formFaultWordings = {
   },
   'form-missing': {
     title: 'No form is given',
-    detail: 'It is not said which form is meant. Give one of: {forms}.',
+    detail: 'Nothing in {key} says which form is meant (found: {found}). Give one of: {forms}.',
   },
   'wrong-type': {
     title: 'A value has the wrong type',
@@ -50,7 +50,8 @@ export const formFaultWordings = {
   },
   'too-many-keys': {
     title: 'An object has too many keys',
-    detail: '{key} has {count} keys; no object of a request has more than {limit}. Remove the keys not known.',
+    detail:
+      '{key} has {count} keys; no object of a request has more than {limit}. Remove the keys not known.',
   },
   'quantity-unreadable': {
     title: 'A quantity cannot be read',
@@ -65,7 +66,7 @@ export const formFaultWordings = {
   'unit-unknown': {
     title: 'A unit is not known',
     detail:
-      '{code} in {text} is not a unit known here; codes are UCUM and case-sensitive.{hint} {wanted} is given in {allowed} and their like.',
+      '{code} in {text} is not a unit known here; codes are UCUM and case-sensitive.{hint} Units for {wanted}: {allowed} and their like.',
   },
   'unit-dimension': {
     title: 'A unit has the wrong dimension',

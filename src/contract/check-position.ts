@@ -1,0 +1,19 @@
+import { faultRecord, type FaultRecord } from '../faults/fault.ts';
+import { samePlace } from '../members/node-layout.ts';
+
+/** Extent of a member in m. */
+export interface Span {
+  readonly length: number;
+  /** Largest position that still means the far end. */
+  readonly limit: number;
+}
+
+export function spanOf(length: number): Span {
+  return { length, limit: length * (1 + samePlace) };
+}
+
+/** A fault where a position (0 or more) lies beyond the member. */
+export function checkPosition(at: number, pointer: string, span: Span | null): FaultRecord[] {
+  if (span === null || at <= span.limit) return [];
+  return [faultRecord('position-outside', pointer, { at, length: span.length })];
+}

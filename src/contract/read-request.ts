@@ -1,0 +1,87 @@
+import type { ErrorObject } from 'ajv/dist/2020.js';
+import { Fault, faultRecord, type FaultRecord } from '../faults/fault.ts';
+import type { Member, ModesRequest, ResponsesRequest } from '../spec/types.ts';
+import { checkModesRequest, checkResponsesRequest } from './check-sense.ts';
+import { copyDocument } from './copy-document.ts';
+import { formsWithin } from './forms.ts';
+import { nameFault, type NamingContext } from './name-fault.ts';
+import { isWithin } from './pointer.ts';
+import { validatorOf } from './validators.ts';
+
+/** The operations that take a request. */
+export type Operation = 'modes' | 'responses';
+
+/** Most faults that are listed at once. */
+const mostFaults = 50;
+
+const readers = {
+  modes: readerOf<ModesRequest>('ModesRequest', checkModesRequest),
+  responses: readerOf<ResponsesRequest>('ResponsesRequest', checkResponsesRequest),
+};
+
+/**
+ * The canonical request that a parsed body means: validated, in SI, defaults filled in, positions
+ * near a node set to the node.
+ *
+ * @param operation what is asked for
+ * @param body a parsed JSON document; it is not changed
+ * @throws Fault with all faults of the request, at most 50 and one that counts the rest; faults of
+ *   form come first
+ * Cost: O(size of the body), below 1 ms for a request of a few segments.
+ */
+export function readRequest(operation: 'modes', body: unknown): ModesRequest;
+export function readRequest(operation: 'responses', body: unknown): ResponsesRequest;
+export function readRequest(operation: Operation, body: unknown): ModesRequest | ResponsesRequest;
+export function readRequest(operation: Operation, body: unknown): ModesRequest | ResponsesRequest {
+  return readers[operation](body);
+}
+
+function readerOf<Request>(
+  title: string,
+  check: (request: Request, formFaults: readonly FaultRecord[]) => FaultRecord[],
+): (body: unknown) => Request {
+  const validate = validatorOf(title);
+  const forms = formsWithin(title);
+  return (body) => {
+    const { copy, faults, fatal } = copyDocument(body);
+    if (fatal) throw capped(faults);
+    const kind = kindOf(copy);
+    const context: NamingContext = { kind: kind ?? 'cable', originals: new Map(), forms };
+    const form = validate.call(context, copy)
+      ? faults
+      : joined(faults, named(validate.errors ?? [], context, kind !== null));
+    const all = [...form, ...check(copy as Request, form)];
+    if (all.length > 0) throw capped(all);
+    return copy as Request;
+  };
+}
+
+const kinds: readonly string[] = ['cable', 'bar', 'shaft', 'shear-column', 'wave'];
+
+/** Kind of the member, null where the document does not say one. */
+function kindOf(document: unknown): Member['kind'] | null {
+  const kind = (document as { member?: { kind?: unknown } } | null)?.member?.kind;
+  return typeof kind === 'string' && kinds.includes(kind) ? (kind as Member['kind']) : null;
+}
+
+function named(errors: readonly ErrorObject[], context: NamingContext, kindKnown: boolean): FaultRecord[] {
+  return errors
+    .map((error) => nameFault(error, context))
+    .filter((record) => record !== null)
+    .filter(
+      // Without a kind the dimensions outside the member are not known.
+      ({ code, pointer }) => kindKnown || code !== 'unit-dimension' || isWithin(pointer, '/member'),
+    );
+}
+
+/** The faults of the validator, without those at a place that has a fault already. */
+function joined(first: readonly FaultRecord[], second: readonly FaultRecord[]): FaultRecord[] {
+  const taken = new Set(first.map(({ pointer }) => pointer));
+  return [...first, ...second.filter(({ pointer }) => !taken.has(pointer))];
+}
+
+function capped(records: readonly FaultRecord[]): Fault {
+  if (records.length <= mostFaults) return new Fault(records);
+  const rest = faultRecord('more-faults', '', { count: records.length - mostFaults });
+  return new Fault([...records.slice(0, mostFaults), rest]);
+}
