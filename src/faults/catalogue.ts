@@ -63,6 +63,11 @@ export const catalogue = {
     title: 'Too many numbers to hold',
     detail: '{count} numbers would be needed ({what}); the limit is {limit}. Ask for less.',
   },
+  'energy-inconsistent': {
+    title: 'The answer contradicts its own energy',
+    detail:
+      'The modes kept carry {captured} J of the {total} J there are, more than rounding explains. The answer is withheld; please report the request.',
+  },
   'result-overflow': {
     title: 'A result is not finite',
     detail:

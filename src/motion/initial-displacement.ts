@@ -4,7 +4,7 @@ import type { MasslessStretch } from '../modes/massless-stretches.ts';
 import type { StaticResponse } from '../modes/static-response.ts';
 import type { PullShape, Shape } from '../spec/types.ts';
 import { nodeValuesOf, pieceValue, type Piece, type PiecewiseField, type WaveTerm } from './piecewise-field.ts';
-import { place, shapePieces, type GivenShape } from './shape-pieces.ts';
+import { listOf, place, shapePieces, shapePointer, type GivenShape } from './shape-pieces.ts';
 
 /** A static force held until t = 0, whose shape of rest is part of the initial displacement. */
 export interface HeldForce {
@@ -32,16 +32,17 @@ const CONTINUITY = 256 * Number.EPSILON;
  */
 export function readDisplacement(
   member: WaveMember,
-  shapes: readonly Shape[],
+  shapes: Shape | readonly Shape[] | undefined,
   response: StaticResponse | null,
 ): InitialDisplacement {
-  const given = shapes.filter((shape): shape is GivenShape => shape.type !== 'pull');
+  const list = listOf(shapes);
+  const given = list.filter((shape): shape is GivenShape => shape.type !== 'pull');
   const pieces = shapePieces(member, given);
   requireContinuity(member, pieces);
   const pulls: HeldForce[] = [];
-  shapes.forEach((shape, index) => {
+  list.forEach((shape, index) => {
     if (shape.type !== 'pull') return;
-    pulls.push(readPull(member, shape, response, index));
+    pulls.push(readPull(member, shape, response, shapePointer('displacement', shapes, index)));
   });
   return { pieces, pulls };
 }
@@ -50,9 +51,9 @@ function readPull(
   member: WaveMember,
   shape: PullShape,
   response: StaticResponse | null,
-  index: number,
+  shapeAt: string,
 ): HeldForce {
-  const pointer = `/initial/displacement/${index}/at`;
+  const pointer = `${shapeAt}/at`;
   if (response === null) throw fault('pull-without-restraint', pointer, { at: shape.at });
   const { segment, distance } = place(member, shape.at);
   if ('force' in shape) return { segment, distance, force: shape.force };

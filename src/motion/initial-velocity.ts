@@ -4,7 +4,7 @@ import { placeStation } from '../modes/stations.ts';
 import type { StaticResponse } from '../modes/static-response.ts';
 import type { Impulse, InitialMotion, MassVelocity, PullByAmplitude, Shape } from '../spec/types.ts';
 import { pieceValue, type PiecewiseField, type WaveTerm } from './piecewise-field.ts';
-import { place, shapePieces, type GivenShape } from './shape-pieces.ts';
+import { listOf, place, shapePieces, shapePointer, type GivenShape } from './shape-pieces.ts';
 
 /** The initial velocity: a density on the segments and a value of its own for each node mass. */
 export interface InitialVelocity {
@@ -32,7 +32,7 @@ export function readVelocity(
   const shapes = listOf(initial.velocity);
   const given = shapes.filter((shape): shape is GivenShape => shape.type !== 'pull');
   const pulls = shapes.flatMap((shape, index) =>
-    shape.type === 'pull' ? [readVelocityPull(member, shape, response, index)] : [],
+    shape.type === 'pull' ? [readVelocityPull(member, shape, response, shapePointer('velocity', initial.velocity, index))] : [],
   );
   const impulses = initial.impulses ?? [];
   requireInertia(member, impulses, initial.massVelocities ?? []);
@@ -69,12 +69,6 @@ export function readVelocity(
   return { pieces, masses };
 }
 
-/** One or several as a list. */
-export function listOf<T>(value: T | readonly T[] | undefined): readonly T[] {
-  if (value === undefined) return [];
-  return Array.isArray(value) ? (value as readonly T[]) : [value as T];
-}
-
 interface VelocityPull {
   readonly at: number;
   readonly segment: number;
@@ -86,9 +80,8 @@ function readVelocityPull(
   member: WaveMember,
   shape: Shape & { type: 'pull' },
   response: StaticResponse | null,
-  index: number,
+  pointer: string,
 ): VelocityPull {
-  const pointer = `/initial/velocity/${index}`;
   if ('force' in shape) throw fault('force-in-velocity', `${pointer}/force`, { at: shape.at });
   if (response === null) throw fault('pull-without-restraint', `${pointer}/at`, { at: shape.at });
   const { segment, distance } = place(member, shape.at);

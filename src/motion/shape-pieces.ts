@@ -127,3 +127,14 @@ export function place(member: WaveMember, at: number): { segment: number; distan
   const { i, d } = placeStation(member, at);
   return { segment: i, distance: d };
 }
+
+/** One or several as a list. */
+export function listOf<T>(value: T | readonly T[] | undefined): readonly T[] {
+  if (value === undefined) return [];
+  return Array.isArray(value) ? (value as readonly T[]) : [value as T];
+}
+
+/** Pointer to one of the shapes of the initial motion, as the request holds it: one or a list. */
+export function shapePointer(field: 'displacement' | 'velocity', shapes: unknown, index: number): string {
+  return Array.isArray(shapes) ? `/initial/${field}/${index}` : `/initial/${field}`;
+}

@@ -1,0 +1,64 @@
+import type { Mode } from '../modes/mode-series.ts';
+import type { ModalStart } from '../motion/modal-projection.ts';
+
+const EPS = Number.EPSILON;
+
+/**
+ * Rounding of the computed fields, mode by mode: ω_n is known to δω_n, so its phase is off by up to
+ * t δω_n after the time t; shape and coefficients are off by the phase error over the member and by
+ * the rounding of their closed forms. By Cauchy–Schwarz the sum over the kept modes is at most
+ *
+ *   √G(x) √Σ ε_n²  (displacement),   √H(x) √Σ ω_n² ε_n²  (force),   ε_n in √J,
+ *
+ * and summing N products costs (64 + N/64) 2⁻⁵² of the sums of magnitudes (blocks of 64).
+ */
+export class Rounding {
+  private readonly span: number;
+  private readonly travelTime: number;
+  private readonly segments: number;
+  private readonly squares = [0, 0, 0];
+  private readonly magnitudes = [0, 0, 0];
+  private count = 0;
+  /** Error of the mode added last: of E_n, J. */
+  slack = 0;
+
+  /**
+   * @param span latest sampled time, s
+   * @param travelTime wave travel time of the member, s
+   * @param segments number of segments
+   */
+  constructor(span: number, travelTime: number, segments: number) {
+    this.span = span;
+    this.travelTime = travelTime;
+    this.segments = segments;
+  }
+
+  /** Adds a kept mode. */
+  add(mode: Mode, start: ModalStart): void {
+    const { omega, lower, upper } = mode.frequency;
+    const half = 0.5 * (upper - lower);
+    const shapeError =
+      omega * this.travelTime * (half / (omega || 1) + EPS) + 8 * EPS * (this.segments + 8);
+    const coefficient = shapeError * (start.positionScale + start.velocityScale);
+    const phase = Math.min(2, this.span * (half + 2 * EPS * omega));
+    const amplitude = Math.sqrt(2 * start.energy);
+    const error = amplitude * (phase + shapeError) + coefficient;
+    this.slack = amplitude * coefficient + coefficient * coefficient;
+    const lambda = omega * omega;
+    let weight = 1;
+    for (let level = 0; level < 3; level++) {
+      this.squares[level] += weight * error * error;
+      this.magnitudes[level] += weight * 2 * start.energy;
+      weight *= lambda;
+    }
+    this.count++;
+  }
+
+  /** √Σ(ω^level ε)² with the summation error, √J s^{−level}. */
+  level(level: 0 | 1 | 2): number {
+    return (
+      Math.sqrt(this.squares[level]) +
+      (64 + this.count / 64) * EPS * Math.sqrt(this.magnitudes[level])
+    );
+  }
+}
