@@ -24,6 +24,11 @@ const solvers = {
     spin(milliseconds);
     return { milliseconds };
   },
+  compute: ({ steps }) => {
+    let sum = 0;
+    for (let i = 1; i <= steps; i++) sum += Math.sqrt(i) / i;
+    return { sum };
+  },
   exit: () => process.exit(3),
   throwLater: ({ milliseconds }) => {
     queueMicrotask(() => {

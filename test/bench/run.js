@@ -1,0 +1,11 @@
+// npm run bench: first table of speeds. Every number has a reference measured in the same run.
+import { httpLoad } from './http-load.js';
+import { jsonTimes } from './json-times.js';
+import { poolScaling } from './pool-scaling.js';
+import { solveTimes } from './solve-times.js';
+
+console.log(`Node ${process.version}`);
+solveTimes();
+jsonTimes();
+await poolScaling();
+await httpLoad();

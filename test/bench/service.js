@@ -1,0 +1,26 @@
+// The real app in front of the worker named on the command line; prints its address when it is ready.
+import { readRequest } from '../../dist/contract/read-request.js';
+import { buildApp } from '../../dist/http/app.js';
+import { SolverPool } from '../../dist/pool/solver-pool.js';
+
+const [workerFile, reading, workers] = process.argv.slice(2);
+const pool = new SolverPool({
+  workerFile,
+  workers: Number(workers),
+  queueLimit: 1000,
+  memoryLimit: 512,
+  onWorkerError: (error) => {
+    throw error;
+  },
+});
+const app = await buildApp({
+  pool,
+  readRequest: reading === 'contract' ? readRequest : (_operation, body) => body,
+  solveDeadline: 60,
+  bodyLimit: 8 * 1024 * 1024,
+  stopGrace: 1,
+  document: { yaml: '', json: '' },
+});
+const url = await app.listen({ host: '127.0.0.1', port: 0 });
+await pool.start();
+console.log(url);
