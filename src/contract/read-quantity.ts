@@ -23,7 +23,7 @@ export interface QuantityProblem {
 }
 
 /** A number as JSON would write it or nearly, blanks, and the code of a unit. */
-const quantityPattern = /^([+-]?[\d.]+(?:[eE][+-]?\d+)?) *([^\s\d,].*)?$/;
+const quantityPattern = /^([+-]?[\d.]+(?:[eE][+-]?\d+)?) *((?:1\/|[^\s\d,]).*)?$/;
 
 /**
  * The SI value of a text such as `2.4 MN`: a JSON number, then a UCUM code.

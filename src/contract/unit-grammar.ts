@@ -7,14 +7,14 @@ const largestExponent = 9;
 
 /**
  * The unit of a UCUM code: products `.`, quotients `/` (left to right), exponents (`mm2`, `s-1`),
- * parentheses, prefixes, a leading `/`. No integer factors, no annotations.
+ * parentheses, prefixes, a leading `/` or `1/`. No other factors, no annotations.
  *
  * @param code for instance `kN`, `N/mm2`, `kg/m3`, `kN.m/rad`
  * @returns null when the code is not understood; cost O(length of the code)
  */
 export function readUnit(code: string): Unit | null {
   if (code.length > 60) return null;
-  const reader = { code, next: 0 };
+  const reader = { code, next: code.startsWith('1/') ? 1 : 0 };
   const unit = readTerm(reader);
   return reader.next === code.length ? unit : null;
 }
