@@ -23,6 +23,10 @@ export interface TailState {
   readonly energies: TailEnergies;
   readonly member: MemberTail;
   readonly rounding: Rounding;
+  /** Kinetic energy of the rigid-body mode, J. */
+  readonly rigidEnergy: number;
+  /** The whole elastic motion taken as a tail: its energies and the suprema of G and H. */
+  readonly whole: { readonly energies: TailEnergies; readonly member: MemberTail };
 }
 
 /** Decides whether the modes kept so far are enough: the error over its tolerance; ≤ 1 is enough. */
@@ -77,11 +81,15 @@ export function keepModes(
   const history: number[] = [];
   const mostHeld = Math.floor(heldNumbers / (4 * member.segmentCount));
   let coupling = 0;
+  let rigidEnergy = 0;
+  let whole: TailState['whole'] | null = null;
 
   let upcoming = series.next();
   for (;;) {
-    const mode = upcoming as Mode;
+    const mode: Mode = upcoming as Mode;
     const start = projection.project(mode.shape);
+    if (mode.frequency.omega === 0) rigidEnergy = start.energy;
+    else whole ??= wholeMotion(member, state, rigidEnergy, flexibility, mode.frequency.lower);
     const previous = modes[modes.length - 1]?.mode;
     const shared = couplingOf(member, mode, previous);
     coupling = Math.max(coupling, shared);
@@ -98,6 +106,8 @@ export function keepModes(
         energies: NOTHING,
         member: { flexibility: 0, fluxInertia: 0 },
         rounding,
+        rigidEnergy,
+        whole: whole ?? { energies: NOTHING, member: { flexibility: 0, fluxInertia: 0 } },
       };
       requireConsistent(energy);
       return { modes, tail, energy, rounding, verdict: 'complete', modesNeeded: null, coupling };
@@ -105,7 +115,8 @@ export function keepModes(
     const last = kept >= limit;
     if (!adaptive && !last) continue;
 
-    const nextOmega = upcoming.frequency.lower;
+    const nextOmega: number = upcoming.frequency.lower;
+    whole ??= wholeMotion(member, state, rigidEnergy, flexibility, nextOmega);
     const nextLambda = nextOmega * nextOmega;
     const tail: TailState = {
       kept,
@@ -117,6 +128,8 @@ export function keepModes(
       },
       member: memberTail(member, flexibility, nextLambda),
       rounding,
+      rigidEnergy,
+      whole,
     };
     // the rigid-body mode must be among the kept; every series keeps at least one mode
     const { ratio, roundingRatio } = shortfall(tail);
@@ -135,6 +148,26 @@ export function keepModes(
       });
     }
   }
+}
+
+/** The elastic motion before any elastic mode is taken out, ω_1 its lowest frequency. */
+function wholeMotion(
+  member: WaveMember,
+  state: InitialState,
+  rigidEnergy: number,
+  flexibility: TailFlexibility,
+  omega: number,
+): TailState['whole'] {
+  const [total, first, second] = state.energies;
+  return {
+    energies: {
+      energy: Math.max(0, total - rigidEnergy),
+      first: first ?? Number.POSITIVE_INFINITY,
+      second: second ?? Number.POSITIVE_INFINITY,
+      nextOmega: omega,
+    },
+    member: memberTail(member, flexibility, omega * omega),
+  };
 }
 
 function decide(ratio: number, roundingRatio: number, last: boolean, atFloor: boolean): Verdict | null {

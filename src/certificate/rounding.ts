@@ -16,8 +16,8 @@ export class Rounding {
   private readonly span: number;
   private readonly travelTime: number;
   private readonly segments: number;
-  private readonly squares = [0, 0, 0];
-  private readonly magnitudes = [0, 0, 0];
+  private readonly squares = [0, 0, 0, 0];
+  private readonly magnitudes = [0, 0, 0, 0];
   private count = 0;
   /** Error of the mode added last: of E_n, J. */
   slack = 0;
@@ -46,7 +46,7 @@ export class Rounding {
     this.slack = amplitude * coefficient + coefficient * coefficient;
     const lambda = omega * omega;
     let weight = 1;
-    for (let level = 0; level < 3; level++) {
+    for (let level = 0; level < 4; level++) {
       this.squares[level] += weight * error * error;
       this.magnitudes[level] += weight * 2 * start.energy;
       weight *= lambda;
@@ -55,7 +55,7 @@ export class Rounding {
   }
 
   /** √Σ(ω^level ε)² with the summation error, √J s^{−level}. */
-  level(level: 0 | 1 | 2): number {
+  level(level: 0 | 1 | 2 | 3): number {
     return (
       Math.sqrt(this.squares[level]) +
       (64 + this.count / 64) * EPS * Math.sqrt(this.magnitudes[level])

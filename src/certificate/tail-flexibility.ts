@@ -1,10 +1,10 @@
 import type { WaveMember } from '../members/wave-member.ts';
 import { InertiaRelief } from '../modes/inertia-relief.ts';
 import { masslessStretches } from '../modes/massless-stretches.ts';
-import { evaluateShape, waveNumberSquare } from '../modes/mode-shape.ts';
+import { waveNumberSquare } from '../modes/mode-shape.ts';
 import type { Mode } from '../modes/mode-series.ts';
 import { StaticResponse } from '../modes/static-response.ts';
-import type { Stations } from '../modes/stations.ts';
+import { sampleShape, type Stations } from '../modes/stations.ts';
 import { canDriftFreely, totalMass, travelTime } from '../spectrum/spectrum-size.ts';
 
 const EPS = Number.EPSILON;
@@ -27,13 +27,12 @@ export class TailFlexibility {
   readonly whole: Float64Array;
   /** H of all modes (unrestrained: H⊥), kg, shape [stations]. */
   readonly wholeFlux: Float64Array;
-  /** φ and p of the mode added last, shape [stations]. */
-  readonly displacement: Float64Array;
-  readonly flux: Float64Array;
   readonly stations: Stations;
 
   private readonly member: WaveMember;
   private readonly travelTime: number;
+  private readonly displacement: Float64Array;
+  private readonly flux: Float64Array;
   private readonly rest: Float64Array;
   private readonly restFlux: Float64Array;
   private readonly floor: Float64Array;
@@ -41,7 +40,6 @@ export class TailFlexibility {
   private readonly shift: number;
   private readonly shifted: Float64Array | null;
   private readonly shiftedFloor: Float64Array | null;
-  private readonly pair = new Float64Array(2);
 
   constructor(member: WaveMember, stations: Stations) {
     this.member = member;
@@ -85,21 +83,25 @@ export class TailFlexibility {
     }
   }
 
-  /** Takes one more mode out of the remainder. */
+  /** Takes one more mode out of the remainder. Cost O(stations), two elementary functions each. */
   add(mode: Mode): void {
-    const { member, stations, pair } = this;
+    sampleShape(this.member, mode.shape, this.stations, this.displacement, this.flux);
+    this.addSampled(mode, this.displacement, this.flux);
+  }
+
+  /** The same with φ and p at the stations already known. */
+  addSampled(mode: Mode, displacement: Float64Array, flux: Float64Array): void {
+    const { member, stations } = this;
     const { omega, lower, upper } = mode.frequency;
     const { lambda } = mode.shape;
+    if (lambda === 0) return;
     // relative error of the shape: phase error over the member plus rounding of the march
     const error =
       omega * this.travelTime * ((0.5 * (upper - lower)) / (omega || 1) + EPS) + 4 * EPS * member.segmentCount;
     for (let q = 0; q < stations.segment.length; q++) {
       const i = stations.segment[q];
-      evaluateShape(member, mode.shape, i, stations.distance[q], pair);
-      const [u, p] = pair;
-      this.displacement[q] = u;
-      this.flux[q] = p;
-      if (lambda === 0) continue;
+      const u = displacement[q];
+      const p = flux[q];
       const k = member.stiffness[i];
       const impedance = k * Math.sqrt(Math.max(0, waveNumberSquare(member, i, lambda)));
       const uAmplitude = Math.abs(u) + (impedance > 0 ? Math.abs(p) / impedance : 0);
@@ -135,11 +137,6 @@ export class TailFlexibility {
   /** Bound on ΔH at station q, kg, floor included. */
   fluxTail(q: number): number {
     return Math.max(0, this.restFlux[q]) + this.floorFlux[q];
-  }
-
-  /** How much of the flexibility tail at station q is rounding floor. */
-  floorOf(q: number): number {
-    return this.floor[q];
   }
 }
 

@@ -1,0 +1,132 @@
+import type { WaveMember } from '../members/wave-member.ts';
+import type { Quantity, Verdict } from '../spec/types.ts';
+import type { KeptSeries } from './kept-modes.ts';
+import { tailFactors, type BoundKind, type TailFactors } from './quantity-bounds.ts';
+import { largestRatioAbove } from '../motion/modal-damping.ts';
+import type { TailFlexibility } from './tail-flexibility.ts';
+
+const EPS = Number.EPSILON;
+
+/** The certificate of one quantity. */
+export interface QuantityCertificate {
+  /** Largest error per station, SI; null where no bound exists for the place. */
+  readonly bound: Float64Array | null;
+  readonly kind: BoundKind;
+  /** Largest r.m.s. error over the member, where the kind is rms. */
+  readonly rms: number | null;
+  readonly verdict: Verdict;
+}
+
+/** The rigid-body part of the motion: |a₀|φ₀ and |v₀|φ₀, m and m/s. */
+export interface RigidPart {
+  readonly position: number;
+  readonly velocity: number;
+}
+
+/**
+ * The error of a quantity at every station: tail of the series plus rounding of what was summed.
+ *
+ * @param tails tail flexibilities at the stations, all kept modes taken out
+ * @param factor stress per force at the stations, or null
+ * @param span latest sampled time, gauge time included, s
+ */
+export function certify(
+  quantity: Quantity,
+  member: WaveMember,
+  series: KeptSeries,
+  tails: TailFlexibility,
+  gaugeTime: number,
+  released: boolean,
+  rigid: RigidPart,
+  span: number,
+  factor: Float64Array | null,
+): QuantityCertificate {
+  const { tail, verdict } = series;
+  const factors = tailFactors(quantity, tail.energies, member.damping, tail.kept, gaugeTime, released);
+  const complete = verdict === 'complete';
+  if (!factors.exists && !complete) {
+    return { bound: null, kind: factors.kind, rms: rmsOf(quantity, member, series, factors, factor), verdict: 'irregular-data' };
+  }
+  const nextLambda = tail.energies.nextOmega * tail.energies.nextOmega;
+  const noise = roundingFactors(quantity, member, series, gaugeTime);
+  const drift = rigidRounding(quantity, rigid, span, gaugeTime);
+  const bound = new Float64Array(tails.stations.segment.length);
+  for (let q = 0; q < bound.length; q++) {
+    const g = complete ? 0 : Math.sqrt(tails.flexibilityTail(q, nextLambda));
+    const h = complete ? 0 : Math.sqrt(tails.fluxTail(q));
+    const left = weigh(factors.onFlexibility, g) + weigh(factors.onFluxInertia, h);
+    const rounding =
+      quantity === 'force' || quantity === 'stress'
+        ? noise * Math.sqrt(tails.wholeFlux[q])
+        : noise * Math.sqrt(tails.whole[q]);
+    bound[q] = (left + rounding + drift) * (factor?.[q] ?? 1) * (1 + 8 * EPS);
+  }
+  const kind = complete && factors.kind === 'rms' ? 'pointwise' : factors.kind;
+  return { bound, kind, rms: null, verdict };
+}
+
+/** Sum of magnitudes times rounding, as the factor of √G (displacement and its rates) or √H (flux). */
+export function roundingFactors(
+  quantity: Quantity,
+  member: WaveMember,
+  series: KeptSeries,
+  gaugeTime: number,
+): number {
+  const { rounding } = series;
+  const beta = member.damping.stiffnessCoefficient;
+  const first = series.modes.find((kept) => kept.mode.frequency.omega > 0)?.mode.frequency.omega ?? 1;
+  const drag = 1 + 2 * largestRatioAbove(member.damping, 0) + member.damping.massCoefficient / first;
+  const gauge = 2 / gaugeTime;
+  switch (quantity) {
+    case 'displacement':
+      return rounding.level(0);
+    case 'velocity':
+      return gaugeTime > 0 ? gauge * rounding.level(0) : rounding.level(1);
+    case 'acceleration':
+      return gaugeTime > 0 ? gauge * rounding.level(1) : drag * rounding.level(2) + beta * rounding.level(3);
+    case 'force':
+    case 'stress':
+      return gaugeTime > 0 ? gauge * drag * rounding.level(0) : rounding.level(1) + beta * rounding.level(2);
+  }
+}
+
+function rigidRounding(quantity: Quantity, rigid: RigidPart, span: number, gaugeTime: number): number {
+  const path = rigid.position + rigid.velocity * span;
+  switch (quantity) {
+    case 'displacement':
+      return 64 * EPS * path;
+    case 'velocity':
+      return 64 * EPS * (rigid.velocity + (gaugeTime > 0 ? (2 * path) / gaugeTime : 0));
+    case 'acceleration':
+      return 0;
+    case 'force':
+    case 'stress':
+      return 0;
+  }
+}
+
+function rmsOf(
+  quantity: Quantity,
+  member: WaveMember,
+  series: KeptSeries,
+  factors: TailFactors,
+  factor: Float64Array | null,
+): number | null {
+  if (factors.kind !== 'rms' || !Number.isFinite(factors.rmsNumerator)) return null;
+  let flexibility = 0;
+  let mass = 0;
+  for (let i = 0; i < member.segmentCount; i++) {
+    flexibility += member.length[i] / member.stiffness[i];
+    mass += member.inertia[i] * member.length[i];
+  }
+  for (const lump of member.mass) mass += lump;
+  const flux = quantity === 'force' || quantity === 'stress';
+  const rounding = series.rounding.level(quantity === 'acceleration' ? 1 : 0);
+  const scale = factor ? factor.reduce((largest, value) => Math.max(largest, value), 0) : 1;
+  return ((factors.rmsNumerator + rounding) / Math.sqrt(flux ? flexibility : mass)) * scale;
+}
+
+/** Factor times size, 0 where either is 0. */
+function weigh(factor: number, size: number): number {
+  return factor === 0 || size === 0 ? 0 : factor * size;
+}

@@ -1,0 +1,221 @@
+import type { WaveMember } from '../members/wave-member.ts';
+import { ENDS } from '../modes/mode-shape.ts';
+import { nodeDisplacement } from '../modes/shape-figures.ts';
+import { dampingRate } from '../motion/modal-damping.ts';
+import { freeMotion } from '../motion/modal-motion.ts';
+import { dissipatedEnergy } from '../motion/dissipation.ts';
+import type { KeptMode } from './kept-modes.ts';
+import { QuadratureGrid } from './quadrature-grid.ts';
+
+/** What the checks found; each is relative and of the order of rounding when all is well. */
+export interface CheckResults {
+  /** Largest |energy by quadrature − (initial − dissipated)| over the initial energy. */
+  readonly drift: number;
+  /** Largest off-diagonal of the mass Gram matrix by quadrature. */
+  readonly orthogonality: number;
+  /** Largest residual of the segment equation and the node conditions. */
+  readonly residual: number;
+}
+
+/** Products of modes, points and instants that the checks may spend. */
+const WORK = 2e7;
+/** Instants of the energy balance at most. */
+const INSTANTS = 64;
+/** Shapes held for the pairs far apart; 45 shapes make 990 pairs. */
+const HELD = 45;
+
+/**
+ * Checks of the kept modes and of their motion that use none of the closed forms: everything is
+ * integrated on a grid of Gauss panels.
+ *
+ * - balance: the energy of the summed fields (kept modes) at up to 64 of the sampled instants against
+ *   their initial energy less what damping took;
+ * - orthogonality: neighbours (n, n+1), (n, n+2) and all pairs of up to 45 shapes spread over the
+ *   spectrum;
+ * - residual: momentum and compatibility of each segment, Δp + ∫(ω²ρ − s)φ and Δφ − ∫p/k, and the
+ *   force balance of each node, relative to the terms.
+ *
+ * Of long series every m-th triple of modes is checked and fewer instants are taken, so that the
+ * cost stays near 2e7 multiplications.
+ */
+export function checkIndependently(
+  member: WaveMember,
+  kept: readonly KeptMode[],
+  times: Float64Array,
+  energy: number,
+): CheckResults {
+  const highest = kept[kept.length - 1].mode.shape.lambda;
+  const grid = new QuadratureGrid(member, highest);
+  const perMode = grid.size;
+  const instants = pick(times, Math.max(1, Math.min(INSTANTS, Math.floor(WORK / (2 * perMode * kept.length)))));
+  const balanced = perMode * kept.length <= 2 * WORK;
+  const stride = Math.max(1, Math.ceil((perMode * kept.length) / WORK));
+
+  const speed = instants.map(() => new Float64Array(perMode));
+  const flux = instants.map(() => new Float64Array(perMode));
+  const place = instants.map(() => new Float64Array(perMode));
+  const nodeSpeed = instants.map(() => new Float64Array(member.segmentCount + 1));
+  const nodePlace = instants.map(() => new Float64Array(member.segmentCount + 1));
+  const lost = new Float64Array(instants.length);
+  const at = Float64Array.from(instants);
+  const q = new Float64Array(instants.length);
+  const v = new Float64Array(instants.length);
+  const bedded = member.foundation.some((s) => s > 0);
+
+  const heldEvery = Math.max(1, Math.ceil(kept.length / HELD));
+  const held: { shape: KeptMode; u: Float64Array }[] = [];
+  let before: { shape: KeptMode; u: Float64Array }[] = [];
+  let orthogonality = 0;
+  let residual = 0;
+  let initial = 0;
+  for (let n = 0; n < kept.length; n++) {
+    const due = n % heldEvery === 0 && held.length * perMode < WORK / 8;
+    if (!balanced && n % (3 * stride) >= 3 && !due) continue;
+    const { mode, start } = kept[n];
+    const u = new Float64Array(perMode);
+    const p = new Float64Array(perMode);
+    grid.sample(mode.shape, u, p);
+    residual = Math.max(residual, shapeResidual(member, grid, kept[n], u, p));
+    for (const other of before) {
+      orthogonality = Math.max(orthogonality, Math.abs(product(member, grid, kept[n], u, other.shape, other.u)));
+    }
+    before = [...before.slice(-1), { shape: kept[n], u }];
+    if (due) {
+      for (const other of held) {
+        orthogonality = Math.max(orthogonality, Math.abs(product(member, grid, kept[n], u, other.shape, other.u)));
+      }
+      held.push({ shape: kept[n], u });
+    }
+    if (!balanced) continue;
+    initial += start.energy;
+    const { omega, order } = mode.frequency;
+    const rate = dampingRate(member.damping, order, omega);
+    freeMotion(start.position, start.velocity, omega, rate, at, q, v);
+    for (let j = 0; j < instants.length; j++) {
+      if (rate > 0) lost[j] += dissipatedEnergy(start.position, start.velocity, omega, rate, at[j]);
+      addScaled(speed[j], u, v[j]);
+      addScaled(flux[j], p, q[j]);
+      if (bedded) addScaled(place[j], u, q[j]);
+      for (let node = 0; node <= member.segmentCount; node++) {
+        const phi = nodeDisplacement(mode.shape, node);
+        nodeSpeed[j][node] += phi * v[j];
+        nodePlace[j][node] += phi * q[j];
+      }
+    }
+  }
+
+  let drift = 0;
+  if (balanced && energy > 0) {
+    for (let j = 0; j < instants.length; j++) {
+      const sum = fieldEnergy(member, grid, speed[j], flux[j], place[j], nodeSpeed[j], nodePlace[j]);
+      drift = Math.max(drift, Math.abs(sum + lost[j] - initial) / energy);
+    }
+  }
+  return { drift, orthogonality, residual };
+}
+
+function fieldEnergy(
+  member: WaveMember,
+  grid: QuadratureGrid,
+  speed: Float64Array,
+  flux: Float64Array,
+  place: Float64Array,
+  nodeSpeed: Float64Array,
+  nodePlace: Float64Array,
+): number {
+  let energy = 0;
+  for (let i = 0; i < member.segmentCount; i++) {
+    const [from, to] = grid.range(i);
+    const rho = member.inertia[i];
+    const soft = 1 / member.stiffness[i];
+    const s = member.foundation[i];
+    for (let x = from; x < to; x++) {
+      energy +=
+        0.5 * grid.weights[x] * (rho * speed[x] * speed[x] + soft * flux[x] * flux[x] + s * place[x] * place[x]);
+    }
+  }
+  for (let j = 0; j <= member.segmentCount; j++) {
+    energy += 0.5 * (member.mass[j] * nodeSpeed[j] ** 2 + member.spring[j] * nodePlace[j] ** 2);
+  }
+  return energy;
+}
+
+function product(
+  member: WaveMember,
+  grid: QuadratureGrid,
+  a: KeptMode,
+  u: Float64Array,
+  b: KeptMode,
+  w: Float64Array,
+): number {
+  let total = 0;
+  for (let i = 0; i < member.segmentCount; i++) {
+    if (member.inertia[i] === 0) continue;
+    const [from, to] = grid.range(i);
+    let sum = 0;
+    for (let x = from; x < to; x++) sum += grid.weights[x] * u[x] * w[x];
+    total += member.inertia[i] * sum;
+  }
+  for (let j = 0; j <= member.segmentCount; j++) {
+    if (member.mass[j] === 0) continue;
+    total += member.mass[j] * nodeDisplacement(a.mode.shape, j) * nodeDisplacement(b.mode.shape, j);
+  }
+  return total;
+}
+
+function shapeResidual(
+  member: WaveMember,
+  grid: QuadratureGrid,
+  kept: KeptMode,
+  u: Float64Array,
+  p: Float64Array,
+): number {
+  const { lambda, ends } = kept.mode.shape;
+  let worst = 0;
+  for (let i = 0; i < member.segmentCount; i++) {
+    const [from, to] = grid.range(i);
+    let sumU = 0;
+    let sumP = 0;
+    let sizeU = 0;
+    let sizeP = 0;
+    for (let x = from; x < to; x++) {
+      const wu = grid.weights[x] * u[x];
+      const wp = grid.weights[x] * p[x];
+      sumU += wu;
+      sumP += wp;
+      sizeU += Math.abs(wu);
+      sizeP += Math.abs(wp);
+    }
+    const density = lambda * member.inertia[i] - member.foundation[i];
+    const [uNear, pNear, uFar, pFar] = ends.subarray(ENDS * i, ENDS * i + ENDS);
+    const soft = 1 / member.stiffness[i];
+    worst = Math.max(
+      worst,
+      ratio(pFar - pNear + density * sumU, Math.abs(pFar) + Math.abs(pNear) + Math.abs(density) * sizeU),
+      ratio(uFar - uNear - soft * sumP, Math.abs(uFar) + Math.abs(uNear) + soft * sizeP),
+    );
+    if (i + 1 < member.segmentCount) {
+      const next = ends[ENDS * (i + 1) + 1];
+      const load = (member.spring[i + 1] - lambda * member.mass[i + 1]) * uFar;
+      const own = (member.spring[i + 1] + lambda * member.mass[i + 1]) * Math.abs(uFar);
+      // the two sides were marched apart: a quiet node is held against the mode's own flux
+      worst = Math.max(worst, ratio(next - pFar - load, Math.abs(next) + Math.abs(pFar) + own + Math.sqrt(density > 0 ? density * member.stiffness[i] : 0) * Math.abs(uFar)));
+    }
+  }
+  return worst;
+}
+
+function ratio(defect: number, size: number): number {
+  return size > 1e-200 ? Math.abs(defect) / size : 0;
+}
+
+function addScaled(into: Float64Array, from: Float64Array, factor: number): void {
+  for (let x = 0; x < into.length; x++) into[x] += factor * from[x];
+}
+
+/** Up to `count` of the times, evenly chosen, first and last among them. */
+function pick(times: Float64Array, count: number): number[] {
+  if (times.length <= count) return Array.from(times);
+  if (count === 1) return [times[times.length - 1]];
+  return Array.from({ length: count }, (_, j) => times[Math.round((j * (times.length - 1)) / (count - 1))]);
+}

@@ -1,0 +1,75 @@
+import type { WaveMember } from '../members/wave-member.ts';
+import type { ResponsesSeries } from '../spec/types.ts';
+import type { Shortfall, TailState } from './kept-modes.ts';
+import { tailFactors } from './quantity-bounds.ts';
+
+/** Tolerance that a fixed number of modes is judged by, relative to the ceiling. */
+const USUAL_TOLERANCE = 1e-3;
+
+/** Error of the displacement anywhere on the member within the span, m: tail and rounding. */
+export function displacementBound(tail: TailState, flexibility: number): number {
+  const left = Math.sqrt(2 * tail.energies.energy * tail.member.flexibility);
+  return left + displacementRounding(tail, flexibility);
+}
+
+/** √(2E G) over the member, elastic part: the displacement never exceeds it, m. */
+export function displacementCeiling(tail: TailState, flexibility: number): number {
+  return Math.sqrt(2 * tail.whole.energies.energy * flexibility);
+}
+
+/**
+ * How far the certificate is from what the series was asked for: error over tolerance of the
+ * displacement (relative to the ceiling, or absolute) and of the force, the larger one.
+ *
+ * A force without any bound (irregular data, no gauge time) cannot be met by more modes: it does not
+ * count here and is reported with its own verdict; alone it leaves the usual displacement tolerance.
+ *
+ * @param flexibility largest G over the member, m/N
+ */
+export function shortfallOf(
+  series: ResponsesSeries,
+  member: WaveMember,
+  flexibility: number,
+  gaugeTime: number,
+  released: boolean,
+): Shortfall {
+  const wanted = 'tolerances' in series ? series.tolerances : {};
+  const relative = 'relativeTolerance' in series ? series.relativeTolerance : USUAL_TOLERANCE;
+  return (tail) => {
+    const force = wanted.force === undefined ? null : forceBound(tail, member, gaugeTime, released);
+    const ceiling = displacementCeiling(tail, flexibility);
+    const tolerance = wanted.displacement ?? (force === null ? relative * ceiling : Number.POSITIVE_INFINITY);
+    const ratio = Math.max(
+      share(displacementBound(tail, flexibility), tolerance, ceiling),
+      force === null ? 0 : share(force.bound, wanted.force as number, force.bound),
+    );
+    const roundingRatio = Math.max(
+      share(displacementRounding(tail, flexibility), tolerance, ceiling),
+      force === null ? 0 : share(force.rounding, wanted.force as number, force.bound),
+    );
+    return { ratio, roundingRatio };
+  };
+}
+
+function displacementRounding(tail: TailState, flexibility: number): number {
+  return tail.rounding.level(0) * Math.sqrt(flexibility);
+}
+
+function forceBound(
+  tail: TailState,
+  member: WaveMember,
+  gaugeTime: number,
+  released: boolean,
+): { bound: number; rounding: number } | null {
+  const factors = tailFactors('force', tail.energies, member.damping, tail.kept, gaugeTime, released);
+  if (!factors.exists) return null;
+  const rounding =
+    (gaugeTime > 0 ? (4 / gaugeTime) * tail.rounding.level(0) : tail.rounding.level(1)) *
+    Math.sqrt(tail.whole.member.fluxInertia);
+  return { bound: factors.onFluxInertia * Math.sqrt(tail.member.fluxInertia) + rounding, rounding };
+}
+
+/** Error over tolerance; nothing is missing where the size itself is 0. */
+function share(error: number, tolerance: number, size: number): number {
+  return error === 0 || size === 0 ? 0 : error / tolerance;
+}

@@ -1,0 +1,184 @@
+import { certify, type RigidPart } from '../certificate/field-bounds.ts';
+import { checkIndependently } from '../certificate/independent-checks.ts';
+import { keepModes, type KeptSeries } from '../certificate/kept-modes.ts';
+import { peakLimit, type PeakBasis } from '../certificate/peak-limits.ts';
+import { displacementBound, displacementCeiling, shortfallOf } from '../certificate/series-tolerance.ts';
+import { TailFlexibility } from '../certificate/tail-flexibility.ts';
+import { worstVerdict } from '../certificate/verdict.ts';
+import { readMember } from '../members/read-member.ts';
+import type { WaveMember } from '../members/wave-member.ts';
+import { largestFlexibility } from '../modes/largest-flexibility.ts';
+import { evenPositions, placeStations, type Stations } from '../modes/stations.ts';
+import { stressFactors } from '../modes/stress-factors.ts';
+import { readInitialState, type InitialState } from '../motion/initial-state.ts';
+import { sampleMotion, type FieldKind } from '../motion/sampled-motion.ts';
+import type { Field, Fields, Notice, Peak, Peaks, ResponsesAnswer, ResponsesRequest, Times } from '../spec/types.ts';
+import { HELD_NUMBERS } from './limits.ts';
+import { unitOf } from './quantity-units.ts';
+
+/**
+ * Free motion of a member after its initial displacement, velocity and impulses, with a certified
+ * bound on every sampled value.
+ *
+ * The method: exact energies of the data; modes taken until the bound on the displacement meets its
+ * tolerance; fields summed at the sampled stations and times; bounds from what the energies and the
+ * flexibilities have left; checks that use none of it.
+ *
+ * Faults: those of the member, of the initial motion, `stress-without-section`, `too-many-values`.
+ * Cost: O(modes · (segments + stations + times)) + 2 flops a mode and sampled value.
+ */
+export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
+  const member = readMember(request.member);
+  const state = readInitialState(member, request.initial);
+  const { quantities, gaugeTime } = request.sample;
+  const stations = sampledStations(member, request);
+  const times = sampledTimes(request.sample.times);
+  const stress = quantities.includes('stress') ? stressFactors(member, stations) : null;
+  const span = times.reduce((latest, t) => Math.max(latest, t), 0) + gaugeTime;
+
+  const flexibility = largestFlexibility(member);
+  const series = keepModes(
+    member,
+    state,
+    'modes' in request.series ? request.series.modes : request.series.maxModes,
+    !('modes' in request.series),
+    span,
+    shortfallOf(request.series, member, flexibility, gaugeTime, state.released),
+    HELD_NUMBERS,
+  );
+
+  const tails = new TailFlexibility(member, stations);
+  const kinds = quantities.map((quantity): FieldKind => (quantity === 'stress' ? 'force' : quantity));
+  const sums = sampleMotion(member, series.modes, stations, times, [...new Set(kinds)], gaugeTime, (mode, u, p) =>
+    tails.addSampled(mode, u, p),
+  );
+
+  const rigid = rigidPart(series);
+  const basis: PeakBasis = {
+    member,
+    series,
+    flexibility,
+    rigid,
+    gaugeTime,
+    released: state.released,
+    span,
+  };
+  const fields: Fields = { positions: stations.position, times };
+  const peaks: Peaks = {};
+  quantities.forEach((quantity, index) => {
+    const factor = quantity === 'stress' ? stress : null;
+    const certificate = certify(quantity, member, series, tails, gaugeTime, state.released, rigid, span, factor);
+    const values = rowsOf(sums.get(kinds[index]) as Float64Array, stations.position.length, factor);
+    fields[quantity] = {
+      unit: unitOf(quantity, member.kind),
+      values,
+      bound: certificate.bound,
+      boundKind: certificate.kind,
+      ...(certificate.rms !== null && { rms: certificate.rms }),
+      verdict: certificate.verdict,
+    };
+    peaks[quantity] = sampledPeak(values, stations, times, peakLimit(quantity, basis));
+  });
+
+  const total = state.energies[0];
+  const checks = request.checks ? checkIndependently(member, series.modes, times, total) : null;
+  return {
+    coefficients: series.modes.map(({ mode, start }) => ({
+      order: mode.frequency.order,
+      angularFrequency: mode.frequency.omega,
+      cosine: start.position,
+      sine: mode.frequency.omega > 0 ? start.velocity / mode.frequency.omega : start.velocity,
+      energy: start.energy,
+    })),
+    fields,
+    peaks,
+    convergence: {
+      verdict: worstVerdict(quantities.map((quantity) => (fields[quantity] as Field).verdict)),
+      modesUsed: series.modes.length,
+      ...(series.modesNeeded !== null && { modesNeeded: series.modesNeeded }),
+      energy: {
+        total,
+        captured: series.energy.captured,
+        tail: series.tail.energies.energy,
+        capturedFraction: total > 0 ? series.energy.captured / total : 1,
+      },
+      ceiling: displacementCeiling(series.tail, flexibility),
+      displacementBound: displacementBound(series.tail, flexibility),
+      balance: checks && { maxRelativeDrift: checks.drift },
+      orthogonality: checks && checks.orthogonality,
+      residual: checks && checks.residual,
+      spectrumComplete: true,
+    },
+    notices: noticesOf(request, state, series),
+  };
+}
+
+function sampledStations(member: WaveMember, request: ResponsesRequest): Stations {
+  const { positions } = request.sample;
+  return placeStations(member, 'count' in positions ? evenPositions(member, positions.count) : positions);
+}
+
+function sampledTimes(times: Times): Float64Array {
+  if (!('count' in times)) return Float64Array.from(times);
+  const { start, end, count } = times;
+  return Float64Array.from({ length: count }, (_, j) =>
+    j === count - 1 ? end : start + ((end - start) * j) / (count - 1),
+  );
+}
+
+/** |a₀|φ₀ and |v₀|φ₀ of the rigid-body mode; 0 where there is none. */
+function rigidPart(series: KeptSeries): RigidPart {
+  const first = series.modes[0];
+  if (first.mode.frequency.omega > 0) return { position: 0, velocity: 0 };
+  const height = first.mode.shape.ends[0];
+  return { position: Math.abs(first.start.position) * height, velocity: Math.abs(first.start.velocity) * height };
+}
+
+/** Rows of a table, one a time, times a factor a column. */
+function rowsOf(data: Float64Array, columns: number, factor: Float64Array | null): Float64Array[] {
+  const rows: Float64Array[] = [];
+  for (let from = 0; from < data.length; from += columns) {
+    const row = data.subarray(from, from + columns);
+    rows.push(factor ? row.map((value, q) => value * factor[q]) : row);
+  }
+  return rows;
+}
+
+function sampledPeak(values: Float64Array[], stations: Stations, times: Float64Array, upper: number | null): Peak {
+  let value = 0;
+  let at = stations.position[0];
+  let time = times[0];
+  values.forEach((row, j) => {
+    for (let q = 0; q < row.length; q++) {
+      if (Math.abs(row[q]) > Math.abs(value)) {
+        value = row[q];
+        at = stations.position[q];
+        time = times[j];
+      }
+    }
+  });
+  return { value, at, time, upper };
+}
+
+function noticesOf(request: ResponsesRequest, state: InitialState, series: KeptSeries): Notice[] {
+  const notices: Notice[] = [];
+  if (state.lostEnergy > 1e-12 * state.energies[0]) {
+    notices.push({
+      code: 'massless-stretch-settled',
+      detail: `Massless stretches cannot keep a shape of their own: for t > 0 they follow the places around them, and ${state.lostEnergy} J of the given shape's strain energy are left out.`,
+    });
+  }
+  if (series.modes[0].mode.frequency.omega === 0 && series.modes[0].start.velocity !== 0) {
+    notices.push({
+      code: 'rigid-body-motion',
+      detail: 'Nothing holds the member, so it drifts as a whole; the ceiling and the tolerance refer to its elastic motion.',
+    });
+  }
+  if ('modes' in request.series && series.modes.length < request.series.modes) {
+    notices.push({
+      code: 'finite-modes',
+      detail: `All inertia is lumped, so the member has ${series.modes.length} modes; all of them are used.`,
+    });
+  }
+  return notices;
+}
