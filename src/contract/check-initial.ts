@@ -19,12 +19,12 @@ export function checkInitial(
       faults.push(...checkShape(shape, pointer, span));
       if (shape.type !== 'pull') continue;
       if (field === 'velocity' && 'force' in shape) {
-        faults.push(faultRecord('pull-force-in-velocity', `${pointer}/force`));
+        faults.push(faultRecord('force-in-velocity', `${pointer}/force`, { at: shape.at }));
       }
       if (span === null || ends === null) continue;
       const end = shape.at === 0 ? 'near' : shape.at === span.length ? 'far' : null;
       if (end !== null && ends[end].type === 'fixed') {
-        faults.push(faultRecord('pull-at-fixed-end', `${pointer}/at`, { at: shape.at, end }));
+        faults.push(faultRecord('pull-at-fixed-end', `${pointer}/at`, { at: shape.at }));
       }
     }
   }

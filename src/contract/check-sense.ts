@@ -1,7 +1,7 @@
 import { faultRecord, type FaultRecord } from '../faults/fault.ts';
 import { memberFaults } from '../members/member-faults.ts';
 import { memberLength } from '../members/node-layout.ts';
-import type { Member, ModesRequest, ResponsesRequest } from '../spec/types.ts';
+import type { Member, ModesRequest, MovingEnds, ResponsesRequest } from '../spec/types.ts';
 import { checkInitial } from './check-initial.ts';
 import { type Span, spanOf } from './check-position.ts';
 import { checkSample, checkShapesRequest } from './check-sample.ts';
@@ -37,9 +37,8 @@ export function checkModesRequest(request: ModesRequest, formFaults: readonly Fa
     const modes = isSound('/series') && 'modes' in request.series ? request.series.modes : 1;
     faults.push(...checkShapesRequest(request.shapes, modes, span));
   }
-  if (isSound('/participation') && request.participation?.ends === 'uniform' && ends !== null) {
-    const end = ends.near.type === 'fixed' ? 'near' : ends.far.type === 'fixed' ? 'far' : null;
-    if (end !== null) faults.push(faultRecord('uniform-with-fixed-end', '/participation/ends', { end }));
+  if (request.participation !== undefined && ends !== null && isSound('/participation')) {
+    faults.push(...checkParticipation(request.participation.ends, ends));
   }
   return faults;
 }
@@ -61,6 +60,18 @@ export function checkResponsesRequest(
     faults.push(...checkSample(request.sample, span));
   }
   return faults;
+}
+
+/** A support that moves must be a fixed end; where the whole member moves, none may be. */
+function checkParticipation(moving: MovingEnds, { near, far }: Member['ends']): FaultRecord[] {
+  const held = near.type === 'fixed' ? 'near' : far.type === 'fixed' ? 'far' : null;
+  if (moving === 'uniform') {
+    return held === null ? [] : [faultRecord('uniform-motion-held', '/participation/ends', { end: held })];
+  }
+  const wanted = moving === 'both' ? (['near', 'far'] as const) : [moving];
+  const end = wanted.find((name) => (name === 'near' ? near : far).type !== 'fixed');
+  if (end === undefined) return [];
+  return [faultRecord('moving-end-not-fixed', '/participation/ends', { end, ends: moving })];
 }
 
 function soundness(formFaults: readonly FaultRecord[]): IsSound {

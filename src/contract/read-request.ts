@@ -49,7 +49,7 @@ function readerOf<Request>(
     const context: NamingContext = { kind: kind ?? 'cable', originals: new Map(), forms };
     const form = validate.call(context, copy)
       ? faults
-      : joined(faults, named(validate.errors ?? [], context, kind !== null));
+      : firstAtEachPlace([...faults, ...named(validate.errors ?? [], context, kind !== null)]);
     const all = [...form, ...check(copy as Request, form)];
     if (all.length > 0) throw capped(all);
     return copy as Request;
@@ -74,10 +74,10 @@ function named(errors: readonly ErrorObject[], context: NamingContext, kindKnown
     );
 }
 
-/** The faults of the validator, without those at a place that has a fault already. */
-function joined(first: readonly FaultRecord[], second: readonly FaultRecord[]): FaultRecord[] {
-  const taken = new Set(first.map(({ pointer }) => pointer));
-  return [...first, ...second.filter(({ pointer }) => !taken.has(pointer))];
+/** The first fault of every place: what else is wrong there follows from it. */
+function firstAtEachPlace(records: readonly FaultRecord[]): FaultRecord[] {
+  const taken = new Set<string>();
+  return records.filter(({ pointer }) => !taken.has(pointer) && taken.add(pointer));
 }
 
 function capped(records: readonly FaultRecord[]): Fault {

@@ -20,20 +20,12 @@ export const senseFaultWordings = {
   },
   'times-not-ascending': {
     title: 'Times do not ascend',
-    detail: 'The time {time} s does not come after the one before it ({before} s). Sort the times, each once.',
+    detail:
+      'The time {time} s does not come after the one before it ({before} s). Sort the times, each once.',
   },
   'time-span-empty': {
     title: 'The time span is empty',
     detail: 'The times end at {end} s, not after their start at {start} s. Let them end later.',
-  },
-  'pull-force-in-velocity': {
-    title: 'A force has no meaning in a velocity',
-    detail:
-      'A pull in an initial velocity is scaled by the velocity at its point, not by a force. Give amplitude instead of force.',
-  },
-  'pull-at-fixed-end': {
-    title: 'A pull acts on a fixed end',
-    detail: 'The pull at {at} m acts on the fixed {end} end, which does not give way. Move it inside.',
   },
   'width-outside': {
     title: 'An impulse reaches beyond the member',
@@ -43,11 +35,6 @@ export const senseFaultWordings = {
   'repeated-mass-velocity': {
     title: 'A mass has two velocities',
     detail: 'The mass at {at} m is given a velocity twice. Keep one of them.',
-  },
-  'uniform-with-fixed-end': {
-    title: 'A member with a fixed end cannot move as a whole',
-    detail:
-      'Participation under a uniform motion needs a member without fixed ends, but the {end} end is fixed. Ask for "ends": "{end}" or "both".',
   },
   'more-faults': {
     title: 'There are more faults',
