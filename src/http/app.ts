@@ -1,7 +1,15 @@
+import type { IncomingMessage } from 'node:http';
 import accepts from '@fastify/accepts';
 import helmet from '@fastify/helmet';
-import { fastify, LogController, type FastifyBaseLogger, type FastifyInstance } from 'fastify';
+import {
+  fastify,
+  LogController,
+  type FastifyBaseLogger,
+  type FastifyInstance,
+  type FastifyRequest,
+} from 'fastify';
 import { faultRecord } from '../faults/fault.ts';
+import { readBody } from './body.ts';
 import { clientErrorHandler } from './client-errors.ts';
 import { addDocumentResources, type ReferenceDocument } from './document-resources.ts';
 import { addHealthResources } from './health-resources.ts';
@@ -29,7 +37,6 @@ export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
     ...(logger === undefined ? {} : { loggerInstance: logger }),
     logController: new LogController({ disableRequestLogging: true }),
     genReqId: requestId,
-    bodyLimit,
     requestTimeout: requestTimeout * 1000,
     // A request that meets a stopping service gets a problem document from the pool instead.
     return503OnClosing: false,
@@ -41,9 +48,10 @@ export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
   });
   knowAllMethods(app);
   app.removeAllContentTypeParsers();
-  app.addContentTypeParser('application/json', { parseAs: 'buffer' }, (_request, body, done) =>
-    done(null, body),
-  );
+  app.addContentTypeParser('application/json', async (request: FastifyRequest, payload: IncomingMessage) => {
+    const announced = request.headers['content-length'];
+    return readBody(payload, announced === undefined ? undefined : Number(announced), bodyLimit);
+  });
   await app.register(accepts);
   await app.register(helmet, {
     contentSecurityPolicy: {
@@ -59,7 +67,7 @@ export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
     paths.add(route.url);
   });
   addRequestLog(app);
-  addProblemReplies(app, { pool, bodyLimit, paths: () => [...paths] });
+  addProblemReplies(app, pool, () => [...paths]);
   addGracefulStop(app, options);
   addSolveResource(app, '/v1/modes', 'modes', options);
   addSolveResource(app, '/v1/responses', 'responses', options);

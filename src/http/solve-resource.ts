@@ -5,6 +5,8 @@ import { readJson } from '../encoding/read-json.ts';
 import { Fault } from '../faults/fault.ts';
 import type { SolverPool } from '../pool/solver-pool.ts';
 import type { SolveTask } from '../pool/task.ts';
+import { warmUpBody } from '../pool/warm-up.ts';
+import { inPieces } from './answer-stream.ts';
 import { goneSignal } from './client-gone.ts';
 import { preferredWait } from './prefer.ts';
 import { addResource } from './resource.ts';
@@ -15,6 +17,9 @@ import { addResource } from './resource.ts';
  * that is promised is 256 KiB.
  */
 export const inlineBodyLimit = 8 * 1024;
+
+/** Readings before the first request, until the compiler has seen the reading often enough. */
+const warmUpRounds = 100;
 
 export interface SolveOptions {
   readonly pool: SolverPool;
@@ -31,7 +36,11 @@ export function addSolveResource(
   operation: Operation,
   options: SolveOptions,
 ): void {
-  const { pool, solveDeadline } = options;
+  const { pool, readRequest, solveDeadline } = options;
+  app.addHook('onReady', async () => {
+    const body = warmUpBody(operation);
+    for (let round = 0; round < warmUpRounds; round++) readRequest(operation, readJson(body));
+  });
   addResource(app, {
     url,
     offers: ['application/json'],
@@ -52,13 +61,14 @@ export function addSolveResource(
       }
       if (wait !== null && wait === deadline) reply.header('preference-applied', `wait=${wait}`);
       const { buffer, byteOffset, byteLength } = outcome.bytes;
-      return reply.type('application/json').send(Buffer.from(buffer, byteOffset, byteLength));
+      reply.type('application/json').header('content-length', byteLength);
+      return reply.send(inPieces(Buffer.from(buffer, byteOffset, byteLength)));
     },
   });
 }
 
 function taskOf(request: FastifyRequest, operation: Operation, { readRequest }: SolveOptions): SolveTask {
-  const body = (request.body as Buffer | undefined) ?? Buffer.alloc(0);
+  const body = (request.body as Uint8Array<ArrayBuffer> | undefined) ?? new Uint8Array(0);
   if (body.byteLength > inlineBodyLimit) return { kind: 'body', operation, body };
   return { kind: 'request', operation, request: readRequest(operation, readJson(body)) };
 }

@@ -58,6 +58,7 @@ export const statusOfFault: Readonly<Partial<Record<FaultCode, number>>> = {
 
   // The solver pool
   'internal-error': 500,
+  'energy-inconsistent': 500,
   'solver-crashed': 500,
   'solver-out-of-memory': 500,
   'queue-full': 503,

@@ -172,7 +172,7 @@ export class SolverPool {
 
   async #solve(job: Job): Promise<void> {
     const { task, stopper } = job;
-    const transferList = task.kind === 'body' ? movableBuffers(task.body) : [];
+    const transferList = task.kind === 'body' ? [task.body.buffer] : [];
     let outcome: SolveOutcome;
     try {
       const result = (await this.#threads.run(task, { signal: stopper.signal, transferList })) as SolveResult;
@@ -215,10 +215,4 @@ function refusal(
 function outcomeOfCrash(error: unknown): SolveOutcome {
   const memory = (error as NodeJS.ErrnoException).code === 'ERR_WORKER_OUT_OF_MEMORY';
   return { ...refusal(memory ? 'solver-out-of-memory' : 'solver-crashed'), cause: String(error) };
-}
-
-/** The buffer under a body, if it holds nothing else: small bodies share one slab, which must not be moved. */
-function movableBuffers(body: Uint8Array): ArrayBuffer[] {
-  const { buffer } = body;
-  return buffer instanceof ArrayBuffer && buffer.byteLength === body.byteLength ? [buffer] : [];
 }

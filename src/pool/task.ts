@@ -2,11 +2,12 @@ import type { FaultRecord } from '../faults/fault.ts';
 
 /**
  * What crosses the thread boundary on the way to a worker: a request that was read already, or the
- * bytes of a body that is too large to be read on the event loop. `ready` asks only for a sign of life.
+ * bytes of a body that is too large to be read on the event loop, in a buffer of their own, which is
+ * moved. `ready` asks only for a sign of life.
  */
 export type SolveTask =
   | { readonly kind: 'request'; readonly operation: string; readonly request: unknown }
-  | { readonly kind: 'body'; readonly operation: string; readonly body: Uint8Array }
+  | { readonly kind: 'body'; readonly operation: string; readonly body: Uint8Array<ArrayBuffer> }
   | { readonly kind: 'ready' };
 
 /**

@@ -7,10 +7,10 @@ const rounds = 40;
 const member = {
   kind: 'bar',
   segments: [
-    { length: 3, axialStiffness: 4.2e8, massPerLength: 15.7, area: 0.002 },
+    { length: '3 m', youngsModulus: '210 GPa', area: '2000 mm2', density: '7850 kg/m3' },
     { length: 2, axialStiffness: 2.1e8, massPerLength: 7.85, area: 0.001, foundation: 1e5 },
   ],
-  ends: { near: { type: 'fixed' }, far: { type: 'attached', mass: 4, spring: 1e5 } },
+  ends: { near: { type: 'fixed' }, far: { type: 'attached', mass: '4 kg', spring: 1e5 } },
   attachments: [{ at: 1.5, mass: 2 }],
   damping: { type: 'ratio', value: 0.01 },
 };
@@ -37,13 +37,18 @@ const requests: Readonly<Record<string, object>> = {
   },
 };
 
+/** The body of a small request of an operation. */
+export function warmUpBody(operation: string): Uint8Array<ArrayBuffer> {
+  return new TextEncoder().encode(JSON.stringify(requests[operation]));
+}
+
 /**
  * Solves small requests until the solver is compiled, so that the first request of a new worker is
  * not slow. Throws where one of them is not answered: a worker that cannot solve must not serve.
  */
 export function warmUp(operations: SolverOperations): void {
   for (const operation of Object.keys(operations)) {
-    const body = new TextEncoder().encode(JSON.stringify(requests[operation]));
+    const body = warmUpBody(operation);
     for (let round = 0; round < rounds; round++) {
       const result = runTask(operations, { kind: 'body', operation, body });
       if (result.kind !== 'answer')

@@ -38,17 +38,6 @@ describe('the solver pool', () => {
     expect(codesOf(await run('{"refuse":true}'))).toEqual(['malformed-json']);
   });
 
-  it('does not move a slab that other bodies share', async () => {
-    const pool = await startPool();
-    const slab = new Uint8Array(64);
-    const { written } = new TextEncoder().encodeInto('{"x":1}', slab);
-    await pool.run(
-      { kind: 'body', operation: 'echo', body: slab.subarray(0, written) },
-      { arrived: performance.now(), deadline: 30 },
-    );
-    expect(slab.byteLength).toBe(64);
-  });
-
   it('passes on faults of the solver and names a bug with its stack for the log', async () => {
     const pool = await startPool();
     expect(await ask(pool, 'refuse')).toMatchObject({
