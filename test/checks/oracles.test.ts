@@ -1,26 +1,13 @@
 import { describe, expect, it } from 'vitest';
-import { entryDisplacement, entryMember, entryVelocity } from '../support/entries.ts';
+import { entryMember } from '../support/entries.ts';
 import { initialState } from '../support/initial-shapes.ts';
 import { plainMember, randomMemberEntries, referenceEntries, referenceEntry } from '../support/reference.ts';
 import { StruckBar } from '../support/struck-bar.ts';
 import { TravellingWaves } from '../support/travelling-waves.ts';
+import { wavesOfEntry } from '../support/wave-entries.ts';
 import { countBelow, countWithNodesHeld } from '../support/wittrick-williams.ts';
 
 /** The oracles of test/support are held to the reference tables before anything else is held to them. */
-
-function wavesOf(id: string, duration: number, refinement = 1): TravellingWaves {
-  const entry = referenceEntry('exact-fields', id);
-  const member = entryMember(entry);
-  const { shapes, nodes } = entryVelocity(entry);
-  const nodeVelocities: (number | undefined)[] = [];
-  for (const { node, velocity } of nodes) nodeVelocities[node] = velocity;
-  return new TravellingWaves(
-    member,
-    initialState(member, entryDisplacement(entry), shapes, nodeVelocities),
-    duration,
-    refinement,
-  );
-}
 
 function peak(values: readonly number[]): number {
   return Math.max(...values.map(Math.abs));
@@ -31,9 +18,9 @@ const waveEntries = referenceEntries('exact-fields').filter((entry) => /^d-0\d$/
 describe('travelling waves', () => {
   it.each(waveEntries.map((entry) => [entry.id, entry] as const))(
     'give displacement, velocity and force of %s',
-    (id, entry) => {
+    (_, entry) => {
       const points = entry.inputs.points_x_t as [number, number][];
-      const waves = wavesOf(id, Math.max(...points.map(([, t]) => t)));
+      const waves = wavesOfEntry(entry, Math.max(...points.map(([, t]) => t)));
       const { u, v, force } = entry.expected as Record<string, number[]>;
       points.forEach(([x, t], i) => {
         // Rounding of some hundred reflections, each a few eps of the peak.

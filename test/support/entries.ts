@@ -1,5 +1,6 @@
+import type { InitialMotion } from '../../src/spec/types.ts';
 import type { PlainShape } from './initial-shapes.ts';
-import type { PlainMember } from './plain-member.ts';
+import { nodePositions, type PlainMember } from './plain-member.ts';
 import type { ReferenceEntry } from './reference.ts';
 
 function held(end: unknown): boolean {
@@ -61,14 +62,18 @@ export function entryDisplacement(entry: ReferenceEntry): PlainShape[] {
       return [{ type: 'polyline', positions: [0, given.x0, length], values: [0, given.h, 0] }];
     case 'parabola':
       return [
-        { type: 'polynomial', coefficients: [0, (4 * given.h) / length, (-4 * given.h) / length ** 2] },
+        {
+          type: 'polynomial',
+          coefficients: [0, (4 * given.h) / length, (-4 * given.h) / length ** 2],
+          from: 0,
+        },
       ];
     case 'samples':
       return [{ type: 'polyline', positions: given.x, values: given.u }];
     case 'linear':
       return [{ type: 'polyline', positions: [0, length], values: [0, given.slope * length] }];
     case 'polynomial':
-      return [{ type: 'polynomial', coefficients: given.c }];
+      return [{ type: 'polynomial', coefficients: given.c, from: 0 }];
     case 'sine':
       // The quarter sine of c-19 is half of a half-sine wave: sin(π x/2L).
       return [{ type: 'half-sine', amplitude: given.h, halfWaves: given.n ?? 0.5 }];
@@ -104,4 +109,18 @@ export function entryVelocity(entry: ReferenceEntry): {
     default:
       throw new Error(`entry ${entry.id}: velocity ${given.type}`);
   }
+}
+
+/** Initial motion of an entry as the interface takes it. */
+export function entryInitial(entry: ReferenceEntry): InitialMotion {
+  const displacement = entryDisplacement(entry);
+  const { shapes, nodes } = entryVelocity(entry);
+  const positions = nodePositions(entryMember(entry));
+  return {
+    ...(displacement.length > 0 ? { displacement } : {}),
+    ...(shapes.length > 0 ? { velocity: shapes } : {}),
+    ...(nodes.length > 0
+      ? { massVelocities: nodes.map(({ node, velocity }) => ({ at: positions[node], velocity })) }
+      : {}),
+  };
 }

@@ -6,8 +6,8 @@ export type PlainShape =
   | { type: 'pull'; at: number; amplitude: number }
   | { type: 'half-sine'; amplitude: number; halfWaves: number }
   | { type: 'polyline'; positions: number[]; values: number[] }
-  | { type: 'polynomial'; coefficients: number[]; from?: number; to?: number }
-  | { type: 'uniform'; value: number; from?: number; to?: number };
+  | { type: 'polynomial'; coefficients: number[]; from: number; to?: number }
+  | { type: 'uniform'; value: number; from: number; to?: number };
 
 /** A function on the member, smooth between its breaks. */
 export interface PlainFunction {
@@ -103,9 +103,9 @@ export function shapeFunction(shape: PlainShape, member: PlainMember): PlainFunc
     case 'polyline':
       return polyline(shape.positions, shape.values);
     case 'polynomial':
-      return polynomial(shape.coefficients, shape.from ?? 0, shape.to ?? length);
+      return polynomial(shape.coefficients, shape.from, shape.to ?? length);
     case 'uniform':
-      return polynomial([shape.value], shape.from ?? 0, shape.to ?? length);
+      return polynomial([shape.value], shape.from, shape.to ?? length);
   }
 }
 

@@ -73,3 +73,16 @@ export function plainMember(member: RandomMemberEntry['member']): PlainMember {
     })),
   };
 }
+
+/** Energies of clusters of close frequencies for a polyline displacement (test/reference/pair-energies.json). */
+export interface PairEnergyEntry {
+  readonly id: string;
+  readonly member: RandomMemberEntry['member'];
+  readonly displacement: { readonly positions: readonly number[]; readonly values: readonly number[] };
+  readonly energy: number;
+  readonly clusters: readonly { readonly orders: readonly number[]; readonly energy: number }[];
+}
+
+export function pairEnergyEntries(): PairEnergyEntry[] {
+  return read('pair-energies').entries as PairEnergyEntry[];
+}
