@@ -3,6 +3,7 @@
  *
  * The types describe canonical documents: a quantity (`x-dimension`) is a number in SI, a property
  * with a default is always there. Arrays of numbers in answers may be typed arrays (`Numbers`).
+ * With --check nothing is written; the exit code is 1 where the file is not up to date.
  */
 import { readdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { compile } from 'json-schema-to-typescript';
@@ -116,4 +117,9 @@ const text = await compile(root, 'SyntheticRoot', {
 });
 const withoutRoot = text.replace(/export interface SyntheticRoot \{[\s\S]*?\n\}\n/, '');
 if (withoutRoot.includes('SyntheticRoot')) throw new Error('the synthetic root was not removed');
-writeFileSync(target, head + '\n' + withoutRoot.replace(/\n{3,}/g, '\n\n').trim() + '\n');
+const types = head + '\n' + withoutRoot.replace(/\n{3,}/g, '\n\n').trim() + '\n';
+if (!process.argv.includes('--check')) writeFileSync(target, types);
+else if (readFileSync(target, 'utf8') !== types) {
+  console.error('src/spec/types.ts is not what the schemas say: run "npm run types".');
+  process.exitCode = 1;
+}
