@@ -8,7 +8,7 @@ import {
   type FastifyInstance,
   type FastifyRequest,
 } from 'fastify';
-import { faultRecord } from '../faults/fault.ts';
+import { fault, faultRecord } from '../faults/fault.ts';
 import { readBody } from './body.ts';
 import { clientErrorHandler } from './client-errors.ts';
 import { addDocumentResources, type ReferenceDocument } from './document-resources.ts';
@@ -40,6 +40,8 @@ export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
     requestTimeout: requestTimeout * 1000,
     // A request that meets a stopping service gets a problem document from the pool instead.
     return503OnClosing: false,
+    // Node itself would answer without a problem document.
+    http: { requireHostHeader: false },
     clientErrorHandler: clientErrorHandler(requestTimeout),
     frameworkErrors: (error, request, reply) => {
       const reason = error.code === 'FST_ERR_BAD_URL' ? 'the path is not percent-encoded' : error.message;
@@ -80,6 +82,9 @@ export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
 function addRequestLog(app: FastifyInstance): void {
   app.addHook('onRequest', async (request, reply) => {
     reply.header('x-request-id', request.id);
+    if (request.headers.host === undefined && request.raw.httpVersion === '1.1') {
+      throw fault('malformed-http', '', { reason: 'the Host header is missing' });
+    }
   });
   app.addHook('onResponse', async (request, reply) => {
     const { method, ip } = request;

@@ -1,6 +1,7 @@
 import type { Readable } from 'node:stream';
 import { fault } from '../faults/fault.ts';
 
+/** Bytes set aside for a body before any has come: an announcement alone costs no more. */
 const firstCapacity = 64 * 1024;
 
 /**
@@ -19,7 +20,7 @@ export async function readBody(
 ): Promise<Uint8Array<ArrayBuffer>> {
   const tooLarge = (): Error => fault('body-too-large', '', { limit });
   if (announced !== undefined && announced > limit) throw tooLarge();
-  let bytes = new Uint8Array(new ArrayBuffer(announced ?? firstCapacity));
+  let bytes = new Uint8Array(new ArrayBuffer(Math.min(announced ?? firstCapacity, firstCapacity)));
   let length = 0;
   try {
     const chunks: AsyncIterable<Buffer> = payload.iterator({ destroyOnReturn: false });
@@ -30,7 +31,8 @@ export async function readBody(
         payload.resume();
         throw tooLarge();
       }
-      if (end > bytes.length) bytes = grown(bytes, Math.min(limit, Math.max(end, 2 * bytes.length)));
+      if (end > bytes.length)
+        bytes = grown(bytes, announced ?? Math.min(limit, Math.max(end, 2 * bytes.length)));
       bytes.set(chunk, length);
       length = end;
     }

@@ -22,6 +22,7 @@ const topLevelNames = new Set([
   '.prettierrc.json',
   '.prettierignore',
   '.gitignore',
+  '.npmrc',
   '.gitattributes',
   '.ci',
   'LICENSE',

@@ -214,6 +214,12 @@ describe('an exchange over HTTP', () => {
       'malformed-http',
     ],
     [
+      'a request without Host',
+      'GET /health/live HTTP/1.1\r\nconnection: close\r\n\r\n',
+      400,
+      'malformed-http',
+    ],
+    [
       'headers without end',
       `GET / HTTP/1.1\r\nhost: x\r\nx: ${'y'.repeat(20_000)}\r\n\r\n`,
       431,
@@ -224,6 +230,23 @@ describe('an exchange over HTTP', () => {
     expect(answer).toMatch(new RegExp(`^HTTP/1\\.1 ${status} `));
     expect(answer).toContain('content-type: application/problem+json');
     expect(JSON.parse(answer.slice(answer.indexOf('\r\n\r\n') + 4))).toMatchObject({ status, code });
+  });
+
+  it('reads a chunked body, and one that comes in drops, like any other', async () => {
+    const numbers = JSON.stringify({ values: Array.from({ length: 15_000 }, (_, i) => i) });
+    const pieces = numbers.match(/.{1,10000}/g) ?? [];
+    const chunks = pieces.map((piece) => `${piece.length.toString(16)}\r\n${piece}\r\n`).join('');
+    const head =
+      'POST /v1/modes HTTP/1.1\r\nhost: x\r\nconnection: close\r\ncontent-type: application/json\r\n';
+    const chunked = await exchange(
+      service.port,
+      `${head}transfer-encoding: chunked\r\n\r\n${chunks}0\r\n\r\n`,
+    );
+    const plain = await exchange(service.port, `${head}content-length: ${numbers.length}\r\n\r\n${numbers}`);
+    for (const answer of [chunked, plain]) {
+      expect(answer).toMatch(/^HTTP\/1\.1 200 /);
+      expect(answer.slice(answer.indexOf('\r\n\r\n') + 4)).toBe(`{"echo":${numbers}}`);
+    }
   });
 
   it('says in one list what several faults are, and leads with the one of the lowest status', async () => {
