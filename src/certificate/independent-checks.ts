@@ -18,10 +18,10 @@ export interface CheckResults {
 }
 
 /** Products of modes, points and instants that the checks may spend. */
-const WORK = 2e7;
+const WORK = 4e6;
 /** Instants of the energy balance at most. */
 const INSTANTS = 64;
-/** Shapes held for the pairs far apart; 45 shapes make 990 pairs. */
+/** Shapes held for the pairs far apart at most; 45 shapes make 990 pairs. */
 const HELD = 45;
 
 /**
@@ -36,7 +36,7 @@ const HELD = 45;
  *   force balance of each node, relative to the terms.
  *
  * Of long series every m-th triple of modes is checked and fewer instants are taken, so that the
- * cost stays near 2e7 multiplications.
+ * cost stays near 4e6 multiplications.
  */
 export function checkIndependently(
   member: WaveMember,
@@ -62,24 +62,31 @@ export function checkIndependently(
   const v = new Float64Array(instants.length);
   const bedded = member.foundation.some((s) => s > 0);
 
-  const heldEvery = Math.max(1, Math.ceil(kept.length / HELD));
+  const mostHeld = Math.max(2, Math.min(HELD, Math.floor(Math.sqrt((2 * WORK) / perMode))));
+  const heldEvery = Math.max(1, Math.ceil(kept.length / mostHeld));
   const held: { shape: KeptMode; u: Float64Array }[] = [];
-  let before: { shape: KeptMode; u: Float64Array }[] = [];
+  const before: { shape: KeptMode; u: Float64Array }[] = [];
+  const spare: Float64Array[] = [];
+  const p = new Float64Array(perMode);
   let orthogonality = 0;
   let residual = 0;
   let initial = 0;
   for (let n = 0; n < kept.length; n++) {
-    const due = n % heldEvery === 0 && held.length * perMode < WORK / 8;
+    const due = n % heldEvery === 0;
     if (!balanced && n % (3 * stride) >= 3 && !due) continue;
     const { mode, start } = kept[n];
-    const u = new Float64Array(perMode);
-    const p = new Float64Array(perMode);
+    // u stays with the shape for its neighbours; buffers of shapes let go are used again
+    const u = spare.pop() ?? new Float64Array(perMode);
     grid.sample(mode.shape, u, p);
     residual = Math.max(residual, shapeResidual(member, grid, kept[n], u, p));
     for (const other of before) {
       orthogonality = Math.max(orthogonality, Math.abs(product(member, grid, kept[n], u, other.shape, other.u)));
     }
-    before = [...before.slice(-1), { shape: kept[n], u }];
+    before.push({ shape: kept[n], u });
+    if (before.length > 2) {
+      const gone = before.shift() as { u: Float64Array };
+      if (!held.some((other) => other.u === gone.u)) spare.push(gone.u);
+    }
     if (due) {
       for (const other of held) {
         orthogonality = Math.max(orthogonality, Math.abs(product(member, grid, kept[n], u, other.shape, other.u)));

@@ -3,8 +3,8 @@ import { ENDS, evaluateShape, waveNumberSquare, type ModeShape } from '../modes/
 import { GAUSS_20 } from '../numerics/gauss-legendre.ts';
 
 const POINTS = GAUSS_20.nodes.length;
-/** Largest phase of one panel; products of two shapes then pass twice that, still to rounding. */
-const PANEL = 5;
+/** Largest phase of one panel; products of two shapes pass twice that, 20 points still to rounding. */
+const PANEL = 12;
 
 /**
  * A grid of Gauss panels over the member, fine enough for products of shapes up to a frequency.
