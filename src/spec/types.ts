@@ -439,6 +439,15 @@ export interface InitialMotion {
   impulses?: Impulse[];
 }
 /**
+ * The process answers.
+ */
+export interface LiveAnswer {
+  /**
+   * live: the process answers.
+   */
+  status: 'live';
+}
+/**
  * Stiffnesses multiplied by (1 + iη). It describes a steady state only: modes and responses refuse it (422).
  */
 export interface LossFactorDamping {
@@ -898,6 +907,23 @@ export interface RayleighDamping {
    * β, s.
    */
   stiffnessCoefficient: number;
+}
+/**
+ * The solvers take work.
+ */
+export interface ReadyAnswer {
+  /**
+   * ready: the solvers take work.
+   */
+  status: 'ready';
+  /**
+   * Solves under way.
+   */
+  running: number;
+  /**
+   * Requests that wait for a solver.
+   */
+  waiting: number;
 }
 /**
  * Motion of a member with the bound of its error.

@@ -26,6 +26,10 @@ describe('a wrong request is answered with exactly its faults', () => {
     for (const { detail } of records) expect(detail).not.toMatch(/undefined|\{\w+\}|\?\s*$|\[object/);
   });
 
+  it('every body can be sent as JSON', () => {
+    for (const { body } of badRequests) expect(JSON.parse(JSON.stringify(body))).toEqual(body);
+  });
+
   it('no title stands twice and there are well over sixty', () => {
     expect(new Set(badRequests.map(({ title }) => title)).size).toBe(badRequests.length);
     expect(badRequests.length).toBeGreaterThanOrEqual(100);

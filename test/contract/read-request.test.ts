@@ -290,6 +290,7 @@ describe('no body makes the reader throw anything but Fault, or change the body'
     expect(codesOf(modes({ member: wide }))).toEqual(['too-many-keys']);
     const proto: unknown = JSON.parse('{"member": {"__proto__": {"kind": "cable"}}, "series": {"modes": 1}}');
     expect(codesOf(proto)).toEqual(['reserved-key', 'missing-key']);
+    expect(codesOf(modes({ series: { modes: Infinity } }))).toEqual(['number-magnitude']);
     const long = Array.from({ length: 1_000_001 }, () => 0);
     expect(codesOf(modes({ shapes: { positions: long } }))).toEqual(['too-many-items']);
   });
