@@ -40,7 +40,7 @@ export class Rounding {
     const shapeError =
       omega * this.travelTime * (half / (omega || 1) + EPS) + 8 * EPS * (this.segments + 8);
     const coefficient = shapeError * (start.positionScale + start.velocityScale);
-    const phase = Math.min(2, this.span * (half + 2 * EPS * omega));
+    const phase = Math.min(2, this.span * (half + 4 * EPS * omega) + 16 * EPS);
     const amplitude = Math.sqrt(2 * start.energy);
     const error = amplitude * (phase + shapeError) + coefficient;
     this.slack = amplitude * coefficient + coefficient * coefficient;

@@ -4,7 +4,8 @@ import { masslessStretches } from '../modes/massless-stretches.ts';
 import { waveNumberSquare } from '../modes/mode-shape.ts';
 import type { Mode } from '../modes/mode-series.ts';
 import { StaticResponse } from '../modes/static-response.ts';
-import { sampleShape, type Stations } from '../modes/stations.ts';
+import { ShapeSampler } from '../modes/shape-sampler.ts';
+import type { Stations } from '../modes/stations.ts';
 import { canDriftFreely, totalMass, travelTime } from '../spectrum/spectrum-size.ts';
 
 const EPS = Number.EPSILON;
@@ -31,6 +32,7 @@ export class TailFlexibility {
 
   private readonly member: WaveMember;
   private readonly travelTime: number;
+  private readonly sampler: ShapeSampler;
   private readonly displacement: Float64Array;
   private readonly flux: Float64Array;
   private readonly rest: Float64Array;
@@ -45,6 +47,7 @@ export class TailFlexibility {
     this.member = member;
     this.stations = stations;
     this.travelTime = travelTime(member);
+    this.sampler = new ShapeSampler(member, stations);
     const count = stations.segment.length;
     const drifts = canDriftFreely(member);
     const source = drifts ? new InertiaRelief(member) : new StaticResponse(member);
@@ -85,12 +88,12 @@ export class TailFlexibility {
 
   /** Takes one more mode out of the remainder. Cost O(stations), two elementary functions each. */
   add(mode: Mode): void {
-    sampleShape(this.member, mode.shape, this.stations, this.displacement, this.flux);
+    this.sampler.sample(mode.shape, this.displacement, this.flux);
     this.addSampled(mode, this.displacement, this.flux);
   }
 
-  /** The same with φ and p at the stations already known. */
-  addSampled(mode: Mode, displacement: Float64Array, flux: Float64Array): void {
+  /** The same at the stations from `first` on, with φ and p there already known. */
+  addSampled(mode: Mode, displacement: Float64Array, flux: Float64Array, first = 0): void {
     const { member, stations } = this;
     const { omega, lower, upper } = mode.frequency;
     const { lambda } = mode.shape;
@@ -98,10 +101,11 @@ export class TailFlexibility {
     // relative error of the shape: phase error over the member plus rounding of the march
     const error =
       omega * this.travelTime * ((0.5 * (upper - lower)) / (omega || 1) + EPS) + 4 * EPS * member.segmentCount;
-    for (let q = 0; q < stations.segment.length; q++) {
+    for (let m = 0; m < displacement.length; m++) {
+      const q = first + m;
       const i = stations.segment[q];
-      const u = displacement[q];
-      const p = flux[q];
+      const u = displacement[m];
+      const p = flux[m];
       const k = member.stiffness[i];
       const impedance = k * Math.sqrt(Math.max(0, waveNumberSquare(member, i, lambda)));
       const uAmplitude = Math.abs(u) + (impedance > 0 ? Math.abs(p) / impedance : 0);

@@ -87,6 +87,7 @@ export function shapeAt(member: WaveMember, omega: number, joint: number): ModeS
     ends[ENDS * i + 2] *= far;
     ends[ENDS * i + 3] *= far;
   }
+  if (member.farFixed) ends[ENDS * n - 2] = 0;
   const mass = modalMass(member, lambda, ends);
   const size = 1 / Math.sqrt(mass);
   for (let i = 0; i < ends.length; i++) ends[i] *= size;

@@ -1,5 +1,4 @@
 import type { WaveMember } from '../members/wave-member.ts';
-import { evaluateShape, type ModeShape } from './mode-shape.ts';
 
 /** A place on the member where shapes are sampled. */
 export interface Stations {
@@ -50,20 +49,4 @@ export function placeStation(member: WaveMember, x: number): { at: number; i: nu
 export function evenPositions(member: WaveMember, count: number): Float64Array {
   const length = member.position[member.segmentCount];
   return Float64Array.from({ length: count }, (_, q) => (q === count - 1 ? length : (length * q) / (count - 1)));
-}
-
-/** φ and p of a shape at all stations. Cost O(count), two elementary functions each. */
-export function sampleShape(
-  member: WaveMember,
-  shape: ModeShape,
-  stations: Stations,
-  displacement: Float64Array,
-  flux: Float64Array,
-): void {
-  const pair = new Float64Array(2);
-  for (let q = 0; q < stations.segment.length; q++) {
-    evaluateShape(member, shape, stations.segment[q], stations.distance[q], pair);
-    displacement[q] = pair[0];
-    flux[q] = pair[1];
-  }
 }

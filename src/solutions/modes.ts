@@ -4,7 +4,8 @@ import type { WaveMember } from '../members/wave-member.ts';
 import { ModeSeries, type Mode as SolvedMode } from '../modes/mode-series.ts';
 import { movingInertia, participationFactor, type MovingEnds } from '../modes/participation.ts';
 import { peakDisplacement, strainShares } from '../modes/shape-figures.ts';
-import { evenPositions, placeStations, sampleShape, type Stations } from '../modes/stations.ts';
+import { ShapeSampler } from '../modes/shape-sampler.ts';
+import { evenPositions, placeStations, type Stations } from '../modes/stations.ts';
 import { dampingRate } from '../motion/modal-damping.ts';
 import type { Member, Mode, ModesAnswer, ModesRequest, Notice } from '../spec/types.ts';
 import { totalMass } from '../spectrum/spectrum-size.ts';
@@ -30,6 +31,7 @@ export function solveModes(request: ModesRequest): ModesAnswer {
     });
   }
 
+  const sampler = stations && new ShapeSampler(member, stations);
   const ends = request.participation?.ends;
   const inertia = ends === undefined ? 0 : movingInertia(member, requireMovable(member, ends));
   const modes: Mode[] = [];
@@ -37,7 +39,7 @@ export function solveModes(request: ModesRequest): ModesAnswer {
   for (let n = 1; n <= count; n++) {
     const solved = series.next();
     if (solved === null) break;
-    const mode = describe(request, member, solved, stations);
+    const mode = describe(request, member, solved, stations, sampler);
     if (ends !== undefined) {
       const factor = participationFactor(member, solved.shape, ends);
       const fraction = inertia > 0 ? (factor * factor) / inertia : 0;
@@ -108,6 +110,7 @@ function describe(
   member: WaveMember,
   solved: SolvedMode,
   stations: Stations | null,
+  sampler: ShapeSampler | null,
 ): Mode {
   const { frequency, shape } = solved;
   const { omega, order } = frequency;
@@ -127,7 +130,7 @@ function describe(
   if (stations && request.shapes) {
     const displacement = new Float64Array(stations.position.length);
     const force = new Float64Array(stations.position.length);
-    sampleShape(member, shape, stations, displacement, force);
+    sampler?.sample(shape, displacement, force);
     const { quantities } = request.shapes;
     mode.shape = {
       ...(quantities.includes('displacement') && { displacement: displacement.map((value) => value / peak) }),

@@ -49,8 +49,8 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
 
   const tails = new TailFlexibility(member, stations);
   const kinds = quantities.map((quantity): FieldKind => (quantity === 'stress' ? 'force' : quantity));
-  const sums = sampleMotion(member, series.modes, stations, times, [...new Set(kinds)], gaugeTime, (mode, u, p) =>
-    tails.addSampled(mode, u, p),
+  const sums = sampleMotion(member, series.modes, stations, times, [...new Set(kinds)], gaugeTime, (mode, u, p, first) =>
+    tails.addSampled(mode, u, p, first),
   );
 
   const rigid = rigidPart(series);
