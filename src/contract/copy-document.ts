@@ -24,7 +24,8 @@ export interface DocumentCopy {
 
 /**
  * A copy of a parsed JSON document that may be changed, and what no request may contain: numbers
- * beyond usable magnitudes, reserved keys, values that JSON does not have, structures without limit.
+ * beyond usable magnitudes, malformed texts, reserved keys, values that JSON does not have, structures
+ * without limit.
  * −0 becomes 0.
  *
  * @param document anything; it is not changed
@@ -45,7 +46,8 @@ interface State {
 
 function copyValue(value: unknown, state: State): unknown {
   if (typeof value === 'number') return copyNumber(value, state);
-  if (value === null || typeof value === 'string' || typeof value === 'boolean') return value;
+  if (value === null || typeof value === 'boolean') return value;
+  if (typeof value === 'string') return copyText(value, state);
   if (typeof value !== 'object') {
     const wrong = { wanted: 'a JSON value', found: typeof value, hint: '' };
     state.faults.push(recordHere('wrong-type', state, wrong));
@@ -55,6 +57,14 @@ function copyValue(value: unknown, state: State): unknown {
   if (!Array.isArray(value)) return copyObject(value, state);
   if (value.length <= mostItems) return copyList(value, state);
   return stop(state, 'too-many-items', { count: value.length, limit: mostItems, about: '' });
+}
+
+/** A lone surrogate has no UTF-8 and no canonical form (RFC 8785, section 3.2.2.2). */
+function copyText(text: string, state: State): string {
+  if (/\p{Surrogate}/u.test(text)) {
+    state.faults.push(recordHere('malformed-text', state, { text: shortText(text) }));
+  }
+  return text;
 }
 
 function recordHere(code: FaultCode, { path }: State, values: FaultValues): FaultRecord {

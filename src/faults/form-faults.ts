@@ -48,6 +48,10 @@ export const formFaultWordings = {
     title: 'A text is too short or too long',
     detail: '{key} must have {wanted} characters, but has {count}.',
   },
+  'malformed-text': {
+    title: 'A text is malformed',
+    detail: '{key} is {text}, which holds half of a surrogate pair. Write the whole character.',
+  },
   'too-many-keys': {
     title: 'An object has too many keys',
     detail:

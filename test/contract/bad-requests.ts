@@ -224,6 +224,23 @@ bad(
   ['missing-key', '/member/ends/far', /far is missing/],
 );
 bad(
+  'a name with half a character',
+  'modes',
+  modes({ member: cable({ segments: [{ length: 4, massPerLength: 5, name: 'saddle \ud83d' }] }) }),
+  400,
+  ['malformed-text', '/member/segments/0/name', /half of a surrogate pair/],
+);
+bad(
+  'an unknown kind, which leaves open what a rotation is',
+  'responses',
+  responses({
+    member: { ...cable(), kind: 'axle' },
+    initial: { displacement: { type: 'half-sine', amplitude: '0.1 rad' } },
+  }),
+  400,
+  ['not-one-of', '/member/kind', /"axle"/],
+);
+bad(
   'an unknown end',
   'modes',
   modes({ member: cable({ ends: { near: fixed, far: { type: 'pinned' } } }) }),
