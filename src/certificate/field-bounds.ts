@@ -45,7 +45,12 @@ export function certify(
   const factors = tailFactors(quantity, tail.energies, member.damping, tail.kept, gaugeTime, released);
   const complete = verdict === 'complete';
   if (!factors.exists && !complete) {
-    return { bound: null, kind: factors.kind, rms: rmsOf(quantity, member, series, factors, factor), verdict: 'irregular-data' };
+    return {
+      bound: null,
+      kind: factors.kind,
+      rms: rmsOf(quantity, member, series, factors, factor),
+      verdict: 'irregular-data',
+    };
   }
   const nextLambda = tail.energies.nextOmega * tail.energies.nextOmega;
   const noise = roundingFactors(quantity, member, series, gaugeTime);

@@ -47,7 +47,10 @@ export function checkIndependently(
   const highest = kept[kept.length - 1].mode.shape.lambda;
   const grid = new QuadratureGrid(member, highest);
   const perMode = grid.size;
-  const instants = pick(times, Math.max(1, Math.min(INSTANTS, Math.floor(WORK / (2 * perMode * kept.length)))));
+  const instants = pick(
+    times,
+    Math.max(1, Math.min(INSTANTS, Math.floor(WORK / (2 * perMode * kept.length)))),
+  );
   const balanced = perMode * kept.length <= 2 * WORK;
   const stride = Math.max(1, Math.ceil((perMode * kept.length) / WORK));
 
@@ -80,7 +83,10 @@ export function checkIndependently(
     grid.sample(mode.shape, u, p);
     residual = Math.max(residual, shapeResidual(member, grid, kept[n], u, p));
     for (const other of before) {
-      orthogonality = Math.max(orthogonality, Math.abs(product(member, grid, kept[n], u, other.shape, other.u)));
+      orthogonality = Math.max(
+        orthogonality,
+        Math.abs(product(member, grid, kept[n], u, other.shape, other.u)),
+      );
     }
     before.push({ shape: kept[n], u });
     if (before.length > 2) {
@@ -89,7 +95,10 @@ export function checkIndependently(
     }
     if (due) {
       for (const other of held) {
-        orthogonality = Math.max(orthogonality, Math.abs(product(member, grid, kept[n], u, other.shape, other.u)));
+        orthogonality = Math.max(
+          orthogonality,
+          Math.abs(product(member, grid, kept[n], u, other.shape, other.u)),
+        );
       }
       held.push({ shape: kept[n], u });
     }
@@ -138,7 +147,9 @@ function fieldEnergy(
     const s = member.foundation[i];
     for (let x = from; x < to; x++) {
       energy +=
-        0.5 * grid.weights[x] * (rho * speed[x] * speed[x] + soft * flux[x] * flux[x] + s * place[x] * place[x]);
+        0.5 *
+        grid.weights[x] *
+        (rho * speed[x] * speed[x] + soft * flux[x] * flux[x] + s * place[x] * place[x]);
     }
   }
   for (let j = 0; j <= member.segmentCount; j++) {
@@ -206,7 +217,16 @@ function shapeResidual(
       const load = (member.spring[i + 1] - lambda * member.mass[i + 1]) * uFar;
       const own = (member.spring[i + 1] + lambda * member.mass[i + 1]) * Math.abs(uFar);
       // the two sides were marched apart: a quiet node is held against the mode's own flux
-      worst = Math.max(worst, ratio(next - pFar - load, Math.abs(next) + Math.abs(pFar) + own + Math.sqrt(density > 0 ? density * member.stiffness[i] : 0) * Math.abs(uFar)));
+      worst = Math.max(
+        worst,
+        ratio(
+          next - pFar - load,
+          Math.abs(next) +
+            Math.abs(pFar) +
+            own +
+            Math.sqrt(density > 0 ? density * member.stiffness[i] : 0) * Math.abs(uFar),
+        ),
+      );
     }
   }
   return worst;

@@ -80,7 +80,8 @@ export function memberTail(
     // no station is farther than half the largest gap, a good quarter of the segment over `between`
     const gap = (0.56 * 1.12 * member.length[i]) / (between + 1);
     const nearG = (Math.sqrt(peakG) + Math.sqrt(gap / k)) ** 2;
-    const nearH = (Math.sqrt(peakH) + Math.sqrt(gap * rho) + Math.sqrt((gap * s * s) / rho) / nextLambda) ** 2;
+    const nearH =
+      (Math.sqrt(peakH) + Math.sqrt(gap * rho) + Math.sqrt((gap * s * s) / rho) / nextLambda) ** 2;
     flexibility = Math.max(flexibility, Math.min(nearG, joinedG));
     fluxInertia = Math.max(fluxInertia, Math.min(nearH, joinedH));
   }

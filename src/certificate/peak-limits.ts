@@ -34,7 +34,8 @@ export function peakLimit(quantity: Quantity, basis: PeakBasis): number | null {
   const { whole } = series.tail;
   const all = tailFactors(quantity, whole.energies, damping, 0, gaugeTime, released);
   const ceiling = all.exists
-    ? product(all.onFlexibility, Math.sqrt(basis.flexibility)) + product(all.onFluxInertia, Math.sqrt(whole.member.fluxInertia))
+    ? product(all.onFlexibility, Math.sqrt(basis.flexibility)) +
+      product(all.onFluxInertia, Math.sqrt(whole.member.fluxInertia))
     : Number.POSITIVE_INFINITY;
 
   const { tail } = series;
@@ -52,7 +53,8 @@ export function peakLimit(quantity: Quantity, basis: PeakBasis): number | null {
       const { omega } = mode.frequency;
       if (omega === 0) continue;
       const shape = flux ? peakFlux(member, mode.shape) : peakDisplacement(member, mode.shape);
-      modal += shape * modalAmplitude(quantity, omega, Math.sqrt(2 * start.energy), member, mode.frequency.order);
+      modal +=
+        shape * modalAmplitude(quantity, omega, Math.sqrt(2 * start.energy), member, mode.frequency.order);
     }
   }
   const elastic = Math.min(ceiling, modal);

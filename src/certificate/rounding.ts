@@ -37,8 +37,7 @@ export class Rounding {
   add(mode: Mode, start: ModalStart): void {
     const { omega, lower, upper } = mode.frequency;
     const half = 0.5 * (upper - lower);
-    const shapeError =
-      omega * this.travelTime * (half / (omega || 1) + EPS) + 8 * EPS * (this.segments + 8);
+    const shapeError = omega * this.travelTime * (half / (omega || 1) + EPS) + 8 * EPS * (this.segments + 8);
     const coefficient = shapeError * (start.positionScale + start.velocityScale);
     const phase = Math.min(2, this.span * (half + 4 * EPS * omega) + 16 * EPS);
     const amplitude = Math.sqrt(2 * start.energy);
@@ -56,9 +55,6 @@ export class Rounding {
 
   /** √Σ(ω^level ε)² with the summation error, √J s^{−level}. */
   level(level: 0 | 1 | 2 | 3): number {
-    return (
-      Math.sqrt(this.squares[level]) +
-      (64 + this.count / 64) * EPS * Math.sqrt(this.magnitudes[level])
-    );
+    return Math.sqrt(this.squares[level]) + (64 + this.count / 64) * EPS * Math.sqrt(this.magnitudes[level]);
   }
 }

@@ -100,7 +100,8 @@ export class TailFlexibility {
     if (lambda === 0) return;
     // relative error of the shape: phase error over the member plus rounding of the march
     const error =
-      omega * this.travelTime * ((0.5 * (upper - lower)) / (omega || 1) + EPS) + 4 * EPS * member.segmentCount;
+      omega * this.travelTime * ((0.5 * (upper - lower)) / (omega || 1) + EPS) +
+      4 * EPS * member.segmentCount;
     for (let m = 0; m < displacement.length; m++) {
       const q = first + m;
       const i = stations.segment[q];

@@ -5,5 +5,7 @@ const ORDER: readonly Verdict[] = ['complete', 'converged', 'mode-limit', 'round
 
 /** The worst of several verdicts. */
 export function worstVerdict(verdicts: readonly Verdict[]): Verdict {
-  return verdicts.reduce((worst, verdict) => (ORDER.indexOf(verdict) > ORDER.indexOf(worst) ? verdict : worst));
+  return verdicts.reduce((worst, verdict) =>
+    ORDER.indexOf(verdict) > ORDER.indexOf(worst) ? verdict : worst,
+  );
 }

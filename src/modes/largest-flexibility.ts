@@ -37,7 +37,10 @@ export function largestFlexibility(member: WaveMember): number {
         bestValue = value;
       }
     }
-    largest = Math.max(largest, crest(at, (Math.max(0, best - 1) * l) / LOOKS, (Math.min(LOOKS, best + 1) * l) / LOOKS));
+    largest = Math.max(
+      largest,
+      crest(at, (Math.max(0, best - 1) * l) / LOOKS, (Math.min(LOOKS, best + 1) * l) / LOOKS),
+    );
   }
   return largest;
 }

@@ -114,7 +114,11 @@ function* joints(member: WaveMember, first: number): Generator<number> {
 }
 
 /** A shape made orthogonal to others (twice, for full orthogonality), and how much of it was left. */
-function free(member: WaveMember, shape: ModeShape, others: readonly Mode[]): { shape: ModeShape; part: number } {
+function free(
+  member: WaveMember,
+  shape: ModeShape,
+  others: readonly Mode[],
+): { shape: ModeShape; part: number } {
   const ends = Float64Array.from(shape.ends);
   const result = { ...shape, ends };
   let part = 1;
@@ -133,6 +137,7 @@ function free(member: WaveMember, shape: ModeShape, others: readonly Mode[]): { 
 
 /** φ(0) > 0, or φ′(0⁺) > 0 at a fixed near end. */
 function signed(member: WaveMember, shape: ModeShape): ModeShape {
-  if (shape.ends[member.nearFixed ? 1 : 0] < 0) for (let i = 0; i < shape.ends.length; i++) shape.ends[i] *= -1;
+  if (shape.ends[member.nearFixed ? 1 : 0] < 0)
+    for (let i = 0; i < shape.ends.length; i++) shape.ends[i] *= -1;
   return shape;
 }

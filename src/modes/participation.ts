@@ -65,7 +65,8 @@ function uniformFactor(member: WaveMember, shape: ModeShape): number {
     } else {
       // mean of C and of ξ S over the stretch: sinc and (1 − cos a)/a²
       const half = sinc(square / 4);
-      const mean = ends[ENDS * i] * sinc(square) + ((ends[ENDS * i + 1] * l) / member.stiffness[i]) * 0.5 * half * half;
+      const mean =
+        ends[ENDS * i] * sinc(square) + ((ends[ENDS * i + 1] * l) / member.stiffness[i]) * 0.5 * half * half;
       factor += member.inertia[i] * l * mean;
     }
   }

@@ -45,7 +45,8 @@ export class ShapeSampler {
   sample(shape: ModeShape, displacement: Float64Array, flux: Float64Array): void {
     for (const run of this.runs) {
       const square = waveNumberSquare(this.member, run.segment, shape.lambda);
-      if (run.grid !== null && square * this.member.length[run.segment] ** 2 > 1e-8) this.sampleEven(shape, run, run.grid, square, displacement, flux);
+      if (run.grid !== null && square * this.member.length[run.segment] ** 2 > 1e-8)
+        this.sampleEven(shape, run, run.grid, square, displacement, flux);
       else this.sampleEach(shape, run, displacement, flux);
     }
   }

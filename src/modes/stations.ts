@@ -48,5 +48,7 @@ export function placeStation(member: WaveMember, x: number): { at: number; i: nu
 /** Equally spaced positions, both ends included; the last one is the far end itself. */
 export function evenPositions(member: WaveMember, count: number): Float64Array {
   const length = member.position[member.segmentCount];
-  return Float64Array.from({ length: count }, (_, q) => (q === count - 1 ? length : (length * q) / (count - 1)));
+  return Float64Array.from({ length: count }, (_, q) =>
+    q === count - 1 ? length : (length * q) / (count - 1),
+  );
 }

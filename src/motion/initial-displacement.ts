@@ -3,7 +3,13 @@ import type { WaveMember } from '../members/wave-member.ts';
 import type { MasslessStretch } from '../modes/massless-stretches.ts';
 import type { StaticResponse } from '../modes/static-response.ts';
 import type { PullShape, Shape } from '../spec/types.ts';
-import { nodeValuesOf, pieceValue, type Piece, type PiecewiseField, type WaveTerm } from './piecewise-field.ts';
+import {
+  nodeValuesOf,
+  pieceValue,
+  type Piece,
+  type PiecewiseField,
+  type WaveTerm,
+} from './piecewise-field.ts';
 import { listOf, place, shapePieces, shapePointer, type GivenShape } from './shape-pieces.ts';
 
 /** A static force held until t = 0, whose shape of rest is part of the initial displacement. */
@@ -115,7 +121,10 @@ export function settle(
     if (near !== 0) pulls.push({ segment: stretch.first, distance: 0, force: near });
     if (far !== 0) pulls.push({ segment: stretch.last, distance: member.length[stretch.last], force: far });
   }
-  return { pieces: settlePieces(member, given.pieces, nodeValuesOf(given.pieces, member.segmentCount), stretches), pulls };
+  return {
+    pieces: settlePieces(member, given.pieces, nodeValuesOf(given.pieces, member.segmentCount), stretches),
+    pulls,
+  };
 }
 
 /** Pieces with the massless stretches replaced by the static interpolation of the given node values. */
@@ -131,7 +140,8 @@ export function settlePieces(
     const near = value[stretch.first];
     const far = value[stretch.last + 1];
     const nodes = stretch.nearShape.map((shape, j) => near * shape + far * stretch.farShape[j]);
-    for (let i = stretch.first; i <= stretch.last; i++) pieces.push(interpolate(member, stretch, nodes, i).piece);
+    for (let i = stretch.first; i <= stretch.last; i++)
+      pieces.push(interpolate(member, stretch, nodes, i).piece);
   }
   pieces.sort((a, b) => a.segment - b.segment || a.start - b.start);
   return pieces;

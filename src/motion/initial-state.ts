@@ -47,7 +47,8 @@ export function readInitialState(member: WaveMember, initial: InitialMotion): In
     const startSettled = inEnergySpace(member, start, stretches);
     const jerk = acceleration(member, speed, []);
     if (startSettled !== null && jerk !== null) {
-      second = 0.5 * piecesStrainForm(member, startSettled) + 0.5 * massForm(member, jerk.pieces, jerk.masses);
+      second =
+        0.5 * piecesStrainForm(member, startSettled) + 0.5 * massForm(member, jerk.pieces, jerk.masses);
     }
   }
   const still = velocity.masses.every((value) => value === 0) && kinetic === 0;

@@ -32,7 +32,9 @@ export function readVelocity(
   const shapes = listOf(initial.velocity);
   const given = shapes.filter((shape): shape is GivenShape => shape.type !== 'pull');
   const pulls = shapes.flatMap((shape, index) =>
-    shape.type === 'pull' ? [readVelocityPull(member, shape, response, shapePointer('velocity', initial.velocity, index))] : [],
+    shape.type === 'pull'
+      ? [readVelocityPull(member, shape, response, shapePointer('velocity', initial.velocity, index))]
+      : [],
   );
   const impulses = initial.impulses ?? [];
   requireInertia(member, impulses, initial.massVelocities ?? []);
@@ -164,7 +166,11 @@ function requireInertia(
     const reason = offInertia(member, impulse);
     if (reason === null) return;
     records.push(
-      faultRecord('impulse-off-inertia', `${pointer}/width`, { at: impulse.at, width: impulse.width, reason }),
+      faultRecord('impulse-off-inertia', `${pointer}/width`, {
+        at: impulse.at,
+        width: impulse.width,
+        reason,
+      }),
     );
   });
   if (records.length > 0) throw new Fault(records);

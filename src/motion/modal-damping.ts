@@ -7,7 +7,11 @@ import type { ModalDamping } from '../members/wave-member.ts';
  * @param omega ω_n, rad/s
  */
 export function dampingRate(damping: ModalDamping, order: number, omega: number): number {
-  return damping.massCoefficient + 2 * ratioOf(damping, order) * omega + damping.stiffnessCoefficient * omega * omega;
+  return (
+    damping.massCoefficient +
+    2 * ratioOf(damping, order) * omega +
+    damping.stiffnessCoefficient * omega * omega
+  );
 }
 
 /** ζ_n of the given ratios; the last one serves all higher modes; 0 where none is given. */

@@ -3,7 +3,14 @@ import { ENDS, evaluateShape, waveNumberSquare, type ModeShape } from '../modes/
 import { nodeDisplacement } from '../modes/shape-figures.ts';
 import type { InitialDisplacement } from './initial-displacement.ts';
 import type { InitialVelocity } from './initial-velocity.ts';
-import { derivativeOf, derivedPowers, isZero, nodeValuesOf, type Piece, type WaveTerm } from './piecewise-field.ts';
+import {
+  derivativeOf,
+  derivedPowers,
+  isZero,
+  nodeValuesOf,
+  type Piece,
+  type WaveTerm,
+} from './piecewise-field.ts';
 import { pieceTimesWave } from './wave-integrals.ts';
 
 /** Initial state of one modal coordinate, for unit modal mass. */
@@ -50,7 +57,10 @@ export class ModalProjection {
     this.velocity = velocity;
     const nonzero = displacement.pieces.filter((piece) => !isZero(piece));
     this.given = nonzero.map(termOf);
-    this.slopes = nonzero.map(slopeOf).filter((piece) => !isZero(piece)).map(termOf);
+    this.slopes = nonzero
+      .map(slopeOf)
+      .filter((piece) => !isZero(piece))
+      .map(termOf);
     this.speeds = velocity.pieces
       .filter((piece) => !isZero(piece) && member.inertia[piece.segment] > 0)
       .map(termOf);

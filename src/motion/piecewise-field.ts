@@ -113,7 +113,9 @@ export function pieceSlope(piece: Piece, xi: number): Sampled {
 
 /** Whether the piece is 0 everywhere. */
 export function isZero(piece: Piece): boolean {
-  return piece.powers.every((c) => c === 0) && piece.waves.every((term) => term.value === 0 && term.slope === 0);
+  return (
+    piece.powers.every((c) => c === 0) && piece.waves.every((term) => term.value === 0 && term.slope === 0)
+  );
 }
 
 /** Phase or decay of the quickest term over the cell; decides how finely it is integrated. */

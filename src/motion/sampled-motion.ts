@@ -45,7 +45,9 @@ export function sampleMotion(
     for (let firstColumn = 0; firstColumn < columns; firstColumn += TILE) {
       const tile = stationSlice(stations, firstColumn, firstColumn + TILE);
       const look = firstRow === 0 ? visit : null;
-      const sums = sumTile(member, modes, tile, clock, kinds, (mode, u, p) => look?.(mode, u, p, firstColumn));
+      const sums = sumTile(member, modes, tile, clock, kinds, (mode, u, p) =>
+        look?.(mode, u, p, firstColumn),
+      );
       for (const kind of kinds) {
         const from = sums.get(kind) as Float64Array;
         const into = fields.get(kind) as Float64Array;

@@ -25,7 +25,7 @@ export function shapePieces(
   const length = member.position[member.segmentCount];
   const breaks = [...extraBreaks, ...shapes.flatMap((shape) => breakpoints(shape, length))]
     .filter((x) => x > 0 && x < length)
-    .sort((a, b) => a - b);
+    .toSorted((a, b) => a - b);
   const pieces: Piece[] = [];
   let next = 0;
   for (let i = 0; i < member.segmentCount; i++) {
@@ -56,8 +56,7 @@ function pieceOf(
   const h = to - from;
   const powers: number[] = [...(extra.powers ?? [])];
   const waves: WaveTerm[] = [...(extra.waves ?? [])];
-  const add = (terms: readonly number[]): void =>
-    terms.forEach((c, j) => (powers[j] = (powers[j] ?? 0) + c));
+  const add = (terms: readonly number[]): void => terms.forEach((c, j) => (powers[j] = (powers[j] ?? 0) + c));
   for (const shape of shapes) {
     const middle = 0.5 * (from + to);
     switch (shape.type) {

@@ -12,7 +12,16 @@ import { evenPositions, placeStations, type Stations } from '../modes/stations.t
 import { stressFactors } from '../modes/stress-factors.ts';
 import { readInitialState, type InitialState } from '../motion/initial-state.ts';
 import { sampleMotion, type FieldKind } from '../motion/sampled-motion.ts';
-import type { Field, Fields, Notice, Peak, Peaks, ResponsesAnswer, ResponsesRequest, Times } from '../spec/types.ts';
+import type {
+  Field,
+  Fields,
+  Notice,
+  Peak,
+  Peaks,
+  ResponsesAnswer,
+  ResponsesRequest,
+  Times,
+} from '../spec/types.ts';
 import { HELD_NUMBERS } from './limits.ts';
 import { unitOf } from './quantity-units.ts';
 
@@ -49,8 +58,14 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
 
   const tails = new TailFlexibility(member, stations);
   const kinds = quantities.map((quantity): FieldKind => (quantity === 'stress' ? 'force' : quantity));
-  const sums = sampleMotion(member, series.modes, stations, times, [...new Set(kinds)], gaugeTime, (mode, u, p, first) =>
-    tails.addSampled(mode, u, p, first),
+  const sums = sampleMotion(
+    member,
+    series.modes,
+    stations,
+    times,
+    [...new Set(kinds)],
+    gaugeTime,
+    (mode, u, p, first) => tails.addSampled(mode, u, p, first),
   );
 
   const rigid = rigidPart(series);
@@ -67,7 +82,17 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
   const peaks: Peaks = {};
   quantities.forEach((quantity, index) => {
     const factor = quantity === 'stress' ? stress : null;
-    const certificate = certify(quantity, member, series, tails, gaugeTime, state.released, rigid, span, factor);
+    const certificate = certify(
+      quantity,
+      member,
+      series,
+      tails,
+      gaugeTime,
+      state.released,
+      rigid,
+      span,
+      factor,
+    );
     const values = rowsOf(sums.get(kinds[index]) as Float64Array, stations.position.length, factor);
     fields[quantity] = {
       unit: unitOf(quantity, member.kind),
@@ -131,7 +156,10 @@ function rigidPart(series: KeptSeries): RigidPart {
   const first = series.modes[0];
   if (first.mode.frequency.omega > 0) return { position: 0, velocity: 0 };
   const height = first.mode.shape.ends[0];
-  return { position: Math.abs(first.start.position) * height, velocity: Math.abs(first.start.velocity) * height };
+  return {
+    position: Math.abs(first.start.position) * height,
+    velocity: Math.abs(first.start.velocity) * height,
+  };
 }
 
 /** Rows of a table, one a time, times a factor a column. */
@@ -144,7 +172,12 @@ function rowsOf(data: Float64Array, columns: number, factor: Float64Array | null
   return rows;
 }
 
-function sampledPeak(values: Float64Array[], stations: Stations, times: Float64Array, upper: number | null): Peak {
+function sampledPeak(
+  values: Float64Array[],
+  stations: Stations,
+  times: Float64Array,
+  upper: number | null,
+): Peak {
   let value = 0;
   let at = stations.position[0];
   let time = times[0];
@@ -171,7 +204,8 @@ function noticesOf(request: ResponsesRequest, state: InitialState, series: KeptS
   if (series.modes[0].mode.frequency.omega === 0 && series.modes[0].start.velocity !== 0) {
     notices.push({
       code: 'rigid-body-motion',
-      detail: 'Nothing holds the member, so it drifts as a whole; the ceiling and the tolerance refer to its elastic motion.',
+      detail:
+        'Nothing holds the member, so it drifts as a whole; the ceiling and the tolerance refer to its elastic motion.',
     });
   }
   if ('modes' in request.series && series.modes.length < request.series.modes) {

@@ -39,6 +39,7 @@ export class NaturalFrequencies {
   readonly travelTime: number;
   private readonly phase: PhaseSweep;
   private readonly firstGuess: number;
+  private readonly longestSlope: number;
   private order = 0;
   private previous = 0;
   private beforePrevious = 0;
@@ -53,6 +54,7 @@ export class NaturalFrequencies {
     this.phase = new PhaseSweep(member);
     this.total = modeCount(member);
     this.travelTime = travelTime(member);
+    this.longestSlope = this.travelTime > 0 ? 1.5 * this.travelTime : Number.POSITIVE_INFINITY;
     this.firstGuess = firstFrequencyEstimate(member);
     if (canDriftFreely(member)) this.order = -1;
   }
@@ -124,7 +126,7 @@ export class NaturalFrequencies {
       return high > 4 * low ? Math.sqrt(low * high) : low + 0.5 * (high - low);
     };
 
-    let joint = this.joint;
+    let joint = -1;
     let omega = this.guess(n);
     if (!(omega > low && omega < high)) {
       const share = lowResidual / (lowResidual - highResidual);
@@ -137,7 +139,8 @@ export class NaturalFrequencies {
     let shrinkFrom = Number.POSITIVE_INFINITY;
     let patience = PATIENCE;
     for (let step = 0; step < SWEEP_LIMIT; step++) {
-      phase.sweep(omega, n, joint);
+      if (joint < 0) joint = phase.survey(omega, n, this.longestSlope);
+      else phase.sweep(omega, n, joint);
       learn(omega);
       const { residual, slope } = phase;
       let target = omega - residual / slope;
@@ -163,7 +166,6 @@ export class NaturalFrequencies {
       lastResidual = residual;
       lastSlope = slope;
       lastJoint = joint;
-      joint = phase.liveliest;
       if (high - low < 0.5 * shrinkFrom) {
         shrinkFrom = high - low;
         patience = PATIENCE;
@@ -172,6 +174,7 @@ export class NaturalFrequencies {
       }
       if (patience <= 0 || !(target > low && target < high)) {
         if (adjacent(low, high)) return this.closed(n, low, high);
+        joint = -1;
         target = this.fallback(low, lowResidual, high, highResidual, patience <= 0, between);
         if (patience <= 0) patience = PATIENCE;
       }
@@ -195,7 +198,12 @@ export class NaturalFrequencies {
   }
 
   /** Counts both sides of an interval around ω; null when the counts do not confirm it. */
-  private enclose(n: number, omega: number, joint: number, learn: (omega: number) => void): NaturalFrequency | null {
+  private enclose(
+    n: number,
+    omega: number,
+    joint: number,
+    learn: (omega: number) => void,
+  ): NaturalFrequency | null {
     const { phase } = this;
     const half = Math.max(4 * Number.EPSILON * omega + phase.noise / phase.slope, Number.MIN_VALUE);
     const lower = omega - half;
