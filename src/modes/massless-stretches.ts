@@ -40,7 +40,7 @@ function stretchOf(member: WaveMember, first: number, last: number): MasslessStr
   const n = member.segmentCount;
   const nearFollows = first === 0 && !member.nearFixed && member.mass[0] === 0;
   const farFollows = last === n - 1 && !member.farFixed && member.mass[n] === 0;
-  const slice = <T extends Float64Array>(array: T, extra: number): Float64Array =>
+  const slice = (array: Float64Array, extra: number): Float64Array =>
     Float64Array.from(array.subarray(first, last + 1 + extra));
   const spring = slice(member.spring, 1);
   if (!nearFollows) spring[0] = 0;

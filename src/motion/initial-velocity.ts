@@ -2,7 +2,7 @@ import { Fault, fault, faultRecord, type FaultRecord } from '../faults/fault.ts'
 import type { WaveMember } from '../members/wave-member.ts';
 import { placeStation } from '../modes/stations.ts';
 import type { StaticResponse } from '../modes/static-response.ts';
-import type { Impulse, InitialMotion, MassVelocity, PullByAmplitude, Shape } from '../spec/types.ts';
+import type { Impulse, InitialMotion, MassVelocity, Shape } from '../spec/types.ts';
 import { pieceValue, type PiecewiseField, type WaveTerm } from './piecewise-field.ts';
 import { listOf, place, shapePieces, shapePointer, type GivenShape } from './shape-pieces.ts';
 
@@ -89,7 +89,7 @@ function readVelocityPull(
   const { segment, distance } = place(member, shape.at);
   const flexibility = response.flexibility(segment, distance);
   if (flexibility === 0) throw fault('pull-at-fixed-end', `${pointer}/at`, { at: shape.at });
-  return { at: shape.at, segment, distance, force: (shape as PullByAmplitude).amplitude / flexibility };
+  return { at: shape.at, segment, distance, force: shape.amplitude / flexibility };
 }
 
 /** The static shape of a pull on one cell: a line, or a hyperbolic sine on a foundation. */

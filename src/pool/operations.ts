@@ -1,6 +1,7 @@
 import { readRequest } from '../contract/read-request.ts';
 import { solveModes } from '../solutions/modes.ts';
-import type { ModesRequest } from '../spec/types.ts';
+import { solveResponses } from '../solutions/responses.ts';
+import type { ModesRequest, ResponsesRequest } from '../spec/types.ts';
 import type { SolverOperations } from './task.ts';
 
 /** Every operation that a worker solves: how its body is read, how its request is solved. */
@@ -8,5 +9,9 @@ export const operations: SolverOperations = {
   modes: {
     read: (body) => readRequest('modes', body),
     solve: (request) => solveModes(request as ModesRequest),
+  },
+  responses: {
+    read: (body) => readRequest('responses', body),
+    solve: (request) => solveResponses(request as ResponsesRequest),
   },
 };

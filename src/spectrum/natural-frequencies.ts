@@ -152,7 +152,9 @@ export class NaturalFrequencies {
           certainty *= Math.min(1, lastResidual * lastResidual);
         }
       }
-      const settled = certainty < 1e-17 || Math.abs(target - omega) < 2 * Number.EPSILON * omega;
+      // what is left after the interpolation, rad, must vanish beside the width to be counted
+      const width = 4 * Number.EPSILON * omega * slope + phase.noise;
+      const settled = 30 * certainty < width || Math.abs(target - omega) < 2 * Number.EPSILON * omega;
       if (settled && target > low * (1 - 1e-12) && target < high * (1 + 1e-12)) {
         const proven = this.enclose(n, target, joint, learn);
         if (proven) {
@@ -233,7 +235,7 @@ export class NaturalFrequencies {
 }
 
 function adjacent(low: number, high: number): boolean {
-  return high - low <= Number.EPSILON * high;
+  return high < Number.POSITIVE_INFINITY && high - low <= Number.EPSILON * high;
 }
 
 /** x at which the cubic through two points of known slope, read as x(y), passes y = 0. */
