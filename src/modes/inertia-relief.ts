@@ -66,6 +66,53 @@ export class InertiaRelief {
     );
   }
 
+  /** G⊥(x,z) = ∫ p_x p_z/k of the two balanced states, m/N. Cost O(segments). */
+  mutualFlexibility(i: number, distance: number, j: number, other: number): number {
+    const swap = j < i || (j === i && other < distance);
+    const [a, x, b, z] = swap ? [j, other, i, distance] : [i, distance, j, other];
+    const first = this.flexibilityParts(a, x);
+    const second = this.flexibilityParts(b, z);
+    // between the places the fluxes have opposite signs: −∫ μ(1 − μ)/k
+    let between = 0;
+    for (let m = a; m <= b; m++) {
+      const from = m === a ? x : 0;
+      const to = m === b ? z : this.member.length[m];
+      between += this.crossIntegral(m, from, to);
+    }
+    return first.before + second.after - between;
+  }
+
+  /** Flux at (i, distance) under a unit force at (j, other) balanced by inertia: μ before it, μ − 1 after it. */
+  influence(i: number, distance: number, j: number, other: number): number {
+    const density = this.member.inertia[i] / this.mass;
+    const before = i < j || (i === j && distance <= other);
+    return before
+      ? this.before[i] + density * distance
+      : -(this.after[i] + density * (this.member.length[i] - distance));
+  }
+
+  private flexibilityParts(i: number, distance: number): { before: number; after: number } {
+    const { member } = this;
+    const rest = member.length[i] - distance;
+    const density = member.inertia[i] / this.mass;
+    const soft = 1 / member.stiffness[i];
+    return {
+      before: this.near[i] + squareIntegral(this.before[i], this.before[i] + density * distance, distance * soft),
+      after: this.far[i] + squareIntegral(this.after[i], this.after[i] + density * rest, rest * soft),
+    };
+  }
+
+  /** ∫ μ (1 − μ)/k over a stretch of segment i. */
+  private crossIntegral(i: number, from: number, to: number): number {
+    const { member } = this;
+    const density = member.inertia[i] / this.mass;
+    const a = this.before[i] + density * from;
+    const b = this.before[i] + density * to;
+    const c = this.after[i] + density * (member.length[i] - from);
+    const d = this.after[i] + density * (member.length[i] - to);
+    return (((2 * a * c + a * d + b * c + 2 * b * d) / 6) * (to - from)) / member.stiffness[i];
+  }
+
   /** H⊥(x), kg (shaft: kg·m²). */
   fluxInertia(i: number, distance: number): number {
     const density = this.member.inertia[i] / this.mass;
