@@ -84,6 +84,7 @@ export function roundingFactors(
   const gauge = 2 / gaugeTime;
   switch (quantity) {
     case 'displacement':
+    case 'relativeDisplacement':
       return rounding.level(0);
     case 'velocity':
       return gaugeTime > 0 ? gauge * rounding.level(0) : rounding.level(1);
@@ -99,6 +100,7 @@ function rigidRounding(quantity: Quantity, rigid: RigidPart, span: number, gauge
   const path = rigid.position + rigid.velocity * span;
   switch (quantity) {
     case 'displacement':
+    case 'relativeDisplacement':
       return 64 * EPS * path;
     case 'velocity':
       return 64 * EPS * (rigid.velocity + (gaugeTime > 0 ? (2 * path) / gaugeTime : 0));

@@ -60,6 +60,7 @@ export function peakLimit(quantity: Quantity, basis: PeakBasis): number | null {
   const elastic = Math.min(ceiling, modal);
   const drift = {
     displacement: rigid.position + rigid.velocity * span,
+    relativeDisplacement: rigid.position + rigid.velocity * span,
     velocity: rigid.velocity,
     acceleration: rigid.velocity * damping.massCoefficient,
     force: 0,
@@ -82,6 +83,7 @@ function modalAmplitude(
   const rate = damping.massCoefficient / omega + 2 * largestRatioAbove(damping, order - 1) + beta * omega;
   switch (quantity) {
     case 'displacement':
+    case 'relativeDisplacement':
       return amplitude / omega;
     case 'velocity':
       return amplitude;

@@ -60,6 +60,7 @@ export function tailFactors(
   const gauge = 2 / gaugeTime;
   switch (quantity) {
     case 'displacement':
+    case 'relativeDisplacement':
       return { kind: 'pointwise', onFlexibility: e0, onFluxInertia: 0, exists: true, rmsNumerator: Infinity };
     case 'velocity':
       return choose(e1, gaugeTime > 0 ? gauge * e0 : Infinity, 'flexibility', e0);

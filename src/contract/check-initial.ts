@@ -1,6 +1,7 @@
 import { faultRecord, type FaultRecord } from '../faults/fault.ts';
 import type { InitialMotion, Member, Shape, Shapes } from '../spec/types.ts';
 import { checkPosition, type Span } from './check-position.ts';
+import { checkShape } from './check-shape.ts';
 
 /**
  * What in an initial motion does not fit together or not to the member.
@@ -13,21 +14,12 @@ export function checkInitial(
   span: Span | null,
   ends: Member['ends'] | null,
 ): FaultRecord[] {
-  const faults: FaultRecord[] = [];
-  for (const field of ['displacement', 'velocity'] as const) {
-    for (const { shape, pointer } of placed(initial[field], `/initial/${field}`)) {
-      faults.push(...checkShape(shape, pointer, span));
-      if (shape.type !== 'pull') continue;
-      if (field === 'velocity' && 'force' in shape) {
-        faults.push(faultRecord('force-in-velocity', `${pointer}/force`, { at: shape.at }));
-      }
-      if (span === null || ends === null) continue;
-      const end = shape.at === 0 ? 'near' : shape.at === span.length ? 'far' : null;
-      if (end !== null && ends[end].type === 'fixed') {
-        faults.push(faultRecord('pull-at-fixed-end', `${pointer}/at`, { at: shape.at }));
-      }
-    }
-  }
+  const faults = (['displacement', 'velocity'] as const).flatMap((field) => {
+    const forceFault = field === 'velocity' ? 'force-in-velocity' : null;
+    return placed(initial[field], `/initial/${field}`).flatMap(({ shape, pointer }) =>
+      checkShape(shape, pointer, span, ends, forceFault),
+    );
+  });
   return [...faults, ...checkMassVelocities(initial, span), ...checkImpulses(initial, span)];
 }
 
@@ -36,57 +28,6 @@ function placed(shapes: Shapes | undefined, pointer: string): { shape: Shape; po
   if (shapes === undefined) return [];
   if (!Array.isArray(shapes)) return [{ shape: shapes, pointer }];
   return shapes.map((shape, index) => ({ shape, pointer: `${pointer}/${index}` }));
-}
-
-function checkShape(shape: Shape, pointer: string, span: Span | null): FaultRecord[] {
-  switch (shape.type) {
-    case 'pull':
-      return checkPosition(shape.at, `${pointer}/at`, span);
-    case 'half-sine':
-      return [];
-    case 'polyline':
-      return checkPolyline(shape.positions, shape.values, pointer, span);
-    case 'polynomial':
-    case 'uniform':
-      return checkStretch(shape.from, shape.to, pointer, span);
-  }
-}
-
-function checkPolyline(
-  positions: readonly number[],
-  values: readonly number[],
-  pointer: string,
-  span: Span | null,
-): FaultRecord[] {
-  const faults: FaultRecord[] = [];
-  if (positions.length !== values.length) {
-    const counts = { positions: positions.length, values: values.length };
-    faults.push(faultRecord('lengths-differ', `${pointer}/values`, counts));
-  }
-  const stray = positions.findIndex((at, index) => index > 0 && !(at > positions[index - 1]));
-  if (stray > 0) {
-    const place = { at: positions[stray], before: positions[stray - 1] };
-    faults.push(faultRecord('positions-not-ascending', `${pointer}/positions/${stray}`, place));
-  }
-  const outside = positions.findIndex((at) => span !== null && at > span.limit);
-  if (outside >= 0)
-    faults.push(...checkPosition(positions[outside], `${pointer}/positions/${outside}`, span));
-  return faults;
-}
-
-function checkStretch(
-  from: number,
-  to: number | undefined,
-  pointer: string,
-  span: Span | null,
-): FaultRecord[] {
-  const end = to ?? span?.length;
-  const outside = [
-    ...checkPosition(from, `${pointer}/from`, span),
-    ...(to === undefined ? [] : checkPosition(to, `${pointer}/to`, span)),
-  ];
-  if (outside.length > 0 || end === undefined || from < end) return outside;
-  return [faultRecord('stretch-empty', `${pointer}/${to === undefined ? 'from' : 'to'}`, { from, to: end })];
 }
 
 function checkMassVelocities({ massVelocities = [] }: InitialMotion, span: Span | null): FaultRecord[] {

@@ -17,3 +17,9 @@ export function checkPosition(at: number, pointer: string, span: Span | null): F
   if (span === null || at <= span.limit) return [];
   return [faultRecord('position-outside', pointer, { at, length: span.length })];
 }
+
+/** The end at which a position stands, null inside the member. */
+export function endAt(at: number, span: Span | null): 'near' | 'far' | null {
+  if (at === 0) return 'near';
+  return at === span?.length ? 'far' : null;
+}

@@ -60,7 +60,8 @@ function checkTimes(times: Times): FaultRecord[] {
   return [faultRecord('times-not-ascending', `/sample/times/${stray}`, values)];
 }
 
-function checkSize(counts: Readonly<Record<string, number>>, pointer: string): FaultRecord[] {
+/** A fault where the product of these counts is more than one answer holds. */
+export function checkSize(counts: Readonly<Record<string, number>>, pointer: string): FaultRecord[] {
   const count = Object.values(counts).reduce((product, factor) => product * factor, 1);
   if (count <= mostValues) return [];
   const what = Object.entries(counts)

@@ -1,21 +1,31 @@
 import { faultRecord, type FaultRecord } from '../faults/fault.ts';
-import { memberFaults } from '../members/member-faults.ts';
+import { memberFaults, type Regime } from '../members/member-faults.ts';
 import { memberLength } from '../members/node-layout.ts';
-import type { Member, ModesRequest, MovingEnds, ResponsesRequest } from '../spec/types.ts';
+import type {
+  Load,
+  Member,
+  ModesRequest,
+  MovingEnds,
+  ResponsesRequest,
+  Sample,
+  TransferFunctionsRequest,
+} from '../spec/types.ts';
+import { checkEndMotions } from './check-end-motions.ts';
 import { checkInitial } from './check-initial.ts';
+import { checkLoad } from './check-loads.ts';
 import { type Span, spanOf } from './check-position.ts';
-import { checkSample, checkShapesRequest } from './check-sample.ts';
-import { isWithin } from './pointer.ts';
-import { snapAttachments, snapInitialMotion, snapList } from './snap-positions.ts';
-
-/** Whether a part of the request, named by its pointer, is there and has no fault of form. */
-type IsSound = (part: string) => boolean;
+import { checkSample, checkShapesRequest, checkSize } from './check-sample.ts';
+import { checkFrequencies, checkInput, checkOutputs } from './check-transfer-functions.ts';
+import { soundness, type IsSound } from './soundness.ts';
+import { snapAttachments, snapInitialMotion, snapList, snapLoad } from './snap-positions.ts';
 
 /** What is known of the member where only some of its parts are sound. */
 interface KnownMember {
   readonly faults: FaultRecord[];
   readonly span: Span | null;
   readonly ends: Member['ends'] | null;
+  /** The member itself where it has no fault. */
+  readonly member: Member | null;
   /** Moves a position to the node that it means; the identity where the nodes are not known. */
   readonly snap: (at: number) => number;
 }
@@ -55,9 +65,63 @@ export function checkResponsesRequest(
     snapInitialMotion(request.initial, snap);
     faults.push(...checkInitial(request.initial, span, ends));
   }
+  if (isSound('/loads')) request.loads.forEach((load) => snapLoad(load, snap));
+  faults.push(...checkLoads(request, isSound, span, ends));
   if (isSound('/sample')) {
     snapList(request.sample.positions, snap);
     faults.push(...checkSample(request.sample, span));
+  }
+  return faults;
+}
+
+/** Faults of the loads that have no fault of form, and of a request in which nothing moves. */
+function checkLoads(
+  { initial, loads, member, sample }: ResponsesRequest,
+  isSound: IsSound,
+  span: Span | null,
+  ends: Member['ends'] | null,
+): FaultRecord[] {
+  const known = isSound('/initial') && span !== null ? { motion: initial, span } : null;
+  const list: readonly (Load | null)[] = !Array.isArray(loads)
+    ? []
+    : loads.map((load, index) => (isSound(`/loads/${index}`) ? load : null));
+  if (isSound('/initial') && isSound('/loads') && loads.length + Object.keys(initial).length === 0) {
+    return [faultRecord('nothing-moves', '')];
+  }
+  const latest = isSound('/sample') ? latestTime(sample) : null;
+  const single = list.flatMap((load, index) =>
+    load === null ? [] : checkLoad(load, `/loads/${index}`, span, ends, latest),
+  );
+  return [...single, ...checkEndMotions(list, ends, known, member.kind === 'shaft' ? 'rad' : 'm')];
+}
+
+function latestTime({ times, gaugeTime }: Sample): number {
+  return (Array.isArray(times) ? times[times.length - 1] : times.end) + gaugeTime;
+}
+
+/** The same for a request of transfer functions. */
+export function checkTransferFunctionsRequest(
+  request: TransferFunctionsRequest,
+  formFaults: readonly FaultRecord[],
+): FaultRecord[] {
+  const isSound = soundness(formFaults);
+  if (!isSound('')) return [];
+  const { faults, span, ends, member, snap } = knownMember(request.member, isSound, 'steady');
+  const { input, outputs, frequencies } = request;
+  if (isSound('/input')) {
+    if (input.type === 'point-force') input.at = snap(input.at);
+    faults.push(...checkInput(input, span, ends));
+  }
+  if (isSound('/outputs')) {
+    for (const output of outputs) output.at = snap(output.at);
+    faults.push(...checkOutputs(outputs, span, member));
+  }
+  if (isSound('/frequencies')) {
+    faults.push(...checkFrequencies(frequencies, isSound('/input') ? input : null));
+    if (isSound('/outputs')) {
+      const count = Array.isArray(frequencies) ? frequencies.length : frequencies.count;
+      faults.push(...checkSize({ outputs: outputs.length, frequencies: count }, '/frequencies'));
+    }
   }
   return faults;
 }
@@ -74,15 +138,8 @@ function checkParticipation(moving: MovingEnds, { near, far }: Member['ends']): 
   return [faultRecord('moving-end-not-fixed', '/participation/ends', { end, ends: moving })];
 }
 
-function soundness(formFaults: readonly FaultRecord[]): IsSound {
-  const faulty = formFaults.map(({ pointer }) => pointer);
-  if (faulty.includes('')) return () => false;
-  return (part) =>
-    part === '' || faulty.every((pointer) => !isWithin(pointer, part) && !isWithin(part, pointer));
-}
-
-function knownMember(member: Member, isSound: IsSound): KnownMember {
-  const faults = isSound('/member') ? memberFaults(member) : [];
+function knownMember(member: Member, isSound: IsSound, regime: Regime = 'time'): KnownMember {
+  const faults = isSound('/member') ? memberFaults(member, regime) : [];
   const solvable = isSound('/member') && faults.length === 0;
   // Without a kind the schema has not looked at the other keys.
   const kindKnown = isSound('/member/kind');
@@ -90,6 +147,7 @@ function knownMember(member: Member, isSound: IsSound): KnownMember {
     faults,
     span: kindKnown && isSound('/member/segments') ? spanOf(memberLength(member)) : null,
     ends: kindKnown && isSound('/member/ends') ? member.ends : null,
+    member: solvable ? member : null,
     snap: solvable ? snapAttachments(member) : (at) => at,
   };
 }

@@ -1,6 +1,5 @@
-import type { Member } from '../spec/types.ts';
 import { readUnit } from './unit-grammar.ts';
-import type { Exponents, Unit } from './unit-table.ts';
+import { dimensionless, type Exponents, type Unit } from './unit-table.ts';
 
 /** A physical dimension that a quantity of a request can have. */
 export interface Dimension {
@@ -17,7 +16,7 @@ function dimension(name: string, unit: string, ...examples: string[]): Dimension
   return { name, unit, examples, exponents: readUnit(unit)!.exponents };
 }
 
-/** The dimensions that `x-dimension` in the schemas can name. */
+/** The dimensions that have a name; a unit in words is the first that fits. */
 export const dimensions = {
   length: dimension('a length', 'm', 'mm', 'cm', 'km', '[in_i]', '[ft_i]'),
   area: dimension('an area', 'm2', 'mm2', 'cm2', '[in_i]2', '[ft_i]2'),
@@ -46,37 +45,21 @@ export const dimensions = {
   torsionalDashpotConstant: dimension('a torsional dashpot constant', 'N.m.s/rad', 'kN.m.s/rad'),
   torsionalFoundation: dimension('a torsional stiffness per length', 'N.m/rad/m', 'N', 'kN'),
   torsionalDrag: dimension('a torsional resistance per length', 'N.s', 'N.m.s/rad/m', 'kN.s'),
+  acceleration: dimension('an acceleration', 'm/s2', 'mm/s2', 'cm/s2', '[g]'),
+  angularAcceleration: dimension('an angular acceleration', 'rad/s2', 'deg/s2', 'mrad/s2'),
+  forcePerLength: dimension('a force per length', 'N/m', 'kN/m', 'N/mm', '[lbf_av]/[ft_i]'),
+  torquePerLength: dimension('a torque per length', 'N.m/m', 'kN.m/m', 'N', 'kN'),
+  impedance: dimension('an impedance', 'N.s/m', 'kN.s/m', 'MN.s/m', 'kg/s'),
+  torsionalImpedance: dimension('a torsional impedance', 'N.m.s/rad', 'kN.m.s/rad', 'N.m.s'),
 } as const;
 
-/** Dimensions that depend on what the member carries: [any other member, shaft]. */
-const byKind = {
-  displacement: [dimensions.length, dimensions.angle],
-  velocity: [dimensions.speed, dimensions.angularVelocity],
-  flux: [dimensions.force, dimensions.torque],
-  impulse: [dimensions.impulse, dimensions.angularImpulse],
-} as const;
-
-/** Everything that `x-dimension` may say; `shape` is that of the field which the shape describes. */
-export type DimensionName = keyof typeof dimensions | keyof typeof byKind | 'shape';
-
-export function isDimensionName(name: string): name is DimensionName {
-  return name === 'shape' || Object.hasOwn(byKind, name) || Object.hasOwn(dimensions, name);
-}
-
-/**
- * The dimension of a quantity at its place in a request.
- *
- * @param name what `x-dimension` says
- * @param kind kind of the member; a kind that is not known counts as a cable
- * @param pointer where the quantity stands; shapes under /initial/velocity describe a velocity
- */
-export function dimensionAt(name: DimensionName, kind: Member['kind'], pointer: string): Dimension {
-  if (name === 'shape') {
-    return dimensionAt(pointer.startsWith('/initial/velocity') ? 'velocity' : 'displacement', kind, pointer);
-  }
-  if (Object.hasOwn(byKind, name)) return byKind[name as keyof typeof byKind][kind === 'shaft' ? 1 : 0];
-  return dimensions[name as keyof typeof dimensions];
-}
+/** A number that takes no unit. */
+export const plainNumber: Dimension = {
+  name: 'a plain number',
+  unit: '1',
+  examples: [],
+  exponents: dimensionless,
+};
 
 /** A dimension divided by a power of length: the coefficient of x^power in a polynomial. */
 export function perLength(of: Dimension, power: number): Dimension {

@@ -5,16 +5,14 @@ import {
   type KeywordCxt,
   Name,
 } from 'ajv/dist/2020.js';
-import type { Member } from '../spec/types.ts';
 import { chooseAlternative, describeAlternatives } from './choose-alternative.ts';
-import { type DimensionName, dimensionAt, isDimensionName, perLength } from './dimensions.ts';
+import { type DimensionContext, dimensionAt, type DimensionName, isDimensionName } from './dimension-at.ts';
+import { perLength } from './dimensions.ts';
 import { type QuantityProblem, readQuantity } from './read-quantity.ts';
 import type { Schema } from './schema-files.ts';
 
 /** What the keywords know of the request that is being validated; `this` of the validators. */
-export interface ReadingContext {
-  /** Kind of the member, which decides on the dimensions of forces and motions. */
-  readonly kind: Member['kind'];
+export interface ReadingContext extends DimensionContext {
   /** Texts that were replaced by their SI values, by pointer. */
   readonly originals: Map<string, string>;
 }
@@ -53,7 +51,7 @@ export const dimensionKeyword: FuncKeywordDefinition = {
     const validate = function (this: ReadingContext, data: unknown, place: Place): boolean {
       validate.errors = undefined;
       if (typeof data !== 'string') return true;
-      const read = readQuantity(data, dimensionAt(name, this.kind, place.instancePath));
+      const read = readQuantity(data, dimensionAt(name, this, place.instancePath));
       if (typeof read !== 'number') {
         validate.errors = [{ keyword: 'x-dimension', params: { problem: read }, parentSchema }];
         return false;
@@ -97,7 +95,7 @@ export const quantitiesKeyword: FuncKeywordDefinition = {
       for (let index = 0; index < list.length && errors.length < mostErrors; index++) {
         let value = list[index];
         if (typeof value === 'string' && name !== null) {
-          const wanted = dimensionAt(name, this.kind, place.instancePath);
+          const wanted = dimensionAt(name, this, place.instancePath);
           const read = readQuantity(value, perIndex ? perLength(wanted, index) : wanted);
           if (typeof read !== 'number') {
             report(index, { problem: read });

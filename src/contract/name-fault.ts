@@ -1,7 +1,8 @@
 import type { ErrorObject } from 'ajv/dist/2020.js';
 import { faultRecord, type FaultRecord } from '../faults/fault.ts';
 import { noForm } from './choose-alternative.ts';
-import { dimensionAt, isDimensionName } from './dimensions.ts';
+import { dimensionAt, isDimensionName } from './dimension-at.ts';
+import { plainNumber } from './dimensions.ts';
 import { type FormsByTitle, formsOf } from './forms.ts';
 import type { QuantityParams, RangeLimit, ReadingContext } from './keywords.ts';
 import { child, placeName } from './pointer.ts';
@@ -130,9 +131,10 @@ function sameKeys(left: readonly string[], right: readonly string[]): boolean {
 }
 
 /** What a number of this schema is measured in; empty for plain numbers. */
-function unitAt(pointer: string, schema: Schema, { kind }: NamingContext): string {
+function unitAt(pointer: string, schema: Schema, context: NamingContext): string {
   const name = schema['x-dimension'] ?? '';
-  return isDimensionName(name) ? dimensionAt(name, kind, pointer).unit : '';
+  const dimension = isDimensionName(name) ? dimensionAt(name, context, pointer) : plainNumber;
+  return dimension === plainNumber ? '' : dimension.unit;
 }
 
 const typeNames: Readonly<Record<string, string>> = {
@@ -145,7 +147,7 @@ const typeNames: Readonly<Record<string, string>> = {
 };
 
 function wrongType(pointer: string, schema: Schema, data: unknown, context: NamingContext): FaultRecord {
-  const types = [schema.type ?? []].flat();
+  const types = schema['x-dimension'] === undefined ? [schema.type ?? []].flat() : ['number'];
   const unit = unitAt(pointer, schema, context);
   const wanted =
     unit === ''

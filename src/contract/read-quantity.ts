@@ -1,7 +1,7 @@
 import type { FaultCode } from '../faults/catalogue.ts';
 import type { FaultValues } from '../faults/fault.ts';
 import { decimalScaler, isDecimal } from './decimal.ts';
-import { type Dimension, describeUnit, measures } from './dimensions.ts';
+import { type Dimension, describeUnit, measures, plainNumber } from './dimensions.ts';
 import { shortText } from './show-value.ts';
 import { readUnit, suggestUnit } from './unit-grammar.ts';
 import type { Unit } from './unit-table.ts';
@@ -33,6 +33,7 @@ const quantityPattern = /^([+-]?[\d.]+(?:[eE][+-]?\d+)?) *((?:1\/|[^\s\d,]).*)?$
  * @returns the value, correctly rounded, or what is wrong; cost about a microsecond
  */
 export function readQuantity(text: string, wanted: Dimension): number | QuantityProblem {
+  if (wanted === plainNumber) return problem('number-wanted', text, wanted, {});
   const match = text.length > 120 ? null : quantityPattern.exec(text);
   if (match === null || !isDecimal(match[1])) {
     return problem('quantity-unreadable', text, wanted, { example: `"12.5 ${wanted.unit}"` });

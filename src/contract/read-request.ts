@@ -1,15 +1,19 @@
 import type { ErrorObject } from 'ajv/dist/2020.js';
 import { Fault, faultRecord, type FaultRecord } from '../faults/fault.ts';
-import type { Member, ModesRequest, ResponsesRequest } from '../spec/types.ts';
-import { checkModesRequest, checkResponsesRequest } from './check-sense.ts';
+import type { Member, ModesRequest, ResponsesRequest, TransferFunctionsRequest } from '../spec/types.ts';
+import { checkModesRequest, checkResponsesRequest, checkTransferFunctionsRequest } from './check-sense.ts';
 import { copyDocument } from './copy-document.ts';
+import { isHistoryKnown } from './dimension-at.ts';
 import { formsWithin } from './forms.ts';
 import { nameFault, type NamingContext } from './name-fault.ts';
 import { isWithin } from './pointer.ts';
 import { validatorOf } from './validators.ts';
 
 /** The operations that take a request. */
-export type Operation = 'modes' | 'responses';
+export type Operation = 'modes' | 'responses' | 'transfer-functions';
+
+/** The canonical request of any operation. */
+export type AnyRequest = ModesRequest | ResponsesRequest | TransferFunctionsRequest;
 
 /** Most faults that are listed at once. */
 const mostFaults = 50;
@@ -17,6 +21,10 @@ const mostFaults = 50;
 const readers = {
   modes: readerOf<ModesRequest>('ModesRequest', checkModesRequest),
   responses: readerOf<ResponsesRequest>('ResponsesRequest', checkResponsesRequest),
+  'transfer-functions': readerOf<TransferFunctionsRequest>(
+    'TransferFunctionsRequest',
+    checkTransferFunctionsRequest,
+  ),
 };
 
 /**
@@ -31,8 +39,9 @@ const readers = {
  */
 export function readRequest(operation: 'modes', body: unknown): ModesRequest;
 export function readRequest(operation: 'responses', body: unknown): ResponsesRequest;
-export function readRequest(operation: Operation, body: unknown): ModesRequest | ResponsesRequest;
-export function readRequest(operation: Operation, body: unknown): ModesRequest | ResponsesRequest {
+export function readRequest(operation: 'transfer-functions', body: unknown): TransferFunctionsRequest;
+export function readRequest(operation: Operation, body: unknown): AnyRequest;
+export function readRequest(operation: Operation, body: unknown): AnyRequest {
   return readers[operation](body);
 }
 
@@ -46,7 +55,7 @@ function readerOf<Request>(
     const { copy, faults, fatal } = copyDocument(body);
     if (fatal) throw capped(faults);
     const kind = kindOf(copy);
-    const context: NamingContext = { kind: kind ?? 'cable', originals: new Map(), forms };
+    const context: NamingContext = { kind: kind ?? 'cable', document: copy, originals: new Map(), forms };
     const form = validate.call(context, copy)
       ? faults
       : firstAtEachPlace([...faults, ...named(validate.errors ?? [], context, kind !== null)]);
@@ -70,7 +79,9 @@ function named(errors: readonly ErrorObject[], context: NamingContext, kindKnown
     .filter((record) => record !== null)
     .filter(
       // Without a kind the dimensions outside the member are not known.
-      ({ code, pointer }) => kindKnown || code !== 'unit-dimension' || isWithin(pointer, '/member'),
+      ({ code, pointer }) =>
+        code !== 'unit-dimension' ||
+        ((kindKnown || isWithin(pointer, '/member')) && isHistoryKnown(context.document, pointer)),
     );
 }
 

@@ -1,5 +1,5 @@
 import { layOutNodes, snapToNode } from '../members/node-layout.ts';
-import type { InitialMotion, Member, Positions, Shape } from '../spec/types.ts';
+import type { InitialMotion, Load, Member, Positions, Shape } from '../spec/types.ts';
 
 /**
  * Positions of a request that lie within a few rounding units of a node mean the node; they are
@@ -30,6 +30,12 @@ export function snapInitialMotion(initial: InitialMotion, snap: (at: number) => 
   for (const entry of [...(initial.massVelocities ?? []), ...(initial.impulses ?? [])]) {
     entry.at = snap(entry.at);
   }
+}
+
+/** Moves every position in a load in place. */
+export function snapLoad(load: Load, snap: (at: number) => number): void {
+  if (load.type === 'point-force') load.at = snap(load.at);
+  if (load.type === 'distributed-force') snapShape(load.profile, snap);
 }
 
 function snapShape(shape: Shape, snap: (at: number) => number): void {

@@ -76,6 +76,11 @@ export const formFaultWordings = {
     title: 'A unit has the wrong dimension',
     detail: '{text} is {found}, but {wanted} is wanted here: in {allowed} or their like.',
   },
+  'number-wanted': {
+    title: 'A plain number is wanted',
+    detail:
+      '{text} is a text, but a plain number is wanted here: it multiplies a profile that has the unit. Write the number without quotes and unit.',
+  },
   'number-magnitude': {
     title: 'A number is beyond the magnitudes that can be computed with',
     detail:

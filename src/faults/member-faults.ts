@@ -53,6 +53,6 @@ export const memberFaultWordings = {
   'loss-factor-in-time': {
     title: 'A loss factor describes a steady state only',
     detail:
-      'A loss factor has no motion in time and no damping ratio of its own. Give "damping": {"type": "ratio", "value": {half}}, which dissipates the same at resonance.',
+      'A loss factor has no motion in time and no damping ratio of its own. Give "damping": {"type": "ratio", "value": {half}}, which dissipates the same at resonance, or ask for transfer functions.',
   },
 } as const satisfies Record<string, { title: string; detail: string }>;

@@ -1,5 +1,6 @@
 import type { FaultCode } from '../faults/catalogue.ts';
 import { formFaultWordings } from '../faults/form-faults.ts';
+import { loadFaultWordings } from '../faults/load-faults.ts';
 import { memberFaultWordings } from '../faults/member-faults.ts';
 import { senseFaultWordings } from '../faults/sense-faults.ts';
 
@@ -18,6 +19,7 @@ export const statusOfFault: Readonly<Partial<Record<FaultCode, number>>> = {
   ...every(formFaultWordings, 400),
   ...every(senseFaultWordings, 422),
   ...every(memberFaultWordings, 422),
+  ...every(loadFaultWordings, 422),
   // Stands last in a list that was cut short, and leaves the status to the faults before it.
   'more-faults': 422,
 

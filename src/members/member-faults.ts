@@ -13,12 +13,16 @@ const largest = 1e90;
 /** A segment shorter than this part of the member has no place of its own in double precision. */
 const shortest = 1e-12;
 
+/** How the member moves: in time, free or loaded, or in a steady state at one frequency after another. */
+export type Regime = 'time' | 'steady';
+
 /**
  * Everything about a valid member that cannot be solved as posed, with pointers into the request.
  *
+ * @param regime a loss factor describes steady motion only
  * @returns the faults, none where `readMember` succeeds; cost O(segments + attachments)
  */
-export function memberFaults(member: Member): FaultRecord[] {
+export function memberFaults(member: Member, regime: Regime = 'time'): FaultRecord[] {
   const wrongSections = sectionFaults(member);
   const misplaced = [...lengthFaults(member), ...attachmentFaults(member)];
   if (wrongSections.length > 0) return [...wrongSections, ...misplaced];
@@ -27,7 +31,7 @@ export function memberFaults(member: Member): FaultRecord[] {
     ...magnitudeFaults(segments),
     ...misplaced,
     ...inertiaFaults(member, segments),
-    ...dampingFaults(member, segments),
+    ...dampingFaults(member, segments, regime),
   ];
 }
 
@@ -86,7 +90,11 @@ function inertiaFaults(member: Member, segments: readonly SegmentProperties[]): 
   return movable ? faults : [...faults, faultRecord('no-inertia', '/member')];
 }
 
-function dampingFaults(member: Member, segments: readonly SegmentProperties[]): FaultRecord[] {
+function dampingFaults(
+  member: Member,
+  segments: readonly SegmentProperties[],
+  regime: Regime,
+): FaultRecord[] {
   const faults: FaultRecord[] = [];
   const { near, far } = member.ends;
   const dashpots = [
@@ -109,7 +117,9 @@ function dampingFaults(member: Member, segments: readonly SegmentProperties[]): 
 
   const { damping } = member;
   if (damping?.type === 'loss-factor') {
-    faults.push(faultRecord('loss-factor-in-time', '/member/damping', { half: damping.value / 2 }));
+    if (regime === 'time') {
+      faults.push(faultRecord('loss-factor-in-time', '/member/damping', { half: damping.value / 2 }));
+    }
   } else if (damping !== undefined && (dashpots.length > 0 || coupling)) {
     faults.push(faultRecord('damping-mixed', '/member/damping', { type: damping.type }));
   }

@@ -27,7 +27,7 @@ export function modalDrag(segments: readonly SegmentProperties[], nodeMass: bool
  * The damping of every mode: what the member states, plus modal drag, which is damping
  * proportional to mass.
  *
- * @param member no loss factor, no dashpots
+ * @param member no dashpots; a loss factor is no part of modal damping
  * @param dragCoefficient α of modal drag in 1/s
  */
 export function modalDamping(member: Member, dragCoefficient: number): ModalDamping {
@@ -48,4 +48,9 @@ export function modalDamping(member: Member, dragCoefficient: number): ModalDamp
     case undefined:
       return none;
   }
+}
+
+/** Loss factor η of a member: its stiffness, foundation and springs are (1 + iη) times their values; 0 without one. */
+export function lossFactor({ damping }: Member): number {
+  return damping?.type === 'loss-factor' ? damping.value : 0;
 }

@@ -1,7 +1,7 @@
 import { Fault } from '../faults/fault.ts';
 import type { Member } from '../spec/types.ts';
 import { attachmentLumps, endLump } from './lump.ts';
-import { hasNodeMass, memberFaults } from './member-faults.ts';
+import { hasNodeMass, memberFaults, type Regime } from './member-faults.ts';
 import { memberSegments } from './member-segments.ts';
 import { modalDamping, modalDrag } from './modal-damping.ts';
 import { layOutNodes } from './node-layout.ts';
@@ -14,11 +14,12 @@ import type { WaveMember } from './wave-member.ts';
  * Lumps at one node add up. A segment that is split keeps its properties on both sides.
  *
  * @param member canonical member (SI, defaults filled in)
+ * @param regime in a steady state a loss factor is taken too; it is not part of the result, see `lossFactor`
  * @returns see `WaveMember`; cost O(n log n) in segments and attachments
  * @throws Fault with every record of `memberFaults`
  */
-export function readMember(member: Member): WaveMember {
-  const faults = memberFaults(member);
+export function readMember(member: Member, regime: Regime = 'time'): WaveMember {
+  const faults = memberFaults(member, regime);
   if (faults.length > 0) throw new Fault(faults);
 
   const segments = memberSegments(member);

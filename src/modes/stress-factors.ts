@@ -21,7 +21,8 @@ export function stressFactors(member: WaveMember, stations: Stations): Float64Ar
   });
 }
 
-const SECTION_REMEDY: Record<WaveMember['kind'], string> = {
+/** How a segment of each kind of member gets a section. */
+export const SECTION_REMEDY: Record<WaveMember['kind'], string> = {
   cable: 'a cable has no stress here: its transverse force is no normal force; ask for "force"',
   bar: 'give its "area"',
   shaft: 'describe it by "shearModulus", "density" and "outerDiameter"',

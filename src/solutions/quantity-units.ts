@@ -7,6 +7,7 @@ const LINEAR: Record<Quantity, string> = {
   acceleration: 'm/s2',
   force: 'N',
   stress: 'Pa',
+  relativeDisplacement: 'm',
 };
 
 const ANGULAR: Record<Quantity, string> = {
@@ -15,6 +16,7 @@ const ANGULAR: Record<Quantity, string> = {
   acceleration: 'rad/s2',
   force: 'N.m',
   stress: 'Pa',
+  relativeDisplacement: 'rad',
 };
 
 /** SI unit of a quantity in UCUM code; a shaft turns, all others move. */

@@ -18,6 +18,7 @@ import type {
   Notice,
   Peak,
   Peaks,
+  Quantity,
   ResponsesAnswer,
   ResponsesRequest,
   Times,
@@ -57,7 +58,7 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
   );
 
   const tails = new TailFlexibility(member, stations);
-  const kinds = quantities.map((quantity): FieldKind => (quantity === 'stress' ? 'force' : quantity));
+  const kinds = quantities.map(sampledKind);
   const sums = sampleMotion(
     member,
     series.modes,
@@ -149,6 +150,12 @@ function sampledTimes(times: Times): Float64Array {
   return Float64Array.from({ length: count }, (_, j) =>
     j === count - 1 ? end : start + ((end - start) * j) / (count - 1),
   );
+}
+
+/** The field whose values give a quantity: stress is force times a factor. */
+function sampledKind(quantity: Quantity): FieldKind {
+  if (quantity === 'stress') return 'force';
+  return quantity === 'relativeDisplacement' ? 'displacement' : quantity;
 }
 
 /** |a₀|φ₀ and |v₀|φ₀ of the rigid-body mode; 0 where there is none. */

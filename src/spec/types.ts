@@ -19,6 +19,19 @@ export type Damping = RatioDamping | RatiosDamping | RayleighDamping | LossFacto
  */
 export type End = FixedEnd | FreeEnd | AttachedEnd;
 /**
+ * At which frequencies: a number of them between two, or a list.
+ */
+export type Frequencies = FrequencyGrid | number[];
+/**
+ * A function of time, zero before its start, continuous from the right.
+ */
+export type History =
+  HarmonicHistory | StepHistory | RampHistory | HalfSinePulse | RectangularPulse | SampledHistory;
+/**
+ * What acts on the member after time 0.
+ */
+export type Load = PointForce | DistributedForce | BodyForce | EndMotion | MovingForce;
+/**
  * A one-dimensional member of length L, x measured from its near end (0) to its far end (L).
  */
 export type Member = Cable | Bar | Shaft | ShearColumn | Wave;
@@ -26,6 +39,10 @@ export type Member = Cable | Bar | Shaft | ShearColumn | Wave;
  * Which modes are wanted: a number of them, or all up to a frequency.
  */
 export type ModesSeries = ModesByCount | ModesByFrequency;
+/**
+ * What the motion of a support is given as: displacement or acceleration.
+ */
+export type MotionQuantity = 'displacement' | 'acceleration';
 /**
  * Which ends move together by one unit: near, far or both; uniform: the whole member, where no end is fixed.
  */
@@ -39,9 +56,10 @@ export type Positions = PositionGrid | number[];
  */
 export type PullShape = PullByAmplitude | PullByForce;
 /**
- * A field that can be sampled: displacement (m; rad for a shaft), velocity (m/s; rad/s), acceleration (m/s²; rad/s²), force (N; N·m) or stress (Pa, where the section is known).
+ * A field that can be sampled: displacement (m; rad for a shaft), velocity (m/s; rad/s), acceleration (m/s²; rad/s²), force (N; N·m), stress (Pa, where the section is known) or relativeDisplacement (m; rad): the displacement less the static shape of the end motion, u − y(t)·r(x); without end motion the displacement itself.
  */
-export type Quantity = 'displacement' | 'velocity' | 'acceleration' | 'force' | 'stress';
+export type Quantity =
+  'displacement' | 'velocity' | 'acceleration' | 'force' | 'stress' | 'relativeDisplacement';
 /**
  * How many modes are used: a fixed number, or the smallest number that meets a tolerance.
  */
@@ -71,9 +89,21 @@ export type Shapes = Shape | Shape[];
  */
 export type ShearColumnSegment = ShearStiffnessSegment | ShearModulusSegment | ShearWaveSpeedSegment;
 /**
+ * The end that moves, or both by the same amount; a fixed end is a support.
+ */
+export type SupportEnds = 'near' | 'far' | 'both';
+/**
  * When: equally spaced times, or a list of times.
  */
 export type Times = TimeGrid | number[];
+/**
+ * What drives the member, with amplitude 1 and the time factor e^(+iΩt).
+ */
+export type TransferInput = PointForceInput | EndMotionInput | OutcropMotionInput;
+/**
+ * What a transfer function gives: displacement, velocity, acceleration, force or stress (where the section is known).
+ */
+export type TransferQuantity = 'displacement' | 'velocity' | 'acceleration' | 'force' | 'stress';
 /**
  * converged: the bound meets the tolerance; mode-limit: it does not with the modes allowed; irregular-data: no pointwise bound exists for these data; rounding-limit: rounding hides the rest; complete: the member has no more modes.
  */
@@ -211,6 +241,19 @@ export interface BarStiffnessSegment {
   name?: string;
 }
 /**
+ * An acceleration that acts on all inertia, node masses included: a force of ρ times it per length.
+ */
+export interface BodyForce {
+  /**
+   * A force on all inertia.
+   */
+  type: 'body-force';
+  /**
+   * The acceleration, m/s² (rad/s² for a shaft).
+   */
+  history: History;
+}
+/**
  * A taut cable or string: u is the transverse displacement (m), the force is the transverse force tension·u′ (N), not the tension.
  */
 export interface Cable {
@@ -257,6 +300,68 @@ export interface CableSegment {
    * A name of your own for this part; it changes no result.
    */
   name?: string;
+}
+/**
+ * Complex numbers, one per frequency.
+ */
+export interface ComplexNumbers {
+  /**
+   * Real parts.
+   */
+  real: Numbers;
+  /**
+   * Imaginary parts.
+   */
+  imaginary: Numbers;
+}
+/**
+ * A force per length: the profile times the history.
+ */
+export interface DistributedForce {
+  /**
+   * A force per length.
+   */
+  type: 'distributed-force';
+  /**
+   * Force per length for a history of 1, N/m (N, that is N·m per m, for a shaft). A pull gives it by its amplitude.
+   */
+  profile: Shape;
+  /**
+   * A plain factor of the profile.
+   */
+  history: History;
+}
+/**
+ * A prescribed motion of a fixed end: the support moves. Each end is moved by at most one load.
+ */
+export interface EndMotion {
+  /**
+   * The support of an end moves.
+   */
+  type: 'end-motion';
+  end: SupportEnds;
+  /**
+   * What the history gives: the displacement of the support, which must not jump, or its acceleration, from rest at displacement 0.
+   */
+  quantity: MotionQuantity;
+  /**
+   * The displacement, m (rad for a shaft), or the acceleration, m/s² (rad/s²).
+   */
+  history: History;
+}
+/**
+ * A motion of amplitude 1 of a fixed end: 1 m or 1 m/s² (rad, rad/s² for a shaft).
+ */
+export interface EndMotionInput {
+  /**
+   * The support of an end moves.
+   */
+  type: 'end-motion';
+  end: SupportEnds;
+  /**
+   * displacement: 1 m (rad for a shaft); acceleration: 1 m/s² (rad/s²), not at 0 Hz.
+   */
+  quantity: MotionQuantity;
 }
 /**
  * Both ends of the member.
@@ -364,6 +469,7 @@ export interface Fields {
   acceleration?: Field;
   force?: Field;
   stress?: Field;
+  relativeDisplacement?: Field;
 }
 /**
  * An end that does not move.
@@ -384,6 +490,48 @@ export interface FreeEnd {
   type: 'free';
 }
 /**
+ * Frequencies including from and to.
+ */
+export interface FrequencyGrid {
+  /**
+   * First frequency, Hz; above 0 with logarithmic spacing.
+   */
+  from: number;
+  /**
+   * Last frequency, Hz, above the first.
+   */
+  to: number;
+  /**
+   * Number of frequencies, 2 to 100,000.
+   */
+  count: number;
+  /**
+   * linear: equal differences; logarithmic: equal ratios. Default linear.
+   */
+  spacing: 'linear' | 'logarithmic';
+}
+/**
+ * amplitude·sin(π·(t − start)/duration) over the duration; zero after it.
+ */
+export interface HalfSinePulse {
+  /**
+   * Half a wave of a sine.
+   */
+  type: 'half-sine-pulse';
+  /**
+   * Amplitude in the unit of its load: N (N·m for a shaft) under a point force, a plain factor of the profile under a distributed force, m/s² (rad/s²) under a body force, and under an end motion m (rad) for a displacement, m/s² (rad/s²) for an acceleration.
+   */
+  amplitude: number;
+  /**
+   * Time at which the history starts, s; it is zero before. Default 0.
+   */
+  start: number;
+  /**
+   * Duration of the pulse, s, above 0.
+   */
+  duration: number;
+}
+/**
  * amplitude·sin(n π x/L).
  */
 export interface HalfSineShape {
@@ -392,13 +540,38 @@ export interface HalfSineShape {
    */
   type: 'half-sine';
   /**
-   * Amplitude: m (rad for a shaft) in a displacement, m/s (rad/s) in a velocity.
+   * Amplitude: m (rad for a shaft) in a displacement, m/s (rad/s) in a velocity, N/m (N·m/m) in a distributed force.
    */
   amplitude: number;
   /**
    * Number n of half waves over the member, 1 to 20,000. Default 1.
    */
   halfWaves: number;
+}
+/**
+ * amplitude·cos(2π·frequency·(t − start) + phase) from the start on.
+ */
+export interface HarmonicHistory {
+  /**
+   * A cosine.
+   */
+  type: 'harmonic';
+  /**
+   * Amplitude in the unit of its load: N (N·m for a shaft) under a point force, a plain factor of the profile under a distributed force, m/s² (rad/s²) under a body force, and under an end motion m (rad) for a displacement, m/s² (rad/s²) for an acceleration.
+   */
+  amplitude: number;
+  /**
+   * Frequency, Hz, above 0.
+   */
+  frequency: number;
+  /**
+   * Phase, rad; −π/2 ("-90 deg") makes it a sine, which begins at 0. Default 0.
+   */
+  phase: number;
+  /**
+   * Time at which the history starts, s; it is zero before. Default 0.
+   */
+  start: number;
 }
 /**
  * A blow at time 0: on the mass at its position, or spread evenly over a width of member.
@@ -422,7 +595,7 @@ export interface Impulse {
  */
 export interface InitialMotion {
   /**
-   * Initial displacement: a shape, or a list of shapes that add up. It must be continuous and zero at fixed ends.
+   * Initial displacement: a shape, or a list of shapes that add up. It must be continuous, zero at fixed ends, and at an end with a prescribed displacement equal to its first value.
    */
   displacement?: Shapes;
   /**
@@ -665,6 +838,27 @@ export interface ModesRequest {
   participation?: ParticipationRequest;
 }
 /**
+ * A constant force that crosses the member at constant speed; it has no mass.
+ */
+export interface MovingForce {
+  /**
+   * A force that crosses the member.
+   */
+  type: 'moving-force';
+  /**
+   * The force, N (torque in N·m for a shaft).
+   */
+  force: number;
+  /**
+   * Its speed, m/s: positive from the near to the far end, negative from the far to the near end; not 0.
+   */
+  speed: number;
+  /**
+   * Time at which it enters the member, s: at the near end for a positive speed, at the far end for a negative one. Default 0.
+   */
+  start: number;
+}
+/**
  * Something the reader of the answer should know.
  */
 export interface Notice {
@@ -676,6 +870,27 @@ export interface Notice {
    * What there is to know.
    */
   detail: string;
+}
+/**
+ * A motion of amplitude 1 of the free surface of the elastic half-space on which an end stands.
+ */
+export interface OutcropMotionInput {
+  /**
+   * The outcrop of the half-space under an end moves.
+   */
+  type: 'outcrop-motion';
+  /**
+   * The end that stands on the half-space; it must be a fixed end.
+   */
+  end: 'near' | 'far';
+  /**
+   * Impedance Z = ρ·V·area of the half-space, N·s/m (N·m·s/rad for a shaft), above 0; area as in the segments.
+   */
+  impedance: number;
+  /**
+   * displacement: 1 m (rad for a shaft); acceleration: 1 m/s² (rad/s²), not at 0 Hz.
+   */
+  quantity: MotionQuantity;
 }
 /**
  * Asks for participation factors under a motion of the ends.
@@ -727,6 +942,37 @@ export interface Peaks {
   acceleration?: Peak;
   force?: Peak;
   stress?: Peak;
+  relativeDisplacement?: Peak;
+}
+/**
+ * A force at one place (a torque for a shaft).
+ */
+export interface PointForce {
+  /**
+   * A force at a point.
+   */
+  type: 'point-force';
+  /**
+   * Position of the force from the near end, m; not at a fixed end.
+   */
+  at: number;
+  /**
+   * The force, N (N·m for a shaft).
+   */
+  history: History;
+}
+/**
+ * A force of 1 N at one place (1 N·m for a shaft).
+ */
+export interface PointForceInput {
+  /**
+   * A force at a point.
+   */
+  type: 'point-force';
+  /**
+   * Position of the force from the near end, m; not at a fixed end.
+   */
+  at: number;
 }
 /**
  * Straight lines between given points; zero outside the first and the last.
@@ -743,7 +989,7 @@ export interface PolylineShape {
    */
   positions: number[];
   /**
-   * Values at those points, as many as positions: m (rad for a shaft) in a displacement, m/s (rad/s) in a velocity.
+   * Values at those points, as many as positions: m (rad for a shaft) in a displacement, m/s (rad/s) in a velocity, N/m (N·m/m) in a distributed force.
    *
    * Items: Value at the point.
    */
@@ -758,7 +1004,7 @@ export interface PolynomialShape {
    */
   type: 'polynomial';
   /**
-   * Coefficients c₀, c₁, …, at most 21 (degree 20): cᵢ in m per mⁱ (rad per mⁱ for a shaft) in a displacement, m/s per mⁱ in a velocity.
+   * Coefficients c₀, c₁, …, at most 21 (degree 20): cᵢ in m per mⁱ (rad per mⁱ for a shaft) in a displacement, m/s per mⁱ in a velocity, N/m per mⁱ in a distributed force.
    *
    * Items: Coefficient cᵢ.
    */
@@ -844,7 +1090,7 @@ export interface PullByAmplitude {
    */
   at: number;
   /**
-   * Value of the shape at that point: m (rad for a shaft) in a displacement, m/s (rad/s) in a velocity.
+   * Value of the shape at that point: m (rad for a shaft) in a displacement, m/s (rad/s) in a velocity, N/m (N·m/m) in a distributed force.
    */
   amplitude: number;
 }
@@ -864,6 +1110,27 @@ export interface PullByForce {
    * The force that pulls, N (torque in N·m for a shaft). Only in a displacement.
    */
   force: number;
+}
+/**
+ * A straight rise from 0 to amplitude over the duration; held after it.
+ */
+export interface RampHistory {
+  /**
+   * A rise that is held.
+   */
+  type: 'ramp';
+  /**
+   * Amplitude in the unit of its load: N (N·m for a shaft) under a point force, a plain factor of the profile under a distributed force, m/s² (rad/s²) under a body force, and under an end motion m (rad) for a displacement, m/s² (rad/s²) for an acceleration.
+   */
+  amplitude: number;
+  /**
+   * Time at which the history starts, s; it is zero before. Default 0.
+   */
+  start: number;
+  /**
+   * Duration of the rise, s, above 0.
+   */
+  duration: number;
 }
 /**
  * The same damping ratio in every mode.
@@ -926,6 +1193,27 @@ export interface ReadyAnswer {
   waiting: number;
 }
 /**
+ * amplitude over the duration; zero after it.
+ */
+export interface RectangularPulse {
+  /**
+   * A constant value for a while.
+   */
+  type: 'rectangular-pulse';
+  /**
+   * Amplitude in the unit of its load: N (N·m for a shaft) under a point force, a plain factor of the profile under a distributed force, m/s² (rad/s²) under a body force, and under an end motion m (rad) for a displacement, m/s² (rad/s²) for an acceleration.
+   */
+  amplitude: number;
+  /**
+   * Time at which the history starts, s; it is zero before. Default 0.
+   */
+  start: number;
+  /**
+   * Duration of the pulse, s, above 0.
+   */
+  duration: number;
+}
+/**
  * Motion of a member with the bound of its error.
  */
 export interface ResponsesAnswer {
@@ -984,11 +1272,18 @@ export interface ResponsesConvergence {
   spectrumComplete: true;
 }
 /**
- * A member, how its motion starts, and what is wanted of the motion.
+ * A member, what sets it in motion (an initial motion, loads or both), and what is wanted of the motion.
  */
 export interface ResponsesRequest {
   member: Member;
+  /**
+   * How the motion starts: displacement and velocity at time 0. Default: at rest.
+   */
   initial: InitialMotion;
+  /**
+   * What acts on the member, up to 1,000 loads; they add up. Default: none.
+   */
+  loads: Load[];
   /**
    * How many modes are used. Default: relativeTolerance 1e-3, maxModes 4096.
    */
@@ -1019,6 +1314,29 @@ export interface Sample {
    * Length of time over which a gauge averages, s; 0 samples the instant. Default 0.
    */
   gaugeTime: number;
+}
+/**
+ * Samples at equal intervals, joined by straight lines; zero outside them, except that an end displacement holds its last value. A record is used as it is, without baseline correction.
+ */
+export interface SampledHistory {
+  /**
+   * A record.
+   */
+  type: 'samples';
+  /**
+   * Time between two samples, s, above 0.
+   */
+  interval: number;
+  /**
+   * Samples in the unit of the load (see `amplitude` of the other histories), the first one at the start; 2 to 200,000.
+   *
+   * Items: Sample.
+   */
+  values: number[];
+  /**
+   * Time at which the history starts, s; it is zero before. Default 0.
+   */
+  start: number;
 }
 /**
  * As many modes as a relative tolerance on the displacement needs.
@@ -1328,6 +1646,23 @@ export interface ShearWaveSpeedSegment {
   name?: string;
 }
 /**
+ * amplitude from the start on.
+ */
+export interface StepHistory {
+  /**
+   * A step.
+   */
+  type: 'step';
+  /**
+   * Amplitude in the unit of its load: N (N·m for a shaft) under a point force, a plain factor of the profile under a distributed force, m/s² (rad/s²) under a body force, and under an end motion m (rad) for a displacement, m/s² (rad/s²) for an acceleration.
+   */
+  amplitude: number;
+  /**
+   * Time at which the history starts, s; it is zero before. Default 0.
+   */
+  start: number;
+}
+/**
  * Equally spaced times including start and end.
  */
 export interface TimeGrid {
@@ -1358,6 +1693,127 @@ export interface Tolerances {
   force?: number;
 }
 /**
+ * How the transfer functions were found.
+ */
+export interface TransferConvergence {
+  /**
+   * true: by dynamic stiffness, exact but for rounding; false: by a modal sum with the stated bounds.
+   */
+  closedForm: boolean;
+  /**
+   * Number of modes summed; null in closed form.
+   */
+  modesUsed: number | null;
+  /**
+   * Largest bound relative to the largest magnitude of its output; 0 in closed form.
+   */
+  largestBound: number;
+}
+/**
+ * A quantity at a place per unit of the input.
+ */
+export interface TransferFunction {
+  /**
+   * Position from the near end, m.
+   */
+  at: number;
+  quantity: TransferQuantity;
+  /**
+   * SI unit of the quantity per unit of the input.
+   */
+  unit: string;
+  /**
+   * Real part, per frequency.
+   */
+  real: Numbers;
+  /**
+   * Imaginary part, per frequency.
+   */
+  imaginary: Numbers;
+  /**
+   * Magnitude, per frequency.
+   */
+  magnitude: Numbers;
+  /**
+   * Phase, rad, in (−π, π], per frequency.
+   */
+  phase: Numbers;
+  /**
+   * Largest possible magnitude of the error, per frequency; only with modal damping ratios, which have no closed form.
+   */
+  bound?: Numbers;
+  series?: TransferSeries;
+}
+/**
+ * Transfer functions of a member in the steady state.
+ */
+export interface TransferFunctionsAnswer {
+  /**
+   * Frequencies, Hz, ascending.
+   */
+  frequencies: Numbers;
+  /**
+   * One transfer function per output of the request, in its order.
+   */
+  outputs: TransferFunction[];
+  convergence: TransferConvergence;
+  /**
+   * What the reader of this answer should know, cautions included.
+   */
+  notices: Notice[];
+}
+/**
+ * A member, what drives it and what is wanted of its steady state.
+ */
+export interface TransferFunctionsRequest {
+  member: Member;
+  input: TransferInput;
+  /**
+   * What is wanted, 1 to 1,000; outputs × frequencies at most 1,000,000.
+   */
+  outputs: TransferOutput[];
+  frequencies: Frequencies;
+  /**
+   * Whether frequencies are added around resonances until every peak is resolved to 1 %. Default false.
+   */
+  refine: boolean;
+  /**
+   * Asks for the modal series of so many modes beside the exact result, cut off and with its static remainder.
+   */
+  series?: ModesByCount;
+}
+/**
+ * A quantity at a place.
+ */
+export interface TransferOutput {
+  /**
+   * Position from the near end, m.
+   */
+  at: number;
+  quantity: TransferQuantity;
+}
+/**
+ * The modal series beside the exact transfer function.
+ */
+export interface TransferSeries {
+  /**
+   * Number of modes summed.
+   */
+  modes: number;
+  /**
+   * The sum of the modes alone.
+   */
+  truncated: ComplexNumbers;
+  /**
+   * The same with the static response of the modes left out.
+   */
+  corrected: ComplexNumbers;
+  /**
+   * Largest possible magnitude of the error of the corrected series, per frequency.
+   */
+  bound: Numbers;
+}
+/**
  * One value over a stretch; zero outside it.
  */
 export interface UniformShape {
@@ -1366,7 +1822,7 @@ export interface UniformShape {
    */
   type: 'uniform';
   /**
-   * The value: m (rad for a shaft) in a displacement, m/s (rad/s) in a velocity.
+   * The value: m (rad for a shaft) in a displacement, m/s (rad/s) in a velocity, N/m (N·m/m) in a distributed force.
    */
   value: number;
   /**

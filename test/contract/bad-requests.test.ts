@@ -1,10 +1,10 @@
 import { describe, expect, it } from 'vitest';
-import { readRequest } from '../../src/contract/read-request.ts';
+import { type Operation, readRequest } from '../../src/contract/read-request.ts';
 import { Fault } from '../../src/faults/fault.ts';
 import { formFaultWordings } from '../../src/faults/form-faults.ts';
 import { badRequests, cable, modes } from './bad-requests.ts';
 
-function faultsOf(operation: 'modes' | 'responses', body: unknown): Fault['records'] {
+function faultsOf(operation: Operation, body: unknown): Fault['records'] {
   try {
     readRequest(operation, body);
     return [];

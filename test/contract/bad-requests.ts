@@ -104,10 +104,10 @@ bad(
   ['missing-key', '/member', /member is missing/],
   ['missing-key', '/series', /series is missing.*Which modes/],
 );
-bad('loads, which are not taken', 'responses', responses({ loads: [] }), 400, [
+bad('jobs, which are not taken', 'responses', responses({ jobs: [] }), 400, [
   'unknown-key',
-  '/loads',
-  /"loads" is not a key here.*member, initial, series, sample, checks/,
+  '/jobs',
+  /"jobs" is not a key here.*member, initial, loads, series, sample, checks/,
 ]);
 bad('a slip in a key', 'modes', modes({ membr: 1 }), 400, ['unknown-key', '/membr', /Did you mean member\?/]);
 bad('a key that needs escaping', 'modes', modes({ 'a/b~c': 1 }), 400, [
@@ -125,15 +125,15 @@ bad('a flag as a number', 'modes', modes({ energyShares: 1 }), 400, [
   '/energyShares',
   /must be true or false, but is 1/,
 ]);
-bad('nothing that moves', 'responses', { member: cable(), sample: { times: [0] } }, 400, [
-  'missing-key',
-  '/initial',
-  /initial is missing.*How the motion starts/,
+bad('nothing that moves', 'responses', { member: cable(), sample: { times: [0] } }, 422, [
+  'nothing-moves',
+  '',
+  /neither an initial motion nor a load.*Give "initial", "loads" or both/,
 ]);
-bad('an empty initial motion', 'responses', responses({ initial: {} }), 400, [
-  'nothing-given',
-  '/initial',
-  /says nothing.*displacement, velocity, massVelocities, impulses/,
+bad('an empty initial motion and no load', 'responses', responses({ initial: {}, loads: [] }), 422, [
+  'nothing-moves',
+  '',
+  /stays at rest/,
 ]);
 
 // The member

@@ -24,6 +24,7 @@ describe('the canonical request', () => {
         attachments: [],
       },
       initial: { displacement: { type: 'pull', at: 15, amplitude: 0.02 } },
+      loads: [],
       series: { relativeTolerance: 1e-3, maxModes: 4096 },
       sample: {
         positions: { count: 101 },
@@ -173,7 +174,14 @@ describe('the canonical request', () => {
       responses({ initial: { displacement: { type: 'uniform', value: -0 } } }),
     );
     expect(Object.is((request.initial.displacement as { value: number }).value, 0)).toBe(true);
-    expect(Object.keys(request).toSorted()).toEqual(['checks', 'initial', 'member', 'sample', 'series']);
+    expect(Object.keys(request).toSorted()).toEqual([
+      'checks',
+      'initial',
+      'loads',
+      'member',
+      'sample',
+      'series',
+    ]);
   });
 
   it('is read again as itself', () => {

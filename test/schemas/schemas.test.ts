@@ -2,7 +2,7 @@ import { execFileSync } from 'node:child_process';
 import { readdirSync, readFileSync } from 'node:fs';
 import { Ajv2020 } from 'ajv/dist/2020.js';
 import { describe, expect, it } from 'vitest';
-import { isDimensionName } from '../../src/contract/dimensions.ts';
+import { isDimensionName } from '../../src/contract/dimension-at.ts';
 import { formFaultWordings } from '../../src/faults/form-faults.ts';
 import { badRequests, modes, responses } from '../contract/bad-requests.ts';
 
@@ -31,7 +31,11 @@ published.addVocabulary(['x-dimension', 'x-dimension-per-index']);
 for (const [title, schema] of schemas) published.addSchema(schema, `${title}.json`);
 
 const validator = (title: string) => published.getSchema(`${title}.json`)!;
-const rootOf = { modes: 'ModesRequest', responses: 'ResponsesRequest' };
+const rootOf = {
+  modes: 'ModesRequest',
+  responses: 'ResponsesRequest',
+  'transfer-functions': 'TransferFunctionsRequest',
+};
 
 /** Every schema within a schema, itself included, with the path to it. */
 function parts(schema: unknown, path: string): { schema: Schema; path: string }[] {
@@ -108,7 +112,7 @@ describe('the schema files', () => {
 });
 
 describe('dimensions', () => {
-  const inRequests = new Set([...reach('ModesRequest'), ...reach('ResponsesRequest')]);
+  const inRequests = new Set(Object.values(rootOf).flatMap((title) => [...reach(title)]));
   const numbers = all.filter(
     ({ schema, path }) =>
       inRequests.has(path.split('/')[0]) && [schema.type].flat().some((type) => type === 'number'),

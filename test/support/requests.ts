@@ -78,6 +78,7 @@ export function responsesRequest(given: ResponseCase): ResponsesRequest {
   return {
     member: requestMember(given.member, given.damping),
     initial: given.initial,
+    loads: [],
     series: { modes: given.modes },
     sample: {
       positions: given.positions,
