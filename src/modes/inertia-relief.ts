@@ -97,7 +97,8 @@ export class InertiaRelief {
     const density = member.inertia[i] / this.mass;
     const soft = 1 / member.stiffness[i];
     return {
-      before: this.near[i] + squareIntegral(this.before[i], this.before[i] + density * distance, distance * soft),
+      before:
+        this.near[i] + squareIntegral(this.before[i], this.before[i] + density * distance, distance * soft),
       after: this.far[i] + squareIntegral(this.after[i], this.after[i] + density * rest, rest * soft),
     };
   }

@@ -137,4 +137,3 @@ export function modalReceptance(omega: number, ratio: number, excitation: number
     im: 2 * ratio * omega * excitation,
   });
 }
-

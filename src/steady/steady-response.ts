@@ -12,17 +12,18 @@ import {
   ZERO,
   type Complex,
 } from '../numerics/complex.ts';
-import {
-  complexStiffness,
-  lumpStiffness,
-  waveNumberSquareOf,
-  type SteadyFactors,
-} from './steady-member.ts';
+import { complexStiffness, lumpStiffness, waveNumberSquareOf, type SteadyFactors } from './steady-member.ts';
 
 /** Displacement and flux (total, k̂ u′) at one place. */
 export interface SteadyState {
   readonly displacement: Complex;
   readonly flux: Complex;
+}
+
+/** One evaluated output: state and error of displacement and flux. */
+export interface BoundedState extends SteadyState {
+  readonly displacementError: number;
+  readonly fluxError: number;
 }
 
 /** A solution marched from one end: displacement and flux in its direction, times e^{log}. */

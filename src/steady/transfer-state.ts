@@ -50,8 +50,7 @@ export function stateUnder(
     case 'outcrop-motion': {
       const rock: Complex = complex(0, omega * input.impedance);
       // at rest the half-space and the base move together
-      const base =
-        omega === 0 ? complex(1) : divide(rock, add(rock, response.endStiffness(input.end)));
+      const base = omega === 0 ? complex(1) : divide(rock, add(rock, response.endStiffness(input.end)));
       const state = response.underEndMotion(segment, distance, input.end);
       return { displacement: multiply(base, state.displacement), flux: multiply(base, state.flux) };
     }
