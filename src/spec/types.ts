@@ -1337,6 +1337,10 @@ export interface SampledHistory {
    * Time at which the history starts, s; it is zero before. Default 0.
    */
   start: number;
+  /**
+   * A name of your own for this part; it changes no result.
+   */
+  name?: string;
 }
 /**
  * As many modes as a relative tolerance on the displacement needs.

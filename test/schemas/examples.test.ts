@@ -1,3 +1,4 @@
+import { execFileSync } from 'node:child_process';
 import { readdirSync, readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
 import { readRequest } from '../../src/contract/read-request.ts';
@@ -5,7 +6,7 @@ import { validatorOf } from '../../src/contract/validators.ts';
 import { encodeJson } from '../../src/encoding/json.ts';
 import { solveModes } from '../../src/solutions/modes.ts';
 import { solveResponses } from '../../src/solutions/responses.ts';
-import type { ModesAnswer, ResponsesAnswer } from '../../src/spec/types.ts';
+import type { EndMotion, ModesAnswer, ResponsesAnswer, SampledHistory } from '../../src/spec/types.ts';
 
 const folder = new URL('../../schemas/examples/', import.meta.url);
 const files = readdirSync(folder);
@@ -33,7 +34,20 @@ describe('the examples', () => {
     const texts = files.map((file) => readFileSync(new URL(file, folder), 'utf8'));
     expect(texts.some((text) => /"\d[\d.]* [A-Za-z]/.test(text))).toBe(true);
     expect(texts.some((text) => !/"\d[\d.]* [A-Za-z]/.test(text))).toBe(true);
-    expect(files).toHaveLength(5);
+    expect(files).toHaveLength(9);
+  });
+
+  it('the record of the shaken soil column is the one that its script makes, and says that it is made up', () => {
+    const script = new URL('../../schemas/scripts/synthesise-record.mjs', import.meta.url).pathname;
+    const file = new URL('shaken-soil-column.json', folder).pathname;
+    expect(() => execFileSync(process.execPath, [script, file], { stdio: 'pipe' })).not.toThrow();
+    const { loads } = readRequest('responses', load('shaken-soil-column.json'));
+    const { history } = loads[0] as EndMotion;
+    expect((history as SampledHistory).name).toMatch(/made-up/);
+    // Of the size of a moderate earthquake: peak below 2 m/s², and at rest again at the end.
+    const { interval, values } = history as SampledHistory;
+    expect(Math.max(...values.map(Math.abs))).toBe(1.6);
+    expect(Math.abs(interval * values.reduce((sum, value) => sum + value, 0))).toBeLessThan(1e-3);
   });
 
   it('a stay cable, pulled and released, converges and stays below its ceiling', () => {

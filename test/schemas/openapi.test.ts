@@ -96,6 +96,7 @@ describe('the served document', () => {
     expect(operations().map(([path, method]) => `${method} ${path}`)).toEqual([
       'post /v1/modes',
       'post /v1/responses',
+      'post /v1/transfer-functions',
       'get /health/live',
       'get /health/ready',
       'get /openapi.yaml',
