@@ -90,8 +90,13 @@ function copyList(list: readonly unknown[], state: State): unknown[] {
   const copy: unknown[] = [];
   const { path } = state;
   for (let index = 0; index < list.length; index++) {
+    const item = list[index];
+    if (typeof item === 'number' && isUsableMagnitude(item)) {
+      copy.push(item === 0 ? 0 : item);
+      continue;
+    }
     path.push(index);
-    copy.push(copyValue(list[index], state));
+    copy.push(copyValue(item, state));
     path.pop();
     if (state.fatal) break;
   }

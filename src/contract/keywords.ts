@@ -7,7 +7,7 @@ import {
 } from 'ajv/dist/2020.js';
 import { chooseAlternative, describeAlternatives } from './choose-alternative.ts';
 import { type DimensionContext, dimensionAt, type DimensionName, isDimensionName } from './dimension-at.ts';
-import { perLength } from './dimensions.ts';
+import { type Dimension, perLength } from './dimensions.ts';
 import { type QuantityProblem, readQuantity } from './read-quantity.ts';
 import type { Schema } from './schema-files.ts';
 
@@ -88,20 +88,22 @@ export const quantitiesKeyword: FuncKeywordDefinition = {
     const limits = rangeLimits(schema);
     const validate = function (this: ReadingContext, list: unknown[], place: Place): boolean {
       const errors: object[] = [];
+      let wanted: Dimension | null = null;
       const report = (index: number, params: QuantityParams): void => {
         const instancePath = `${place.instancePath}/${index}`;
         errors.push({ keyword: 'quantities', instancePath, params, parentSchema: schema });
       };
       for (let index = 0; index < list.length && errors.length < mostErrors; index++) {
         let value = list[index];
+        let original: string | null = null;
         if (typeof value === 'string' && name !== null) {
-          const wanted = dimensionAt(name, this, place.instancePath);
+          wanted ??= dimensionAt(name, this, place.instancePath);
           const read = readQuantity(value, perIndex ? perLength(wanted, index) : wanted);
           if (typeof read !== 'number') {
             report(index, { problem: read });
             continue;
           }
-          this.originals.set(`${place.instancePath}/${index}`, value);
+          original = value;
           list[index] = read;
           value = read;
         }
@@ -109,7 +111,11 @@ export const quantitiesKeyword: FuncKeywordDefinition = {
           report(index, { notNumber: true, value });
           continue;
         }
-        for (const broken of limits) if (breaks(value, broken)) report(index, { broken, value });
+        for (const broken of limits) {
+          if (!breaks(value, broken)) continue;
+          if (original !== null) this.originals.set(`${place.instancePath}/${index}`, original);
+          report(index, { broken, value });
+        }
       }
       validate.errors = errors;
       return errors.length === 0;
