@@ -110,6 +110,34 @@ export class StaticResponse {
     return nodes;
   }
 
+  /** G(x,x) and the share u_R g_L/W of a unit load at x that the near side carries. */
+  split(i: number, distance: number): { readonly flexibility: number; readonly nearShare: number } {
+    const { left, right } = this.meet(i, distance);
+    const wronskian = right.u * left.g + left.u * right.g;
+    return { flexibility: (left.u * right.u) / wronskian, nearShare: (right.u * left.g) / wronskian };
+  }
+
+  /** u_L(z)/u_L(x) within segment i, z ≤ x; 1 at x = z also where u_L is 0. */
+  nearRatio(i: number, z: number, x: number): number {
+    if (z === x) return 1;
+    const from = recall(this.near, i);
+    this.cross(i, z, from);
+    const to = recall(this.near, i);
+    this.cross(i, x, to);
+    return (from.u / to.u) * Math.exp(from.log - to.log);
+  }
+
+  /** u_R(z)/u_R(x) within segment i, z ≥ x. */
+  farRatio(i: number, z: number, x: number): number {
+    if (z === x) return 1;
+    const l = this.member.length[i];
+    const from = recall(this.far, i);
+    this.cross(i, l - z, from);
+    const to = recall(this.far, i);
+    this.cross(i, l - x, to);
+    return (from.u / to.u) * Math.exp(from.log - to.log);
+  }
+
   private meet(i: number, distance: number): { left: Flow; right: Flow } {
     const left = recall(this.near, i);
     this.cross(i, distance, left);
