@@ -1,7 +1,7 @@
 import { faultRecord, type FaultRecord } from '../faults/fault.ts';
 import type { EndMotion, InitialMotion, Load, Member, SupportEnds } from '../spec/types.ts';
 import type { Span } from './check-position.ts';
-import { disagrees, firstValue, initialValue, jumpOf } from './end-displacement.ts';
+import { disagrees, firstValue, initialValue, jumpOf, nothing } from './end-displacement.ts';
 
 type EndName = 'near' | 'far';
 
@@ -61,15 +61,21 @@ function checkStart(
   initial: { readonly motion: InitialMotion; readonly span: Span } | null,
   unit: string,
 ): FaultRecord[] {
-  const given = initial === null ? { value: 0, scale: 0 } : initialValue(initial.motion, initial.span, end);
+  const given = initial === null ? nothing : initialValue(initial.motion, initial.span, end);
   if (quantity === 'displacement') {
     const jump = jumpOf(history, given);
     if (jump !== null) {
-      return [faultRecord('end-displacement-jumps', pointer, { end, unit, time: history.start, ...jump })];
+      const values = { end, unit, time: history.start, jump: shown(jump.jump), remedy: jump.remedy };
+      return [faultRecord('end-displacement-jumps', pointer, values)];
     }
   }
-  const first = quantity === 'displacement' ? firstValue(history) : { value: 0, scale: 0 };
+  const first = quantity === 'displacement' ? firstValue(history) : nothing;
   if (initial === null || !disagrees(first, given)) return [];
-  const values = { end, unit, first: first.value, initial: given.value };
+  const values = { end, unit, first: shown(first.value), initial: shown(given.value) };
   return [faultRecord('end-displacement-disagrees', pointer, values)];
+}
+
+/** A value without the last digit of double precision, which a sum leaves behind. */
+function shown(value: number): number {
+  return Number(value.toPrecision(15));
 }

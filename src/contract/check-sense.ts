@@ -92,11 +92,14 @@ function checkLoads(
   const single = list.flatMap((load, index) =>
     load === null ? [] : checkLoad(load, `/loads/${index}`, span, ends, latest),
   );
-  return [...single, ...checkEndMotions(list, ends, known, member.kind === 'shaft' ? 'rad' : 'm')];
+  const turns = isSound('/member/kind') && member.kind === 'shaft';
+  return [...single, ...checkEndMotions(list, ends, known, turns ? 'rad' : 'm')];
 }
 
 function latestTime({ times, gaugeTime }: Sample): number {
-  return (Array.isArray(times) ? times[times.length - 1] : times.end) + gaugeTime;
+  return (
+    (Array.isArray(times) ? times.reduce((late, time) => Math.max(late, time), 0) : times.end) + gaugeTime
+  );
 }
 
 /** The same for a request of transfer functions. */

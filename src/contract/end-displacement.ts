@@ -7,6 +7,9 @@ export interface ScaledValue {
   readonly scale: number;
 }
 
+/** A value of 0 that was not formed from anything. */
+export const nothing: ScaledValue = { value: 0, scale: 0 };
+
 /** Units of rounding, times the terms summed, within which two values count as equal. */
 const equality = 256 * Number.EPSILON;
 
@@ -26,16 +29,20 @@ function valueAtStart(history: History): ScaledValue {
     case 'rectangular-pulse':
       return { value: history.amplitude, scale: Math.abs(history.amplitude) };
     case 'samples':
-      return { value: history.values[0], scale: Math.abs(history.values[0]) };
+      return { value: history.values[0], scale: largestMagnitude(history.values) };
     case 'ramp':
     case 'half-sine-pulse':
-      return { value: 0, scale: 0 };
+      return nothing;
   }
+}
+
+function largestMagnitude(values: readonly number[]): number {
+  return values.reduce((largest, value) => Math.max(largest, Math.abs(value)), 0);
 }
 
 /** The value of a history at time 0. */
 export function firstValue(history: History): ScaledValue {
-  return history.start > 0 ? { value: 0, scale: 0 } : valueAtStart(history);
+  return history.start > 0 ? nothing : valueAtStart(history);
 }
 
 /**
@@ -52,13 +59,13 @@ export function jumpOf(history: History, initial: ScaledValue): { jump: number; 
       if (begin.value === 0) return null;
       return { jump: begin.value, remedy: 'Let it rise over some time: a ramp, or samples.' };
     case 'harmonic': {
-      const before = history.start > 0 ? { value: 0, scale: 0 } : initial;
+      const before = history.start > 0 ? nothing : initial;
       if (!disagrees(begin, before)) return null;
       const remedy = 'Give it the phase "-90 deg", so that it begins at 0, or let it rise by samples.';
       return { jump: begin.value - before.value, remedy };
     }
     case 'samples':
-      if (history.start === 0 || begin.value === 0) return null;
+      if (history.start === 0 || !disagrees(begin, nothing)) return null;
       return { jump: begin.value, remedy: 'Let the first sample be 0, or start the record at time 0.' };
     case 'ramp':
     case 'half-sine-pulse':

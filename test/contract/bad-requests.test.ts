@@ -2,7 +2,8 @@ import { describe, expect, it } from 'vitest';
 import { type Operation, readRequest } from '../../src/contract/read-request.ts';
 import { Fault } from '../../src/faults/fault.ts';
 import { formFaultWordings } from '../../src/faults/form-faults.ts';
-import { badRequests, cable, modes } from './bad-requests.ts';
+import { badRequests } from './bad-requests.ts';
+import { cable, modes } from './request-cases.ts';
 
 function faultsOf(operation: Operation, body: unknown): Fault['records'] {
   try {

@@ -1,89 +1,25 @@
-import type { Operation } from '../../src/contract/read-request.ts';
-import type { FaultCode } from '../../src/faults/catalogue.ts';
+import { badLoadRequests } from './bad-load-requests.ts';
+import {
+  bar,
+  cable,
+  type BadRequest,
+  type Changes,
+  column,
+  fixed,
+  free,
+  modes,
+  responses,
+  shaft,
+  steelBar,
+  steelShaft,
+  table,
+} from './request-cases.ts';
 
-/** A fault that a wrong request must be answered with. */
-export interface ExpectedFault {
-  readonly code: FaultCode;
-  /** RFC 6901 pointer into the request. */
-  readonly pointer: string;
-  /** What the wording must say: the offending value and the remedy. */
-  readonly wording: RegExp;
-}
-
-/** A wrong request with all its faults and no other. */
-export interface BadRequest {
-  readonly title: string;
-  readonly operation: Operation;
-  readonly body: unknown;
-  readonly status: 400 | 422;
-  readonly faults: readonly ExpectedFault[];
-}
-
-type Changes = Record<string, unknown>;
-
-const fixed = { type: 'fixed' };
-const free = { type: 'free' };
-
-export const cable = (changes: Changes = {}): Changes => ({
-  kind: 'cable',
-  tension: 2.4e6,
-  segments: [{ length: 45, massPerLength: 58 }],
-  ends: { near: fixed, far: fixed },
-  ...changes,
-});
-const bar = (segment: Changes, changes: Changes = {}): Changes => ({
-  kind: 'bar',
-  segments: [{ length: 3, ...segment }],
-  ends: { near: fixed, far: free },
-  ...changes,
-});
-const shaft = (segment: Changes, changes: Changes = {}): Changes => ({
-  kind: 'shaft',
-  segments: [{ length: 2, ...segment }],
-  ends: { near: fixed, far: free },
-  ...changes,
-});
-const steelShaft = { shearModulus: 8e10, density: 7850, outerDiameter: 0.1 };
-const steelBar = { youngsModulus: 2.1e11, area: 0.01, density: 7850 };
-const column = (segment: Changes): Changes => ({
-  kind: 'shear-column',
-  segments: [{ length: 5, ...segment }],
-  ends: { near: fixed, far: free },
-});
-
-export const modes = (changes: Changes = {}): Changes => ({
-  member: cable(),
-  series: { modes: 4 },
-  ...changes,
-});
-export const responses = (changes: Changes = {}): Changes => ({
-  member: cable(),
-  initial: { displacement: { type: 'pull', at: 15, amplitude: 0.02 } },
-  sample: { times: { end: 2, count: 11 } },
-  ...changes,
-});
 const moved = (displacement: unknown): Changes => responses({ initial: { displacement } });
 const sampled = (changes: Changes): Changes =>
   responses({ sample: { times: { end: 2, count: 11 }, ...changes } });
 
-const rows: BadRequest[] = [];
-
-/** Adds one wrong request; each fault is [code, pointer, wording]. */
-function bad(
-  title: string,
-  operation: Operation,
-  body: unknown,
-  status: 400 | 422,
-  ...faults: [FaultCode, string, RegExp][]
-): void {
-  rows.push({
-    title,
-    operation,
-    body,
-    status,
-    faults: faults.map(([code, pointer, wording]) => ({ code, pointer, wording })),
-  });
-}
+const { rows, bad } = table();
 
 // The request as a whole
 bad('a list instead of a request', 'modes', [], 400, [
@@ -869,4 +805,4 @@ bad(
   ['position-outside', '/initial/displacement/at', /47 m/],
 );
 
-export const badRequests: readonly BadRequest[] = rows;
+export const badRequests: readonly BadRequest[] = [...rows, ...badLoadRequests];

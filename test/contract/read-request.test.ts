@@ -3,7 +3,8 @@ import { describe, expect, it } from 'vitest';
 import { canonicalJson } from '../../src/contract/canonical-json.ts';
 import { type Operation, readRequest } from '../../src/contract/read-request.ts';
 import { Fault } from '../../src/faults/fault.ts';
-import { badRequests, cable, modes, responses } from './bad-requests.ts';
+import { badRequests } from './bad-requests.ts';
+import { cable, modes, responses } from './request-cases.ts';
 
 /** Freezes a document to its last leaf, so that any change of it throws. */
 function deepFreeze<T>(value: T): T {
