@@ -70,16 +70,6 @@ export const catalogue = {
     detail:
       'The modes kept carry {captured} J of the {total} J there are, more than rounding explains. The answer is withheld; please report the request.',
   },
-  'resonance-hit': {
-    title: 'An undamped resonance is hit',
-    detail:
-      'At {frequency} Hz the undamped member is in resonance and its response infinite. Leave that frequency out, or give the member damping.',
-  },
-  'outcrop-with-ratios': {
-    title: 'Modal damping ratios do not fit an outcrop motion',
-    detail:
-      'The half-space under the member takes energy away, so the damped modes are not those that the ratios belong to. Use "loss-factor" or "rayleigh" damping with an outcrop motion.',
-  },
   'result-overflow': {
     title: 'A result is not finite',
     detail:

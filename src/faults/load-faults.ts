@@ -69,4 +69,14 @@ export const loadFaultWordings = {
     detail:
       'At 0 Hz a constant acceleration of the support moves the member away without limit. Begin above 0 Hz, or take the displacement as input.',
   },
+  'resonance-hit': {
+    title: 'An undamped resonance is hit',
+    detail:
+      'At {frequency} Hz the undamped member is in resonance and its response infinite. Leave that frequency out, or give the member damping.',
+  },
+  'outcrop-with-ratios': {
+    title: 'Modal damping ratios do not fit an outcrop motion',
+    detail:
+      'The half-space under the member takes energy away, so the damped modes are not those that the ratios belong to. Use "loss-factor" or "rayleigh" damping with an outcrop motion.',
+  },
 } as const satisfies Record<string, { title: string; detail: string }>;
