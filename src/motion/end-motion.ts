@@ -60,6 +60,18 @@ export class SupportMotion {
     this.drive = this.parts.flatMap((part) => driveOf(part, drag));
   }
 
+  /** y‴ from the right (0 between samples of a displacement). */
+  jerkAt(t: number): number {
+    if (this.recorded !== null) return this.recorded.jerkAt(t);
+    const part = this.parts.findLast((one) => one.from <= t);
+    if (part === undefined) return 0;
+    const s = t - part.from;
+    return part.forcings.reduce((sum, { amplitude, rate }) => {
+      const now = multiply(amplitude, exponential({ re: rate.re * s, im: rate.im * s }));
+      return sum + multiply(rate, now).re;
+    }, part.jerk);
+  }
+
   at(t: number): SupportState {
     if (this.recorded !== null) return this.recorded.at(t);
     const { parts } = this;

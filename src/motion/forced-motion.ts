@@ -1,3 +1,4 @@
+import type { Mode } from '../modes/mode-series.ts';
 import { FreeMotionTable } from './free-motion-table.ts';
 import type { HistoryPart } from './history.ts';
 import { linearStep } from './linear-step.ts';
@@ -9,6 +10,11 @@ import { exponential, multiply, type Complex } from '../numerics/complex.ts';
 export interface Kick {
   readonly time: number;
   readonly amount: number;
+}
+
+/** Adds a mode's motion from rest under one load to tables of q and q′. */
+export interface LoadMover {
+  add(mode: Mode, rate: number, factor: number, q: Float64Array, v: Float64Array): void;
 }
 
 /** A stretch between two events with the sampled times in it. */

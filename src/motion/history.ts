@@ -1,4 +1,4 @@
-import { complex, exponential, multiply, type Complex } from '../numerics/complex.ts';
+import { complex, divide, exponential, multiply, subtract, type Complex } from '../numerics/complex.ts';
 import type { History } from '../spec/types.ts';
 import type { WaveForcing } from './wave-forcing.ts';
 
@@ -139,4 +139,44 @@ function recordAt(record: SampledRecord, t: number): { value: number; rate: numb
 export function sampleBefore(place: number): number {
   const nearest = Math.round(place);
   return Math.abs(place - nearest) < 1e-9 ? nearest : Math.floor(place);
+}
+
+/** ∫p from the history's beginning up to a time, for every time given. */
+export function historyIntegrals(history: TimeHistory, times: Float64Array): Float64Array {
+  if (history.record !== null) return recordIntegrals(history.record, times);
+  return times.map((t) => {
+    let total = 0;
+    for (const part of history.parts) {
+      const h = Math.min(t, part.to) - part.from;
+      if (h <= 0) continue;
+      if (part.kind === 'linear') {
+        total += h * (part.value + h * (0.5 * part.slope + (h * part.curve) / 6));
+        continue;
+      }
+      for (const { amplitude, rate } of part.forcings) {
+        // ∫Re(z e^{rs}) = Re(z (e^{rh} − 1)/r), by sine and cosine of half the angle for small h
+        const middle = exponential({ re: 0.5 * rate.re * h, im: 0.5 * rate.im * h });
+        const turned = multiply(amplitude, middle);
+        const half = 0.5 * rate.im * h;
+        if (rate.re === 0) total += turned.re * h * (half === 0 ? 1 : Math.sin(half) / half);
+        else total += divide(multiply(amplitude, subtract(multiply(middle, middle), complex(1))), rate).re;
+      }
+    }
+    return total;
+  });
+}
+
+function recordIntegrals(record: SampledRecord, times: Float64Array): Float64Array {
+  const { start, interval: h, values, holds } = record;
+  const last = values.length - 1;
+  const sums = new Float64Array(values.length);
+  for (let i = 0; i < last; i++) sums[i + 1] = sums[i] + 0.5 * h * (values[i] + values[i + 1]);
+  return times.map((t) => {
+    const place = (t - start) / h;
+    const i = sampleBefore(place);
+    if (i < 0) return 0;
+    if (i >= last) return sums[last] + (holds ? values[last] * (t - start - last * h) : 0);
+    const s = Math.max(0, (place - i) * h);
+    return sums[i] + s * (values[i] + (0.5 * s * (values[i + 1] - values[i])) / h);
+  });
 }

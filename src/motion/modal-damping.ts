@@ -28,3 +28,12 @@ export function largestRatioAbove(damping: ModalDamping, order: number): number 
   for (let n = order; n < ratios.length; n++) largest = Math.max(largest, ratios[n]);
   return largest;
 }
+
+/** Smallest ζ among the modes above `order`. */
+export function smallestRatioAbove(damping: ModalDamping, order: number): number {
+  const { ratios } = damping;
+  if (ratios.length === 0) return 0;
+  let smallest = ratios[ratios.length - 1];
+  for (let n = order; n < ratios.length; n++) smallest = Math.min(smallest, ratios[n]);
+  return smallest;
+}

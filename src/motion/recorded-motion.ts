@@ -60,6 +60,14 @@ export class RecordedMotion {
     };
   }
 
+  /** y‴ from the right. */
+  jerkAt(t: number): number {
+    const { acceleration, interval: h } = this;
+    if (acceleration === null) return 0;
+    const i = sampleBefore((t - this.start) / h);
+    return i < 0 || i >= acceleration.length - 1 ? 0 : (acceleration[i + 1] - acceleration[i]) / h;
+  }
+
   /** y″ + α y′ and the jumps of y′. */
   drive(drag: number): RecordDrive {
     const { velocity, acceleration, interval: h } = this;

@@ -1,0 +1,232 @@
+import type { WaveMember } from '../members/wave-member.ts';
+import type { Mode } from '../modes/mode-series.ts';
+import type { Stations } from '../modes/stations.ts';
+import type { AppliedLoad } from '../motion/applied-loads.ts';
+import type { HistoryMeasures } from '../motion/history-measures.ts';
+import { largestRatioAbove, smallestRatioAbove } from '../motion/modal-damping.ts';
+import { MovingTail } from './moving-tail.ts';
+import { TailFlexibility } from './tail-flexibility.ts';
+
+const EPS = Number.EPSILON;
+
+/** Coefficients of what loads leave out, to be multiplied by √ΔG(x) or √ΔH(x). */
+export interface LoadTailFactors {
+  /** Displacement at the instant: times √ΔG. */
+  readonly displacement: number;
+  /** Velocity at the instant: times √ΔG; infinite where no such bound exists. */
+  readonly velocity: number;
+  /** Flux at the instant: times √ΔH; infinite where no such bound exists. */
+  readonly flux: number;
+  /** Flux averaged over τ, less its static part: times √ΔH; already divided by τ. */
+  readonly gaugeFlux: number;
+  /** Acceleration averaged over τ: times √ΔG; infinite where none. */
+  readonly gaugeAcceleration: number;
+  /** r.m.s. of velocity times √m, and of flux times √∫dx/k. */
+  readonly rmsVelocity: number;
+  readonly rmsFlux: number;
+}
+
+const NONE: LoadTailFactors = {
+  displacement: 0,
+  velocity: 0,
+  flux: 0,
+  gaugeFlux: 0,
+  gaugeAcceleration: 0,
+  rmsVelocity: 0,
+  rmsFlux: 0,
+};
+
+/**
+ * What the kept modes leave of the response to loads, after the quasi-static part is taken exactly.
+ * With V = variation of the drive p from rest, ω = ω_{N+1} and c/ω = 2ζ + α/ω, a later mode's rest
+ * r = q − F p/ω² has ω²|r|/F at most the smallest of
+ *
+ *   V;   Σ√(Δp² + Δp′²/ω²) + TV(p′)/ω + (c/ω) TV(p);
+ *   the same two with e^{−γ(t−s)} in the integrals, over √(1 − ζ²), γ = inf c/2, ζ < 1;
+ *   A (1 + √(r⁴ + (cr/ω)²))/(1 − r²), r = Ω/ω, for a lasting harmonic;
+ *
+ * each times √(ΔC ΔG), ΔC = C − ΣF²/ω²; and impulses of a support Σ|Δy′| √((m(r,r) − ΣΓ²) ΔG).
+ * A load of finite mass norm has also ΔF = ∫f²/ρ − ΣF², which bounds velocity and flux at the instant.
+ * Under stiffness-proportional damping only V and the harmonic remain. Loads add up.
+ */
+export class LoadTails {
+  private readonly member: WaveMember;
+  private readonly loads: readonly AppliedLoad[];
+  private readonly factorsOf: number[][] = [];
+  private readonly compliance: Float64Array;
+  private readonly norm: Float64Array;
+  private readonly points: TailFlexibility | null;
+  private readonly pointOf: Int32Array;
+  private readonly moving: (MovingTail | null)[];
+  private readonly cache = new Map<number, { reach: number; K: Reach }>();
+
+  constructor(member: WaveMember, loads: readonly AppliedLoad[]) {
+    this.member = member;
+    this.loads = loads;
+    this.compliance = Float64Array.from(loads, (load) => load.still?.compliance ?? 0);
+    this.norm = Float64Array.from(loads, (load) => load.massNorm);
+    this.pointOf = new Int32Array(loads.length).fill(-1);
+    const segments: number[] = [];
+    const distances: number[] = [];
+    loads.forEach((load, index) => {
+      if (load.point === null) return;
+      this.pointOf[index] = segments.length;
+      segments.push(load.point.segment);
+      distances.push(load.point.distance);
+    });
+    const stations: Stations = {
+      position: new Float64Array(segments.length),
+      segment: Int32Array.from(segments),
+      distance: Float64Array.from(distances),
+    };
+    this.points = segments.length > 0 ? new TailFlexibility(member, stations) : null;
+    this.moving = loads.map((load) => (load.moving ? new MovingTail(member, load.moving) : null));
+  }
+
+  /** F_n of every load for a kept mode, shape [loads]; takes the mode out of the remainders. */
+  add(mode: Mode): number[] {
+    const { lambda } = mode.shape;
+    const factors = this.loads.map((load) => load.modalFactor(mode));
+    this.points?.add(mode);
+    this.moving.forEach((tail) => tail?.add(mode));
+    factors.forEach((factor, index) => {
+      this.norm[index] -= factor * factor;
+      if (lambda > 0) this.compliance[index] -= (factor * factor) / lambda;
+    });
+    this.factorsOf.push(factors);
+    return factors;
+  }
+
+  /** Factors of all loads together, given ω_{N+1}. */
+  factors(nextOmega: number, kept: number, gaugeTime: number, span: number): LoadTailFactors {
+    return this.loads.reduce((sum, _, index) => {
+      const one = this.factorsOfLoad(index, nextOmega, kept, gaugeTime, span);
+      return {
+        displacement: sum.displacement + one.displacement,
+        velocity: sum.velocity + one.velocity,
+        flux: sum.flux + one.flux,
+        gaugeFlux: sum.gaugeFlux + one.gaugeFlux,
+        gaugeAcceleration: sum.gaugeAcceleration + one.gaugeAcceleration,
+        rmsVelocity: sum.rmsVelocity + one.rmsVelocity,
+        rmsFlux: sum.rmsFlux + one.rmsFlux,
+      };
+    }, NONE);
+  }
+
+  private factorsOfLoad(
+    index: number,
+    nextOmega: number,
+    kept: number,
+    gaugeTime: number,
+    span: number,
+  ): LoadTailFactors {
+    const { damping } = this.member;
+    const moving = this.moving[index];
+    const ratio = 2 * largestRatioAbove(damping, kept) + damping.massCoefficient / nextOmega;
+    const drag = Math.hypot(1, ratio);
+    if (moving !== null) return moving.factors(nextOmega, drag, gaugeTime, span);
+    const load = this.loads[index];
+    const measures = load.measures as HistoryMeasures;
+    const c = Math.sqrt(this.complianceTail(index, nextOmega));
+    const f = load.smooth ? Math.sqrt(Math.max(0, this.norm[index]) + 64 * EPS * load.massNorm) : Infinity;
+    const source = Math.min(c, f / nextOmega);
+    const { rest, energy } = this.reachOf(index, measures, nextOmega, kept);
+    const gamma = decayRate(this.member, nextOmega, kept);
+    const zeta = 0.5 * ratio;
+    const fading = zeta < 1 && damping.stiffnessCoefficient === 0;
+    const kicks = Math.min(
+      measures.weighedKicks(0),
+      fading ? measures.weighedKicks(gamma) / Math.sqrt(1 - zeta * zeta) : Infinity,
+    );
+    const kicked = kicks === 0 ? 0 : kicks * f;
+    const quiet = kicks === 0 && load.smooth;
+    const oscillation = Math.min(2 * measures.largest, totalVariation(measures));
+    const rough = damping.stiffnessCoefficient > 0;
+    return {
+      displacement: rest * source + kicked,
+      velocity: quiet ? (energy + measures.largestRate / nextOmega) * f : Infinity,
+      flux: quiet && !rough ? rest * f : Infinity,
+      gaugeFlux:
+        gaugeTime > 0
+          ? ((2 * drag * energy + ratio * oscillation) * source + (2 * drag + 1) * kicked) / gaugeTime
+          : Infinity,
+      gaugeAcceleration: quiet && gaugeTime > 0 ? (2 * energy * f) / gaugeTime : Infinity,
+      rmsVelocity: (energy + measures.largestRate / nextOmega) * source + kicked,
+      rmsFlux: rough ? Infinity : rest * source + kicked,
+    };
+  }
+
+  private complianceTail(index: number, nextOmega: number): number {
+    const at = this.pointOf[index];
+    if (at >= 0 && this.points) return this.points.flexibilityTail(at, nextOmega * nextOmega);
+    const whole = this.loads[index].still?.compliance ?? 0;
+    return Math.max(0, this.compliance[index]) + 64 * EPS * whole;
+  }
+
+  /** The reach of a history, found anew only when ω has grown by an eighth: it falls with ω and N. */
+  private reachOf(index: number, measures: HistoryMeasures, nextOmega: number, kept: number): Reach {
+    const known = this.cache.get(index);
+    if (known && nextOmega < 1.125 * known.reach && nextOmega >= known.reach && kept > 8) return known.K;
+    const K = reachOfHistory(measures, this.member, nextOmega, kept);
+    this.cache.set(index, { reach: nextOmega, K });
+    return K;
+  }
+}
+
+/** ω²|r|/F and the energy norm ω²|(r, q′/ω)|/F of any later mode, at most. */
+interface Reach {
+  readonly rest: number;
+  readonly energy: number;
+}
+
+function reachOfHistory(measures: HistoryMeasures, member: WaveMember, omega: number, kept: number): Reach {
+  const { damping } = member;
+  const total = totalVariation(measures);
+  const rough = damping.stiffnessCoefficient > 0;
+  const ratio = 2 * largestRatioAbove(damping, kept) + damping.massCoefficient / omega;
+  const zeta = 0.5 * ratio;
+  let rest = total;
+  let energy = total;
+  const take = (restReach: number, energyReach: number): void => {
+    rest = Math.min(rest, restReach);
+    energy = Math.min(energy, energyReach);
+  };
+  if (!rough) {
+    const slow = measures.weighed(0, ratio, 1 / omega);
+    // jumps of p count whole, beside their slopes: √(Δp² + Δp′²/ω²)
+    const jumped = measures.jumps.reduce(
+      (sum, jump) => sum + Math.hypot(jump.value, jump.slope / omega) - Math.hypot(ratio * jump.value, jump.slope / omega),
+      0,
+    );
+    const smooth = slow + Math.max(0, jumped);
+    take(smooth, smooth + measures.largestRate / omega);
+    const gamma = decayRate(member, omega, kept);
+    if (zeta < 1 && gamma > 0) {
+      const shrink = 1 / Math.sqrt(1 - zeta * zeta);
+      const norm = Math.sqrt((1 + zeta) / (1 - zeta));
+      const plain = measures.weighed(gamma, 1, 0);
+      take(plain * shrink, plain * norm);
+      const fine = measures.weighed(gamma, ratio, 1 / omega) + Math.max(0, jumped);
+      take(fine * shrink, fine * norm + measures.largestRate / omega);
+    }
+  }
+  const { harmonic } = measures;
+  if (harmonic !== null && harmonic.omega < omega) {
+    const r = harmonic.omega / omega;
+    const loss = ratio * r + damping.stiffnessCoefficient * harmonic.omega;
+    const gain = harmonic.amplitude / (1 - r * r);
+    const reach = gain * (1 + Math.hypot(r * r, loss));
+    take(reach, reach + gain * r);
+  }
+  return { rest, energy };
+}
+
+function totalVariation(measures: HistoryMeasures): number {
+  return measures.variation + measures.jumps.reduce((sum, jump) => sum + jump.value, 0);
+}
+
+/** inf of c_n/2 over the later modes. */
+function decayRate(member: WaveMember, omega: number, kept: number): number {
+  const { damping } = member;
+  return smallestRatioAbove(damping, kept) * omega + 0.5 * damping.massCoefficient;
+}

@@ -1,0 +1,235 @@
+import { modulus, multiply } from '../numerics/complex.ts';
+import type { Kick } from './forced-motion.ts';
+import type { HistoryPart } from './history.ts';
+import type { RecordDrive } from './record-motion.ts';
+
+/** How much a drive p(t) changes from rest up to a time: what bounds of the modes left out need. */
+export interface HistoryMeasures {
+  /** Jumps of p with the jump of p′ at the same instant. */
+  readonly jumps: readonly { readonly value: number; readonly slope: number }[];
+  /** Variation of p between jumps, and of p′ between jumps (jumps of p′ alone included). */
+  readonly variation: number;
+  readonly slopeVariation: number;
+  /** Largest |p| and |p′|. */
+  readonly largest: number;
+  readonly largestRate: number;
+  /** sup over t of Σ e^{−γ(t−s)}|kick| of q′. */
+  weighedKicks(gamma: number): number;
+  /** Amplitude and Ω, when p is one harmonic that never ends. */
+  readonly harmonic: { readonly amplitude: number; readonly omega: number } | null;
+  /**
+   * sup over t of ∫e^{−γ(t−s)} (|dp| a + |dp′| b), jumps included, for long records; for others the
+   * same without the weight.
+   */
+  weighed(gamma: number, onValue: number, onSlope: number): number;
+}
+
+/** Measures of a drive of a few parts up to the span, s. */
+export function measureParts(
+  parts: readonly HistoryPart[],
+  kicks: readonly Kick[],
+  span: number,
+): HistoryMeasures {
+  const jumps: { value: number; slope: number }[] = [];
+  let variation = 0;
+  let slopeVariation = 0;
+  let largest = 0;
+  let largestRate = 0;
+  let value = 0;
+  let slope = 0;
+  let reached = Number.NEGATIVE_INFINITY;
+  const jump = (toValue: number, toSlope: number): void => {
+    const size = Math.abs(toValue - value);
+    // a joint smooth to rounding is no jump
+    if (size > 1e-13 * Math.max(Math.abs(value), Math.abs(toValue))) {
+      jumps.push({ value: size, slope: Math.abs(toSlope - slope) });
+    } else {
+      slopeVariation += Math.abs(toSlope - slope);
+    }
+  };
+  for (const part of parts) {
+    if (part.from > span) break;
+    if (part.from > reached && Number.isFinite(reached)) {
+      jump(0, 0);
+      value = 0;
+      slope = 0;
+    }
+    const h = Math.min(part.to, span) - part.from;
+    const ends = partEnds(part, h);
+    jump(ends.value0, ends.slope0);
+    variation += ends.variation;
+    slopeVariation += ends.slopeVariation;
+    largest = Math.max(largest, ends.largest);
+    largestRate = Math.max(largestRate, ends.largestRate);
+    value = ends.value1;
+    slope = ends.slope1;
+    reached = part.to;
+  }
+  if (reached <= span) jump(0, 0);
+  const total = kicks.reduce((sum, kick) => (kick.time <= span ? sum + Math.abs(kick.amount) : sum), 0);
+  return {
+    jumps,
+    variation,
+    slopeVariation,
+    largest,
+    largestRate,
+    weighedKicks: () => total,
+    harmonic: harmonicOf(parts),
+    weighed: (gamma, onValue, onSlope) => {
+      const sudden = jumps.reduce((sum, one) => sum + Math.hypot(one.value * onValue, one.slope * onSlope), 0);
+      const held = Math.min(span, gamma > 0 ? 1 / gamma : Number.POSITIVE_INFINITY);
+      const steady = Math.min(variation, largestRate * held) * onValue;
+      return sudden + steady + slopeVariation * onSlope;
+    },
+  };
+}
+
+interface PartEnds {
+  readonly value0: number;
+  readonly slope0: number;
+  readonly value1: number;
+  readonly slope1: number;
+  readonly variation: number;
+  readonly slopeVariation: number;
+  readonly largest: number;
+  readonly largestRate: number;
+}
+
+function partEnds(part: HistoryPart, h: number): PartEnds {
+  if (part.kind === 'linear') {
+    const value1 = part.value + h * (part.slope + 0.5 * h * part.curve);
+    const slope1 = part.slope + h * part.curve;
+    const largestRate = Math.max(Math.abs(part.slope), Math.abs(slope1));
+    return {
+      value0: part.value,
+      slope0: part.slope,
+      value1,
+      slope1,
+      variation: part.curve === 0 ? Math.abs(value1 - part.value) : largestRate * h,
+      slopeVariation: Math.abs(slope1 - part.slope),
+      largest: Math.max(Math.abs(part.value), Math.abs(value1)) + 0.125 * h * h * Math.abs(part.curve),
+      largestRate,
+    };
+  }
+  let sum: PartEnds = {
+    value0: 0,
+    slope0: 0,
+    value1: 0,
+    slope1: 0,
+    variation: 0,
+    slopeVariation: 0,
+    largest: 0,
+    largestRate: 0,
+  };
+  for (const { amplitude, rate } of part.forcings) {
+    const size = modulus(amplitude);
+    const omega = rate.im;
+    const phase = Math.atan2(amplitude.im, amplitude.re);
+    const end = phase + omega * h;
+    const growth = Math.exp(Math.max(0, rate.re * h));
+    const speed = multiply(rate, amplitude);
+    const turn = { re: Math.exp(rate.re * h) * Math.cos(omega * h), im: Math.exp(rate.re * h) * Math.sin(omega * h) };
+    const pure = rate.re === 0;
+    const pace = modulus(rate) * size * growth;
+    sum = {
+      value0: sum.value0 + amplitude.re,
+      slope0: sum.slope0 + speed.re,
+      value1: sum.value1 + multiply(amplitude, turn).re,
+      slope1: sum.slope1 + multiply(speed, turn).re,
+      variation: sum.variation + (pure ? size * cosineVariation(phase, end) : pace * h),
+      slopeVariation:
+        sum.slopeVariation +
+        (pure
+          ? size * Math.abs(omega) * cosineVariation(phase + 0.5 * Math.PI, end + 0.5 * Math.PI)
+          : pace * modulus(rate) * h),
+      largest: sum.largest + size * growth,
+      largestRate: sum.largestRate + pace,
+    };
+  }
+  return sum;
+}
+
+/** Total variation of cos between two angles. */
+function cosineVariation(from: number, to: number): number {
+  const gathered = (angle: number): number => {
+    const halves = Math.floor(angle / Math.PI);
+    return 2 * halves + (1 - Math.cos(angle - halves * Math.PI));
+  };
+  return Math.abs(gathered(to) - gathered(from));
+}
+
+function harmonicOf(parts: readonly HistoryPart[]): HistoryMeasures['harmonic'] {
+  const [only] = parts;
+  if (parts.length !== 1 || only.kind !== 'wave' || Number.isFinite(only.to)) return null;
+  if (only.forcings.length !== 1 || only.forcings[0].rate.re !== 0) return null;
+  return { amplitude: modulus(only.forcings[0].amplitude), omega: Math.abs(only.forcings[0].rate.im) };
+}
+
+/** Measures of a long record, all of it (a longer span than needed only widens). Cost O(samples). */
+export function measureRecord(drive: RecordDrive): HistoryMeasures {
+  const { value, slope, curve, kick, interval: h, after } = drive;
+  const count = value.length;
+  let variation = 0;
+  let slopeVariation = 0;
+  let largest = 0;
+  let largestRate = 0;
+  let reached = 0;
+  let before = 0;
+  for (let i = 0; i < count; i++) {
+    const end = slope[i] + (curve ? h * curve[i] : 0);
+    const rate = Math.max(Math.abs(slope[i]), Math.abs(end));
+    // joints are continuous in p but for rounding and for kicks of y′ under drag
+    variation += rate * h + (i > 0 ? Math.abs(value[i] - reached) : 0);
+    slopeVariation += (i > 0 ? Math.abs(slope[i] - before) : 0) + Math.abs(end - slope[i]);
+    largest = Math.max(largest, Math.abs(value[i]), Math.abs(value[i] + rate * h));
+    largestRate = Math.max(largestRate, rate);
+    reached = value[i] + h * (slope[i] + (curve ? 0.5 * h * curve[i] : 0));
+    before = end;
+  }
+  const jumps = [
+    { value: Math.abs(value[0]), slope: Math.abs(slope[0]) },
+    { value: Math.abs(reached - after), slope: Math.abs(before) },
+  ];
+  return {
+    jumps,
+    variation,
+    slopeVariation,
+    largest,
+    largestRate,
+    weighedKicks: (gamma) => {
+      const fade = Math.exp(-gamma * h);
+      let held = 0;
+      let most = 0;
+      for (const one of kick ?? []) {
+        held = held * fade + Math.abs(one);
+        most = Math.max(most, held);
+      }
+      return most;
+    },
+    harmonic: null,
+    weighed: (gamma, onValue, onSlope) => weighRecord(drive, gamma, onValue, onSlope),
+  };
+}
+
+/** One recurrence a sample: what was gathered fades by e^{−γh}, an interval's change by its mean weight. */
+function weighRecord(drive: RecordDrive, gamma: number, onValue: number, onSlope: number): number {
+  const { value, slope, curve, interval: h, after } = drive;
+  const fade = Math.exp(-gamma * h);
+  const mean = gamma * h > 1e-8 ? -Math.expm1(-gamma * h) / (gamma * h) : 1;
+  let held = Math.hypot(onValue * value[0], onSlope * slope[0]);
+  let most = held;
+  let before = slope[0];
+  let reached = value[0];
+  for (let i = 0; i < value.length; i++) {
+    const end = slope[i] + (curve ? h * curve[i] : 0);
+    const joint = i > 0 ? onSlope * Math.abs(slope[i] - before) + onValue * Math.abs(value[i] - reached) : 0;
+    const rate = Math.max(Math.abs(slope[i]), Math.abs(end));
+    held += joint;
+    most = Math.max(most, held);
+    held = held * fade + (onValue * rate * h + onSlope * Math.abs(end - slope[i])) * mean;
+    most = Math.max(most, held);
+    reached = value[i] + h * (slope[i] + (curve ? 0.5 * h * curve[i] : 0));
+    before = end;
+  }
+  return Math.max(most, held + Math.hypot(onValue * (reached - after), onSlope * before));
+}
