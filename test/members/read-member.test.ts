@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { Fault } from '../../src/faults/fault.ts';
+import { lossFactor } from '../../src/members/modal-damping.ts';
 import { samePlace, snapToNode } from '../../src/members/node-layout.ts';
 import { readMember } from '../../src/members/read-member.ts';
 import type { Bar, Cable, Member, Shaft, ShearColumn, Wave } from '../../src/spec/types.ts';
@@ -248,6 +249,16 @@ describe('what cannot be solved as posed is refused', () => {
     expect(codes(cable({ damping: { type: 'loss-factor', value: 0.02 } }))).toEqual([
       ['loss-factor-in-time', '/member/damping'],
     ]);
+  });
+
+  it('a loss factor describes a steady state only, and is no part of modal damping', () => {
+    const lossy = cable({ damping: { type: 'loss-factor', value: 0.02 }, segments: dragged });
+    expect(lossFactor(lossy)).toBe(0.02);
+    expect(lossFactor(cable({ damping: { type: 'ratio', value: 0.02 } }))).toBe(0);
+    expect(lossFactor(cable())).toBe(0);
+    expect(readMember(lossy, 'steady')).toEqual(readMember(cable({ segments: dragged })));
+    const dashpot = { ...nothing, at: 5, dashpot: 3 };
+    expect(() => readMember({ ...lossy, attachments: [dashpot] } as Cable, 'steady')).toThrow(/dashpot 3/);
   });
 
   it('drag beside a node mass couples the modes, beside a fixed end it does not', () => {
