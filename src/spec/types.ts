@@ -398,11 +398,11 @@ export interface EnergyAccount {
   capturedFraction: number;
 }
 /**
- * Energy of the sampled fields, integrated, against the exact balance.
+ * Energy of the sampled fields, integrated, against the exact balance: initial energy and work of the loads less what is dissipated.
  */
 export interface EnergyBalance {
   /**
-   * Largest difference relative to the initial energy.
+   * Largest difference relative to the larger of the initial energy and the work of the loads.
    */
   maxRelativeDrift: number;
 }
@@ -668,7 +668,7 @@ export interface MemberSummary {
   totalMass: number;
 }
 /**
- * Motion of one mode of unit modal mass: q(t) = cosine·cos ωt + sine·sin ωt without damping; for a rigid-body mode cosine + sine·t.
+ * Motion of one mode of unit modal mass that the initial motion leaves: q(t) = cosine·cos ωt + sine·sin ωt without damping; for a rigid-body mode cosine + sine·t. Loads add to it.
  */
 export interface ModalCoefficient {
   /**
@@ -1247,7 +1247,7 @@ export interface ResponsesConvergence {
   modesNeeded?: number;
   energy: EnergyAccount;
   /**
-   * Limit of the displacement for all time, known before any mode: √(2·energy·flexibility), m (rad for a shaft).
+   * Limit of the displacement, known before any mode, m (rad for a shaft): √(2·energy·flexibility) for all time, and what the loads can add within the sampled time span.
    */
   ceiling: number;
   /**
