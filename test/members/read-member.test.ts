@@ -258,7 +258,7 @@ describe('what cannot be solved as posed is refused', () => {
     expect(lossFactor(cable())).toBe(0);
     expect(readMember(lossy, 'steady')).toEqual(readMember(cable({ segments: dragged })));
     const dashpot = { ...nothing, at: 5, dashpot: 3 };
-    expect(() => readMember({ ...lossy, attachments: [dashpot] } as Cable, 'steady')).toThrow(/dashpot 3/);
+    expect(() => readMember({ ...lossy, attachments: [dashpot] }, 'steady')).toThrow(/dashpot 3/);
   });
 
   it('drag beside a node mass couples the modes, beside a fixed end it does not', () => {
