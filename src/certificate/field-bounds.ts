@@ -42,7 +42,15 @@ export function certify(
   factor: Float64Array | null,
 ): QuantityCertificate {
   const { tail, verdict } = series;
-  const factors = tailFactors(quantity, tail.energies, member.damping, tail.kept, gaugeTime, released);
+  const factors = tailFactors(
+    quantity,
+    tail.energies,
+    member.damping,
+    tail.kept,
+    gaugeTime,
+    released,
+    tail.loads,
+  );
   const complete = verdict === 'complete';
   if (!factors.exists && !complete) {
     return {

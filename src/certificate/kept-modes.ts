@@ -2,10 +2,12 @@ import { fault } from '../faults/fault.ts';
 import type { WaveMember } from '../members/wave-member.ts';
 import { ModeSeries, type Mode } from '../modes/mode-series.ts';
 import { massProduct } from '../modes/mass-product.ts';
+import type { AppliedLoad } from '../motion/applied-loads.ts';
 import type { InitialState } from '../motion/initial-state.ts';
 import { ModalProjection, type ModalStart } from '../motion/modal-projection.ts';
 import type { Verdict } from '../spec/types.ts';
 import { EnergyTail } from './energy-tail.ts';
+import { LoadTails, NO_LOADS, type LoadTailFactors } from './load-tails.ts';
 import { controlStations, memberTail, type MemberTail } from './member-tail.ts';
 import type { TailEnergies } from './quantity-bounds.ts';
 import { Rounding } from './rounding.ts';
@@ -15,6 +17,8 @@ import { TailFlexibility } from './tail-flexibility.ts';
 export interface KeptMode {
   readonly mode: Mode;
   readonly start: ModalStart;
+  /** F_n of each load per unit drive, shape [loads]. */
+  readonly factors: readonly number[];
 }
 
 /** What is known of the tail after N modes, over the whole member. */
@@ -23,10 +27,15 @@ export interface TailState {
   readonly energies: TailEnergies;
   readonly member: MemberTail;
   readonly rounding: Rounding;
+  readonly loads: LoadTailFactors;
   /** Kinetic energy of the rigid-body mode, J. */
   readonly rigidEnergy: number;
   /** The whole elastic motion taken as a tail: its energies and the suprema of G and H. */
-  readonly whole: { readonly energies: TailEnergies; readonly member: MemberTail };
+  readonly whole: {
+    readonly energies: TailEnergies;
+    readonly member: MemberTail;
+    readonly loads: LoadTailFactors;
+  };
 }
 
 /** Decides whether the modes kept so far are enough: the error over its tolerance; ≤ 1 is enough. */
@@ -66,6 +75,8 @@ const NOTHING: TailEnergies = { energy: 0, first: 0, second: 0, nextOmega: Numbe
 export function keepModes(
   member: WaveMember,
   state: InitialState,
+  loads: readonly AppliedLoad[],
+  gaugeTime: number,
   limit: number,
   adaptive: boolean,
   span: number,
@@ -77,6 +88,7 @@ export function keepModes(
   const energy = new EnergyTail(state.energies);
   const flexibility = new TailFlexibility(member, controlStations(member));
   const rounding = new Rounding(span, series.frequencies.travelTime, member.segmentCount);
+  const loadTails = new LoadTails(member, loads);
   const modes: KeptMode[] = [];
   const history: number[] = [];
   const mostHeld = Math.floor(heldNumbers / (4 * member.segmentCount));
@@ -84,17 +96,33 @@ export function keepModes(
   let rigidEnergy = 0;
   let whole: TailState['whole'] | null = null;
 
+  /** The elastic motion before any elastic mode is taken out, ω its lowest frequency. */
+  const wholeMotion = (omega: number, kept: number): TailState['whole'] => {
+    const [total, first, second] = state.energies;
+    return {
+      energies: {
+        energy: Math.max(0, total - rigidEnergy),
+        first: first ?? Number.POSITIVE_INFINITY,
+        second: second ?? Number.POSITIVE_INFINITY,
+        nextOmega: omega,
+      },
+      member: memberTail(member, flexibility, omega * omega),
+      loads: loadTails.factors(omega, kept, gaugeTime, span),
+    };
+  };
+
   let upcoming = series.next();
   for (;;) {
     const mode: Mode = upcoming as Mode;
     const start = projection.project(mode.shape);
     if (mode.frequency.omega === 0) rigidEnergy = start.energy;
-    else whole ??= wholeMotion(member, state, rigidEnergy, flexibility, mode.frequency.lower);
+    else whole ??= wholeMotion(mode.frequency.lower, modes.length);
     const previous = modes[modes.length - 1]?.mode;
     const shared = couplingOf(member, mode, previous);
     coupling = Math.max(coupling, shared);
-    modes.push({ mode, start });
-    rounding.add(mode, start);
+    const factors = loadTails.add(mode);
+    modes.push({ mode, start, factors });
+    rounding.add(mode, start, loads.length > 0 ? loadTails.amplitudes(mode, factors, span) : 0);
     energy.add(start.energy, mode.shape.lambda, rounding.slack, shared);
     flexibility.add(mode);
     upcoming = series.next();
@@ -106,8 +134,9 @@ export function keepModes(
         energies: NOTHING,
         member: { flexibility: 0, fluxInertia: 0 },
         rounding,
+        loads: NO_LOADS,
         rigidEnergy,
-        whole: whole ?? { energies: NOTHING, member: { flexibility: 0, fluxInertia: 0 } },
+        whole: whole ?? { energies: NOTHING, member: { flexibility: 0, fluxInertia: 0 }, loads: NO_LOADS },
       };
       requireConsistent(energy);
       return { modes, tail, energy, rounding, verdict: 'complete', modesNeeded: null, coupling };
@@ -116,7 +145,7 @@ export function keepModes(
     if (!adaptive && !last) continue;
 
     const nextOmega: number = upcoming.frequency.lower;
-    whole ??= wholeMotion(member, state, rigidEnergy, flexibility, nextOmega);
+    whole ??= wholeMotion(nextOmega, kept);
     const nextLambda = nextOmega * nextOmega;
     const tail: TailState = {
       kept,
@@ -128,6 +157,7 @@ export function keepModes(
       },
       member: memberTail(member, flexibility, nextLambda),
       rounding,
+      loads: loadTails.factors(nextOmega, kept, gaugeTime, span),
       rigidEnergy,
       whole,
     };
@@ -148,26 +178,6 @@ export function keepModes(
       });
     }
   }
-}
-
-/** The elastic motion before any elastic mode is taken out, ω_1 its lowest frequency. */
-function wholeMotion(
-  member: WaveMember,
-  state: InitialState,
-  rigidEnergy: number,
-  flexibility: TailFlexibility,
-  omega: number,
-): TailState['whole'] {
-  const [total, first, second] = state.energies;
-  return {
-    energies: {
-      energy: Math.max(0, total - rigidEnergy),
-      first: first ?? Number.POSITIVE_INFINITY,
-      second: second ?? Number.POSITIVE_INFINITY,
-      nextOmega: omega,
-    },
-    member: memberTail(member, flexibility, omega * omega),
-  };
 }
 
 function decide(ratio: number, roundingRatio: number, last: boolean, atFloor: boolean): Verdict | null {

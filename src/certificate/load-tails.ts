@@ -1,8 +1,9 @@
 import type { WaveMember } from '../members/wave-member.ts';
 import type { Mode } from '../modes/mode-series.ts';
+import { peakDisplacement } from '../modes/shape-figures.ts';
 import type { Stations } from '../modes/stations.ts';
 import type { AppliedLoad } from '../motion/applied-loads.ts';
-import type { HistoryMeasures } from '../motion/history-measures.ts';
+import { historyAmount, type HistoryMeasures } from '../motion/history-measures.ts';
 import { largestRatioAbove, smallestRatioAbove } from '../motion/modal-damping.ts';
 import { MovingTail } from './moving-tail.ts';
 import { TailFlexibility } from './tail-flexibility.ts';
@@ -21,12 +22,14 @@ export interface LoadTailFactors {
   readonly gaugeFlux: number;
   /** Acceleration averaged over τ: times √ΔG; infinite where none. */
   readonly gaugeAcceleration: number;
-  /** r.m.s. of velocity times √m, and of flux times √∫dx/k. */
+  /** r.m.s. of displacement and velocity times √m, and of flux times √∫dx/k. */
+  readonly rmsDisplacement: number;
   readonly rmsVelocity: number;
   readonly rmsFlux: number;
 }
 
-const NONE: LoadTailFactors = {
+/** No loads, or no mode left out. */
+export const NO_LOADS: LoadTailFactors = {
   displacement: 0,
   velocity: 0,
   flux: 0,
@@ -34,6 +37,7 @@ const NONE: LoadTailFactors = {
   gaugeAcceleration: 0,
   rmsVelocity: 0,
   rmsFlux: 0,
+  rmsDisplacement: 0,
 };
 
 /**
@@ -97,6 +101,28 @@ export class LoadTails {
     return factors;
   }
 
+  /**
+   * Amplitude √J that a mode can reach under the loads up to the span, for the rounding of its motion.
+   */
+  amplitudes(mode: Mode, factors: readonly number[], span: number): number {
+    const { omega } = mode.frequency;
+    if (omega === 0) return 0;
+    let amplitude = 0;
+    factors.forEach((factor, index) => {
+      const load = this.loads[index];
+      if (load.moving !== null) {
+        const peak = peakDisplacement(this.member, mode.shape) * Math.abs(load.moving.force);
+        amplitude += peak * Math.min(span, 1 / omega + span);
+        return;
+      }
+      const measures = load.measures as HistoryMeasures;
+      const kicks = measures.weighedKicks(0);
+      amplitude +=
+        Math.abs(factor) * (Math.min(totalVariation(measures) / omega, span * measures.largest) + kicks);
+    });
+    return amplitude;
+  }
+
   /** Factors of all loads together, given ω_{N+1}. */
   factors(nextOmega: number, kept: number, gaugeTime: number, span: number): LoadTailFactors {
     return this.loads.reduce((sum, _, index) => {
@@ -109,8 +135,9 @@ export class LoadTails {
         gaugeAcceleration: sum.gaugeAcceleration + one.gaugeAcceleration,
         rmsVelocity: sum.rmsVelocity + one.rmsVelocity,
         rmsFlux: sum.rmsFlux + one.rmsFlux,
+        rmsDisplacement: sum.rmsDisplacement + one.rmsDisplacement,
       };
-    }, NONE);
+    }, NO_LOADS);
   }
 
   private factorsOfLoad(
@@ -124,7 +151,7 @@ export class LoadTails {
     const moving = this.moving[index];
     const ratio = 2 * largestRatioAbove(damping, kept) + damping.massCoefficient / nextOmega;
     const drag = Math.hypot(1, ratio);
-    if (moving !== null) return moving.factors(nextOmega, drag, gaugeTime, span);
+    if (moving !== null) return moving.factors(nextOmega, ratio, gaugeTime, span);
     const load = this.loads[index];
     const measures = load.measures as HistoryMeasures;
     const c = Math.sqrt(this.complianceTail(index, nextOmega));
@@ -153,6 +180,7 @@ export class LoadTails {
       gaugeAcceleration: quiet && gaugeTime > 0 ? (2 * energy * f) / gaugeTime : Infinity,
       rmsVelocity: (energy + measures.largestRate / nextOmega) * source + kicked,
       rmsFlux: rough ? Infinity : rest * source + kicked,
+      rmsDisplacement: (rest * source + kicked) / nextOmega,
     };
   }
 
@@ -195,7 +223,8 @@ function reachOfHistory(measures: HistoryMeasures, member: WaveMember, omega: nu
     const slow = measures.weighed(0, ratio, 1 / omega);
     // jumps of p count whole, beside their slopes: √(Δp² + Δp′²/ω²)
     const jumped = measures.jumps.reduce(
-      (sum, jump) => sum + Math.hypot(jump.value, jump.slope / omega) - Math.hypot(ratio * jump.value, jump.slope / omega),
+      (sum, jump) =>
+        sum + Math.hypot(jump.value, jump.slope / omega) - Math.hypot(ratio * jump.value, jump.slope / omega),
       0,
     );
     const smooth = slow + Math.max(0, jumped);
@@ -222,7 +251,7 @@ function reachOfHistory(measures: HistoryMeasures, member: WaveMember, omega: nu
 }
 
 function totalVariation(measures: HistoryMeasures): number {
-  return measures.variation + measures.jumps.reduce((sum, jump) => sum + jump.value, 0);
+  return historyAmount(measures).whole;
 }
 
 /** inf of c_n/2 over the later modes. */

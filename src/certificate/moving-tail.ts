@@ -37,8 +37,9 @@ export class MovingTail {
     this.tails.add(mode);
   }
 
-  factors(nextOmega: number, drag: number, gaugeTime: number, span: number): LoadTailFactors {
+  factors(nextOmega: number, ratio: number, gaugeTime: number, span: number): LoadTailFactors {
     const { member, motion } = this;
+    const drag = Math.hypot(1, ratio);
     const lambda = nextOmega * nextOmega;
     const n = member.segmentCount;
     const v = motion.pace;
@@ -55,10 +56,11 @@ export class MovingTail {
       gain[i] = this.gainOf(i, mach[i], lambda);
       const travelling = rho > 0 ? 1 - s / (rho * lambda) : 0;
       const [g, h] = this.joined(i, lambda);
-      const wave = travelling > 0 ? Math.sqrt(g + h / (k * rho * travelling)) : rho === 0 ? Math.sqrt(g) : Infinity;
+      const wave =
+        travelling > 0 ? Math.sqrt(g + h / (k * rho * travelling)) : rho === 0 ? Math.sqrt(g) : Infinity;
       within = Math.max(within, gain[i] * wave);
       // a quasi-static part P G(x, vt) is taken out: D − 1 remains where it is smaller
-      restWithin = Math.max(restWithin, Math.min(gain[i] + 1, Math.abs(this.signedGain(i, mach[i], lambda) - 1)) * wave);
+      restWithin = Math.max(restWithin, this.restGain(i, gain[i], mach[i], ratio) * wave);
       roughest = Math.max(roughest, travelling > 0 ? Math.sqrt(h) / (rho * travelling) : 0);
     }
     let events = 0;
@@ -79,7 +81,27 @@ export class MovingTail {
       gaugeAcceleration: Infinity,
       rmsVelocity: Infinity,
       rmsFlux: Infinity,
+      rmsDisplacement: this.sonicMean(nextOmega, span),
     };
+  }
+
+  /** |D − 1| of the later modes at most: what is left of D beside the quasi-static part. */
+  private restGain(i: number, gain: number, mach: number, ratio: number): number {
+    const plain = this.member.foundation[i] === 0 && this.member.damping.stiffnessCoefficient === 0;
+    return plain ? Math.min(gain + 1, gain * Math.hypot(mach * mach, ratio * mach)) : gain + 1;
+  }
+
+  /**
+   * At the wave speed of a uniform undamped member only the mean square is bounded: mass norm at most
+   * (P/2)(t + 1/ω_{N+1}) √(ΔG + ΔH/Z²), plus the quasi-static part that was taken out.
+   */
+  private sonicMean(nextOmega: number, span: number): number {
+    const { member, motion } = this;
+    if (member.segmentCount !== 1 || member.foundation[0] > 0) return Infinity;
+    if (member.mass.some((mass) => mass > 0) || member.spring.some((spring) => spring > 0)) return Infinity;
+    const [g, h] = this.joined(0, nextOmega * nextOmega);
+    const wave = Math.sqrt(g + h / (member.stiffness[0] * member.inertia[0]));
+    return Math.abs(motion.force) * wave * (0.5 * (span + 1 / nextOmega) + 1 / nextOmega);
   }
 
   /** Largest |D| of the later modes on a segment; infinite at the wave speed. */

@@ -1,7 +1,9 @@
 import type { WaveMember } from '../members/wave-member.ts';
 import { ENDS, waveNumberSquare, type ModeShape } from '../modes/mode-shape.ts';
 import { peakDisplacement } from '../modes/shape-figures.ts';
+import type { AppliedLoad } from '../motion/applied-loads.ts';
 import { largestRatioAbove } from '../motion/modal-damping.ts';
+import { stillPeak } from '../motion/still-peaks.ts';
 import type { Quantity } from '../spec/types.ts';
 import type { RigidPart } from './field-bounds.ts';
 import type { KeptSeries } from './kept-modes.ts';
@@ -14,6 +16,7 @@ export interface PeakBasis {
   /** Largest G over the member, m/N. */
   readonly flexibility: number;
   readonly rigid: RigidPart;
+  readonly loads: readonly AppliedLoad[];
   readonly gaugeTime: number;
   readonly released: boolean;
   /** Latest sampled time, gauge time included, s. */
@@ -32,14 +35,14 @@ export function peakLimit(quantity: Quantity, basis: PeakBasis): number | null {
   const scale = quantity === 'stress' ? Math.max(...member.stressFactor) : 1;
 
   const { whole } = series.tail;
-  const all = tailFactors(quantity, whole.energies, damping, 0, gaugeTime, released);
+  const all = tailFactors(quantity, whole.energies, damping, 0, gaugeTime, released, whole.loads);
   const ceiling = all.exists
     ? product(all.onFlexibility, Math.sqrt(basis.flexibility)) +
       product(all.onFluxInertia, Math.sqrt(whole.member.fluxInertia))
     : Number.POSITIVE_INFINITY;
 
   const { tail } = series;
-  const rest = tailFactors(quantity, tail.energies, damping, tail.kept, gaugeTime, released);
+  const rest = tailFactors(quantity, tail.energies, damping, tail.kept, gaugeTime, released, tail.loads);
   const left =
     series.verdict === 'complete'
       ? 0
@@ -47,8 +50,8 @@ export function peakLimit(quantity: Quantity, basis: PeakBasis): number | null {
         ? product(rest.onFlexibility, Math.sqrt(tail.member.flexibility)) +
           product(rest.onFluxInertia, Math.sqrt(tail.member.fluxInertia))
         : Number.POSITIVE_INFINITY;
-  let modal = left;
-  if (Number.isFinite(left)) {
+  let modal = basis.loads.length > 0 ? Number.POSITIVE_INFINITY : left;
+  if (Number.isFinite(modal)) {
     for (const { mode, start } of series.modes) {
       const { omega } = mode.frequency;
       if (omega === 0) continue;
@@ -57,17 +60,34 @@ export function peakLimit(quantity: Quantity, basis: PeakBasis): number | null {
         shape * modalAmplitude(quantity, omega, Math.sqrt(2 * start.energy), member, mode.frequency.order);
     }
   }
-  const elastic = Math.min(ceiling, modal);
+  const still = stillPeak(member, basis.loads, quantity, basis.flexibility, gaugeTime, span);
+  const elastic = Math.min(ceiling, modal) + still;
+  const pushed = rigidPush(basis);
+  const path = rigid.position + rigid.velocity * span + 0.5 * pushed * span * span;
+  const speed = rigid.velocity + pushed * span;
   const drift = {
-    displacement: rigid.position + rigid.velocity * span,
-    relativeDisplacement: rigid.position + rigid.velocity * span,
-    velocity: rigid.velocity,
-    acceleration: rigid.velocity * damping.massCoefficient,
+    displacement: path,
+    relativeDisplacement: path,
+    velocity: speed,
+    acceleration: speed * damping.massCoefficient + pushed,
     force: 0,
     stress: 0,
   }[quantity];
   const limit = (elastic + drift) * scale * (1 + 1e-12);
   return Number.isFinite(limit) ? limit : null;
+}
+
+/** Largest acceleration of the rigid-body mode under the loads, m/s². */
+function rigidPush(basis: PeakBasis): number {
+  const [first] = basis.series.modes;
+  if (first.mode.frequency.omega > 0) return 0;
+  const height = first.mode.shape.ends[0];
+  return basis.loads.reduce((sum, load, index) => {
+    const drive = load.moving
+      ? Math.abs(load.moving.force) * height
+      : Math.abs(first.factors[index]) * (load.measures?.largest ?? 0);
+    return sum + drive * height;
+  }, 0);
 }
 
 /** Largest |q|, |q′|, |q″| or |q + β q′| of a mode of amplitude √2E. */

@@ -1,6 +1,7 @@
 import type { ModalDamping } from '../members/wave-member.ts';
 import { largestRatioAbove } from '../motion/modal-damping.ts';
 import type { Quantity } from '../spec/types.ts';
+import { NO_LOADS, type LoadTailFactors } from './load-tails.ts';
 
 /** Which kind of statement a bound makes. */
 export type BoundKind = 'pointwise' | 'gauge-average' | 'rms';
@@ -41,6 +42,7 @@ export interface TailFactors {
  * Under stiffness-proportional damping β the flux is the total k(u_x + β u_xt). For a release from rest
  * its bound takes √(1 + (2ζ + α/ω_{N+1})²); with an initial velocity it needs E² as well.
  *
+ * @param loads what loads leave out, added to everything ({@link LoadTails})
  * @param released whether the motion starts from rest (no initial velocity)
  */
 export function tailFactors(
@@ -50,6 +52,7 @@ export function tailFactors(
   kept: number,
   gaugeTime: number,
   released: boolean,
+  loads: LoadTailFactors,
 ): TailFactors {
   const zeta = largestRatioAbove(damping, kept);
   const beta = damping.stiffnessCoefficient;
@@ -60,17 +63,33 @@ export function tailFactors(
   const gauge = 2 / gaugeTime;
   switch (quantity) {
     case 'displacement':
-    case 'relativeDisplacement':
-      return { kind: 'pointwise', onFlexibility: e0, onFluxInertia: 0, exists: true, rmsNumerator: Infinity };
+    case 'relativeDisplacement': {
+      const value = e0 + loads.displacement;
+      const exists = Number.isFinite(value);
+      return {
+        kind: exists ? 'pointwise' : 'rms',
+        onFlexibility: exists ? value : 0,
+        onFluxInertia: 0,
+        exists,
+        rmsNumerator: e0 / tail.nextOmega + loads.rmsDisplacement,
+      };
+    }
     case 'velocity':
-      return choose(e1, gaugeTime > 0 ? gauge * e0 : Infinity, 'flexibility', e0);
+      return choose(
+        e1 + loads.velocity,
+        gaugeTime > 0 ? gauge * (e0 + loads.displacement) : Infinity,
+        'flexibility',
+        e0 + loads.rmsVelocity,
+      );
     case 'acceleration': {
       const factor = released ? 1 : beta > 0 ? Infinity : drag;
+      // a load gives every mode an acceleration of its own at once: only averages are bounded
+      const loaded = loads === NO_LOADS ? 0 : Infinity;
       return choose(
-        times(factor, e2),
-        gaugeTime > 0 ? gauge * e1 : Infinity,
+        times(factor, e2) + loaded,
+        gaugeTime > 0 ? gauge * e1 + loads.gaugeAcceleration : Infinity,
         'flexibility',
-        times(factor, e1),
+        times(factor, e1) + loaded,
       );
     }
     case 'force':
@@ -78,7 +97,12 @@ export function tailFactors(
       const factor = released && beta > 0 ? drag : 1;
       const pointwise = beta > 0 && !released ? e1 + beta * e2 : factor * e1;
       const rms = beta > 0 && !released ? Infinity : factor * e0;
-      return choose(pointwise, gaugeTime > 0 ? gauge * drag * e0 : Infinity, 'flux', rms);
+      return choose(
+        pointwise + loads.flux,
+        gaugeTime > 0 ? gauge * drag * e0 + loads.gaugeFlux : Infinity,
+        'flux',
+        rms + loads.rmsFlux,
+      );
     }
   }
 

@@ -33,21 +33,25 @@ export class Rounding {
     this.segments = segments;
   }
 
-  /** Adds a kept mode. */
-  add(mode: Mode, start: ModalStart): void {
+  /**
+   * Adds a kept mode.
+   *
+   * @param forced amplitude √J that loads can give it
+   */
+  add(mode: Mode, start: ModalStart, forced = 0): void {
     const { omega, lower, upper } = mode.frequency;
     const half = 0.5 * (upper - lower);
     const shapeError = omega * this.travelTime * (half / (omega || 1) + EPS) + 8 * EPS * (this.segments + 8);
     const coefficient = shapeError * (start.positionScale + start.velocityScale);
     const phase = Math.min(2, this.span * (half + 4 * EPS * omega) + 16 * EPS);
     const amplitude = Math.sqrt(2 * start.energy);
-    const error = amplitude * (phase + shapeError) + coefficient;
+    const error = (amplitude + forced) * (phase + shapeError) + coefficient;
     this.slack = amplitude * coefficient + coefficient * coefficient;
     const lambda = omega * omega;
     let weight = 1;
     for (let level = 0; level < 4; level++) {
       this.squares[level] += weight * error * error;
-      this.magnitudes[level] += weight * 2 * start.energy;
+      this.magnitudes[level] += weight * (amplitude + forced) ** 2;
       weight *= lambda;
     }
     this.count++;

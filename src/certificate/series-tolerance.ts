@@ -1,5 +1,6 @@
 import type { WaveMember } from '../members/wave-member.ts';
 import type { ResponsesSeries } from '../spec/types.ts';
+import { totalMass } from '../spectrum/spectrum-size.ts';
 import type { Shortfall, TailState } from './kept-modes.ts';
 import { tailFactors } from './quantity-bounds.ts';
 
@@ -8,13 +9,15 @@ const USUAL_TOLERANCE = 1e-3;
 
 /** Error of the displacement anywhere on the member within the span, m: tail and rounding. */
 export function displacementBound(tail: TailState, flexibility: number): number {
-  const left = Math.sqrt(2 * tail.energies.energy * tail.member.flexibility);
+  const left =
+    (Math.sqrt(2 * tail.energies.energy) + tail.loads.displacement) * Math.sqrt(tail.member.flexibility);
   return left + displacementRounding(tail, flexibility);
 }
 
-/** √(2E G) over the member, elastic part: the displacement never exceeds it, m. */
-export function displacementCeiling(tail: TailState, flexibility: number): number {
-  return Math.sqrt(2 * tail.whole.energies.energy * flexibility);
+/** √(2E G) over the member and what loads can add: the elastic displacement never exceeds it, m. */
+export function displacementCeiling(tail: TailState, flexibility: number, still: number): number {
+  const reach = Math.sqrt(2 * tail.whole.energies.energy) + tail.whole.loads.displacement;
+  return reach * Math.sqrt(flexibility) + still;
 }
 
 /**
@@ -25,6 +28,7 @@ export function displacementCeiling(tail: TailState, flexibility: number): numbe
  * count here and is reported with its own verdict; alone it leaves the usual displacement tolerance.
  *
  * @param flexibility largest G over the member, m/N
+ * @param still upper limit of the quasi-static displacement, m
  */
 export function shortfallOf(
   series: ResponsesSeries,
@@ -32,12 +36,18 @@ export function shortfallOf(
   flexibility: number,
   gaugeTime: number,
   released: boolean,
+  still: number,
 ): Shortfall {
   const wanted = 'tolerances' in series ? series.tolerances : {};
   const relative = 'relativeTolerance' in series ? series.relativeTolerance : USUAL_TOLERANCE;
   return (tail) => {
     const force = wanted.force === undefined ? null : forceBound(tail, member, gaugeTime, released);
-    const ceiling = displacementCeiling(tail, flexibility);
+    const ceiling = displacementCeiling(tail, flexibility, still);
+    if (!Number.isFinite(tail.loads.displacement)) {
+      // a force that travels with the wave: only the mean square can be waited for, against the static shape
+      const mean = tail.loads.rmsDisplacement / Math.sqrt(totalMass(member));
+      return { ratio: Number.isFinite(mean) ? share(mean, relative * still, mean) : 0, roundingRatio: 0 };
+    }
     const tolerance = wanted.displacement ?? (force === null ? relative * ceiling : Number.POSITIVE_INFINITY);
     const ratio = Math.max(
       share(displacementBound(tail, flexibility), tolerance, ceiling),
@@ -61,7 +71,15 @@ function forceBound(
   gaugeTime: number,
   released: boolean,
 ): { bound: number; rounding: number } | null {
-  const factors = tailFactors('force', tail.energies, member.damping, tail.kept, gaugeTime, released);
+  const factors = tailFactors(
+    'force',
+    tail.energies,
+    member.damping,
+    tail.kept,
+    gaugeTime,
+    released,
+    tail.loads,
+  );
   if (!factors.exists) return null;
   const rounding =
     (gaugeTime > 0 ? (4 / gaugeTime) * tail.rounding.level(0) : tail.rounding.level(1)) *

@@ -11,8 +11,10 @@ import { modalForce, type LoadShape } from './load-shape.ts';
 import { loadedStatic, type LoadedStatic } from './loaded-static.ts';
 import { MovingForceMotion } from './moving-force.ts';
 import { RecordMotion, type RecordDrive } from './record-motion.ts';
+import { piecePhase, pieceValue } from './piecewise-field.ts';
 import { place, shapePieces, type GivenShape } from './shape-pieces.ts';
 import { supportShape, type SupportShape } from './support-shape.ts';
+import { gauss } from './wave-integrals.ts';
 
 /** One load, ready for modes: its factor of each, its drive in time, its static response. */
 export interface AppliedLoad {
@@ -31,6 +33,8 @@ export interface AppliedLoad {
   /** Whether the load has a finite mass norm, and that norm ∫f²/ρ + Σf²/M. */
   readonly smooth: boolean;
   readonly massNorm: number;
+  /** Largest flux that a unit drive can cause statically, N: the sum of |f|. */
+  readonly totalForce: number;
   /** Place of a point force, or null. */
   readonly point: LoadShape['point'];
   /** Measures of the drive up to the span; null for a moving force. */
@@ -49,7 +53,12 @@ export function readLoads(member: WaveMember, loads: readonly Load[], span: numb
       case 'point-force':
         return shapedLoad(member, pointShape(member, load.at), readHistory(load.history), span);
       case 'distributed-force':
-        return shapedLoad(member, distributedShape(member, load.profile as GivenShape), readHistory(load.history), span);
+        return shapedLoad(
+          member,
+          distributedShape(member, load.profile as GivenShape),
+          readHistory(load.history),
+          span,
+        );
       case 'body-force':
         return shapedLoad(member, bodyShape(member), readHistory(load.history), span);
       case 'end-motion':
@@ -83,7 +92,8 @@ function distributedShape(member: WaveMember, profile: GivenShape): LoadShape {
   const pieces = shapePieces(member, [profile]);
   const nodes = new Float64Array(member.segmentCount + 1);
   const smooth = pieces.every(
-    (piece) => member.inertia[piece.segment] > 0 || (piece.waves.length === 0 && piece.powers.every((c) => c === 0)),
+    (piece) =>
+      member.inertia[piece.segment] > 0 || (piece.waves.length === 0 && piece.powers.every((c) => c === 0)),
   );
   // ∫f²/ρ is the mass form of f/ρ
   const fields = pieces.map((piece) => {
@@ -127,6 +137,7 @@ function shapedLoad(member: WaveMember, shape: LoadShape, history: TimeHistory, 
     support: null,
     smooth: shape.smooth,
     massNorm: shape.massNorm,
+    totalForce: totalForce(shape),
     point: shape.point,
     measures: drive ? measureRecord(drive) : measureParts(history.parts, [], span),
     moving: null,
@@ -185,6 +196,7 @@ function supportLoad(
     support: { shape, motion },
     smooth: true,
     massNorm: shape.inertia,
+    totalForce: totalForce(shape.load),
     point: null,
     measures: motion.record ? measureRecord(motion.record) : measureParts(motion.drive, motion.kicks, span),
     moving: null,
@@ -202,8 +214,20 @@ function movingLoad(member: WaveMember, force: number, speed: number, start: num
     support: null,
     smooth: false,
     massNorm: 0,
+    totalForce: Math.abs(force),
     point: null,
     measures: null,
     moving,
   };
+}
+
+/** ∫|f| + Σ|f_j|, at most. */
+function totalForce(shape: LoadShape): number {
+  let total = shape.point === null ? 0 : 1;
+  for (const piece of shape.pieces) {
+    total += gauss(piece.length, 2 * piecePhase(piece) + 6, (xi) => Math.abs(pieceValue(piece, xi).value));
+  }
+  for (const force of shape.nodes) total += Math.abs(force);
+  // kinks of |f| inside a cell cost the quadrature a little
+  return total * (shape.pieces.length > 0 ? 1.02 : 1);
 }

@@ -60,6 +60,48 @@ export class SupportMotion {
     this.drive = this.parts.flatMap((part) => driveOf(part, drag));
   }
 
+  /** Limits of |y| and |y′| up to a time: the largest on a grid and what may lie between. */
+  peaks(span: number): { readonly position: number; readonly velocity: number } {
+    if (this.recorded !== null) return this.recorded.peaks(span);
+    let position = 0;
+    let velocity = 0;
+    for (const part of this.parts) {
+      if (part.from > span) break;
+      const length = Math.min(part.to, span) - part.from;
+      const quickest = part.forcings.reduce((most, { rate }) => Math.max(most, Math.abs(rate.im)), 0);
+      const count = Math.min(4096, Math.max(32, Math.ceil(length * quickest * 4)));
+      const gap = length / count;
+      const pace =
+        Math.abs(part.acceleration) +
+        Math.abs(part.jerk) * length +
+        part.forcings.reduce((sum, { amplitude }) => sum + Math.hypot(amplitude.re, amplitude.im), 0);
+      let placed = 0;
+      let moved = 0;
+      for (let m = 0; m <= count; m++) {
+        const state = stateIn(part, m * gap);
+        placed = Math.max(placed, Math.abs(state.position));
+        moved = Math.max(moved, Math.abs(state.velocity));
+      }
+      moved += 0.5 * gap * pace;
+      velocity = Math.max(velocity, moved);
+      position = Math.max(position, placed + 0.5 * gap * moved);
+    }
+    return { position, velocity };
+  }
+
+  /** ∫y up to each time, m·s. */
+  integrals(times: Float64Array): Float64Array {
+    if (this.recorded !== null) return this.recorded.integrals(times);
+    return times.map((t) => {
+      let total = 0;
+      for (const part of this.parts) {
+        const s = Math.min(t, part.to) - part.from;
+        if (s > 0) total += integralIn(part, s);
+      }
+      return total;
+    });
+  }
+
   /** y‴ from the right (0 between samples of a displacement). */
   jerkAt(t: number): number {
     if (this.recorded !== null) return this.recorded.jerkAt(t);
@@ -103,6 +145,24 @@ function stateIn(part: MotionPart, s: number): SupportState {
     position += second.re - secondThere.re - firstThere.re * s;
   }
   return { position, velocity, acceleration };
+}
+
+/** ∫y over the first s of a part. */
+function integralIn(part: MotionPart, s: number): number {
+  const quadratic = part.acceleration / 6 + (s * part.jerk) / 24;
+  let total = s * (part.position + s * (0.5 * part.velocity + s * quadratic));
+  for (const { amplitude, rate } of part.forcings) {
+    const now = multiply(amplitude, exponential({ re: rate.re * s, im: rate.im * s }));
+    const [first, second, third] = [1, 2, 3].map((power) => divideBy(amplitude, rate, power));
+    total += divideBy(now, rate, 3).re - third.re - second.re * s - 0.5 * first.re * s * s;
+  }
+  return total;
+}
+
+function divideBy(value: Complex, rate: Complex, power: number): Complex {
+  let result = value;
+  for (let m = 0; m < power; m++) result = divide(result, rate);
+  return result;
 }
 
 /** Parts of an acceleration history, integrated from rest; silence between and after them drifts on. */
@@ -153,7 +213,15 @@ function differentiate(given: readonly HistoryPart[]): MotionPart[] {
     }
     const next = given[index + 1]?.from ?? Number.POSITIVE_INFINITY;
     if (part.to < next) {
-      parts.push({ from: part.to, to: next, position: 0, velocity: 0, acceleration: 0, jerk: 0, forcings: [] });
+      parts.push({
+        from: part.to,
+        to: next,
+        position: 0,
+        velocity: 0,
+        acceleration: 0,
+        jerk: 0,
+        forcings: [],
+      });
     }
   });
   return parts;
@@ -190,7 +258,17 @@ function driveOf(part: MotionPart, drag: number): HistoryPart[] {
   const forcings = part.forcings.map(({ amplitude, rate }) => {
     const integral: Complex = divide(amplitude, rate);
     constant -= drag * integral.re;
-    return { amplitude: { re: amplitude.re + drag * integral.re, im: amplitude.im + drag * integral.im }, rate };
+    return {
+      amplitude: { re: amplitude.re + drag * integral.re, im: amplitude.im + drag * integral.im },
+      rate,
+    };
   });
-  return [{ kind: 'wave', from, to, forcings: [...forcings, { amplitude: complex(constant), rate: scale(complex(1), 0) }] }];
+  return [
+    {
+      kind: 'wave',
+      from,
+      to,
+      forcings: [...forcings, { amplitude: complex(constant), rate: scale(complex(1), 0) }],
+    },
+  ];
 }

@@ -68,7 +68,17 @@ export class ForcedMotion {
       const last = firstAtLeast(times, to);
       const relative = times.slice(first, last).map((t) => t - from);
       const lead = part < 0 ? 0 : from - parts[part].from;
-      this.stretches.push({ from, to, part, lead, kick, first, last, relative, table: new FreeMotionTable(relative) });
+      this.stretches.push({
+        from,
+        to,
+        part,
+        lead,
+        kick,
+        first,
+        last,
+        relative,
+        table: new FreeMotionTable(relative),
+      });
     });
     this.position = new Float64Array(times.length);
     this.velocity = new Float64Array(times.length);

@@ -76,7 +76,10 @@ export function measureParts(
     weighedKicks: () => total,
     harmonic: harmonicOf(parts),
     weighed: (gamma, onValue, onSlope) => {
-      const sudden = jumps.reduce((sum, one) => sum + Math.hypot(one.value * onValue, one.slope * onSlope), 0);
+      const sudden = jumps.reduce(
+        (sum, one) => sum + Math.hypot(one.value * onValue, one.slope * onSlope),
+        0,
+      );
       const held = Math.min(span, gamma > 0 ? 1 / gamma : Number.POSITIVE_INFINITY);
       const steady = Math.min(variation, largestRate * held) * onValue;
       return sudden + steady + slopeVariation * onSlope;
@@ -128,7 +131,10 @@ function partEnds(part: HistoryPart, h: number): PartEnds {
     const end = phase + omega * h;
     const growth = Math.exp(Math.max(0, rate.re * h));
     const speed = multiply(rate, amplitude);
-    const turn = { re: Math.exp(rate.re * h) * Math.cos(omega * h), im: Math.exp(rate.re * h) * Math.sin(omega * h) };
+    const turn = {
+      re: Math.exp(rate.re * h) * Math.cos(omega * h),
+      im: Math.exp(rate.re * h) * Math.sin(omega * h),
+    };
     const pure = rate.re === 0;
     const pace = modulus(rate) * size * growth;
     sum = {
@@ -232,4 +238,10 @@ function weighRecord(drive: RecordDrive, gamma: number, onValue: number, onSlope
     before = end;
   }
   return Math.max(most, held + Math.hypot(onValue * (reached - after), onSlope * before));
+}
+
+/** Jumps of p together, and its whole variation. */
+export function historyAmount(measures: HistoryMeasures): { readonly jumps: number; readonly whole: number } {
+  const jumps = measures.jumps.reduce((sum, jump) => sum + jump.value, 0);
+  return { jumps, whole: jumps + measures.variation };
 }

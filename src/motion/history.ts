@@ -94,7 +94,12 @@ export function recordParts(record: SampledRecord): LinearPart[] {
   const parts: LinearPart[] = [];
   for (let i = 0; i + 1 < values.length; i++) {
     parts.push(
-      line(start + i * interval, start + (i + 1) * interval, values[i], (values[i + 1] - values[i]) / interval),
+      line(
+        start + i * interval,
+        start + (i + 1) * interval,
+        values[i],
+        (values[i + 1] - values[i]) / interval,
+      ),
     );
   }
   const end = start + (values.length - 1) * interval;
@@ -110,7 +115,10 @@ export function historyAt(history: TimeHistory, t: number): { value: number; rat
     if (t < part.from || t >= part.to) continue;
     const h = t - part.from;
     if (part.kind === 'linear') {
-      return { value: part.value + h * (part.slope + 0.5 * h * part.curve), rate: part.slope + h * part.curve };
+      return {
+        value: part.value + h * (part.slope + 0.5 * h * part.curve),
+        rate: part.slope + h * part.curve,
+      };
     }
     let value = 0;
     let rate = 0;

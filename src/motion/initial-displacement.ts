@@ -5,6 +5,7 @@ import type { StaticResponse } from '../modes/static-response.ts';
 import type { PullShape, Shape } from '../spec/types.ts';
 import {
   nodeValuesOf,
+  pieceSlope,
   pieceValue,
   type Piece,
   type PiecewiseField,
@@ -40,10 +41,13 @@ export function readDisplacement(
   member: WaveMember,
   shapes: Shape | readonly Shape[] | undefined,
   response: StaticResponse | null,
+  supports: readonly StartedSupport[] = [],
 ): InitialDisplacement {
   const list = listOf(shapes);
   const given = list.filter((shape): shape is GivenShape => shape.type !== 'pull');
-  const pieces = shapePieces(member, given);
+  const pieces = shapePieces(member, given, [], (from, to, segment) => ({
+    waves: supports.map((support) => supportTerm(member, support, from, to, segment)),
+  }));
   requireContinuity(member, pieces);
   const pulls: HeldForce[] = [];
   list.forEach((shape, index) => {
@@ -51,6 +55,32 @@ export function readDisplacement(
     pulls.push(readPull(member, shape, response, shapePointer('displacement', shapes, index)));
   });
   return { pieces, pulls };
+}
+
+/** A support that is already displaced at t = 0: the motion is counted from its static shape. */
+export interface StartedSupport {
+  readonly pieces: readonly Piece[];
+  /** y(0), m. */
+  readonly position: number;
+}
+
+/** −y(0) r on a cell. */
+function supportTerm(
+  member: WaveMember,
+  support: StartedSupport,
+  from: number,
+  to: number,
+  segment: number,
+): WaveTerm {
+  const piece = support.pieces[segment];
+  const start = Math.max(0, from - member.position[segment]);
+  const end = Math.min(member.length[segment], to - member.position[segment]);
+  return {
+    square: -member.foundation[segment] / member.stiffness[segment],
+    value: -support.position * pieceValue(piece, start).value,
+    slope: -support.position * pieceSlope(piece, start).value,
+    farValue: -support.position * pieceValue(piece, end).value,
+  };
 }
 
 function readPull(

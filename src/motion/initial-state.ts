@@ -4,7 +4,12 @@ import { StaticResponse } from '../modes/static-response.ts';
 import type { InitialMotion } from '../spec/types.ts';
 import { canDriftFreely } from '../spectrum/spectrum-size.ts';
 import { massForm, piecesStrainForm, strainForm } from './field-energy.ts';
-import { readDisplacement, settle, type InitialDisplacement } from './initial-displacement.ts';
+import {
+  readDisplacement,
+  settle,
+  type InitialDisplacement,
+  type StartedSupport,
+} from './initial-displacement.ts';
 import { readVelocity, type InitialVelocity } from './initial-velocity.ts';
 import { listOf } from './shape-pieces.ts';
 import { acceleration, inEnergySpace } from './smoothness.ts';
@@ -26,10 +31,14 @@ export interface InitialState {
 }
 
 /** Reads and measures an initial motion. Faults: those of its two readers. Cost O(pieces). */
-export function readInitialState(member: WaveMember, initial: InitialMotion): InitialState {
+export function readInitialState(
+  member: WaveMember,
+  initial: InitialMotion,
+  supports: readonly StartedSupport[] = [],
+): InitialState {
   const response = canDriftFreely(member) ? null : new StaticResponse(member);
   const stretches = masslessStretches(member);
-  const given = readDisplacement(member, initial.displacement, response);
+  const given = readDisplacement(member, initial.displacement, response, supports);
   const velocity = readVelocity(member, initial, response);
   const displacement = settle(member, given, stretches);
 

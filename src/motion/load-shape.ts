@@ -44,4 +44,3 @@ export function modalForce(member: WaveMember, shape: ModeShape, load: LoadShape
   }
   return force;
 }
-

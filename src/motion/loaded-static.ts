@@ -36,7 +36,10 @@ function pointStatic(member: WaveMember, point: NonNullable<LoadShape['point']>)
   const { segment: j, distance: z } = point;
   return {
     compliance: source.flexibility(j, z),
-    at: (i, x) => ({ displacement: source.mutualFlexibility(i, x, j, z), flux: source.influence(i, x, j, z) }),
+    at: (i, x) => ({
+      displacement: source.mutualFlexibility(i, x, j, z),
+      flux: source.influence(i, x, j, z),
+    }),
   };
 }
 
@@ -95,8 +98,15 @@ class RestrainedStatic implements LoadedStatic {
     let compliance = 0;
     for (let i = 0; i < n; i++) {
       const decay = Math.sqrt(member.foundation[i] / member.stiffness[i]);
-      compliance += weighed(this.pieces[i], 0, member.length[i], 2 * decay, (x) => this.at(i, x).displacement);
-      compliance += load.nodes[i + 1] === 0 ? 0 : load.nodes[i + 1] * this.at(i, member.length[i]).displacement;
+      compliance += weighed(
+        this.pieces[i],
+        0,
+        member.length[i],
+        2 * decay,
+        (x) => this.at(i, x).displacement,
+      );
+      compliance +=
+        load.nodes[i + 1] === 0 ? 0 : load.nodes[i + 1] * this.at(i, member.length[i]).displacement;
     }
     if (load.nodes[0] !== 0) compliance += load.nodes[0] * this.at(0, 0).displacement;
     this.compliance = compliance;
@@ -169,7 +179,8 @@ class BalancedStatic implements LoadedStatic {
     let compliance = load.nodes[0] * this.at(0, 0).displacement;
     for (let i = 0; i < n; i++) {
       compliance += weighed(this.pieces[i], 0, member.length[i], 0, (x) => this.at(i, x).displacement);
-      if (load.nodes[i + 1] !== 0) compliance += load.nodes[i + 1] * this.at(i, member.length[i]).displacement;
+      if (load.nodes[i + 1] !== 0)
+        compliance += load.nodes[i + 1] * this.at(i, member.length[i]).displacement;
     }
     this.compliance = Math.max(0, compliance);
   }

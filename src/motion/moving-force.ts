@@ -1,7 +1,7 @@
 import type { WaveMember } from '../members/wave-member.ts';
 import type { Mode } from '../modes/mode-series.ts';
 import { evaluateShape, waveNumberSquare } from '../modes/mode-shape.ts';
-import type { HistoryPart } from './history.ts';
+import { historyIntegrals, type HistoryPart } from './history.ts';
 import { ForcedMotion, type LoadMover } from './forced-motion.ts';
 
 /** One stretch of the passage: distances from the near end of its segment, m, and times, s. */
@@ -22,6 +22,8 @@ export class MovingForceMotion {
   readonly force: number;
   /** |v|, m/s. */
   readonly pace: number;
+  /** v, m/s, positive towards the far end. */
+  readonly velocity: number;
   readonly start: number;
   /** Stretches in the order of passage: distances in the segment, times of entry and exit. */
   readonly passage: readonly Passage[];
@@ -32,6 +34,7 @@ export class MovingForceMotion {
     this.member = member;
     this.force = force;
     this.pace = Math.abs(speed);
+    this.velocity = speed;
     this.start = start;
     this.backwards = speed < 0;
     const n = member.segmentCount;
@@ -78,6 +81,11 @@ export class MovingForceMotion {
       add: (mode, rate, factor, q, v) =>
         forced.add(mode.frequency.omega, rate, factor, q, v, this.partsOf(mode)),
     };
+  }
+
+  /** ∫P φ_n(x(t)) up to each time. */
+  integrals(mode: Mode, times: Float64Array): Float64Array {
+    return historyIntegrals({ parts: this.partsOf(mode), record: null }, times);
   }
 
   /** P φ_n(x(t)) of a mode, one part a segment. */

@@ -54,7 +54,11 @@ export class RecordMotion {
       if (index === undefined) {
         index = this.offsets.length;
         known.set(key, index);
-        this.offsets.push(Math.max(0, t - drive.start - i * drive.interval) < 1e-9 * drive.interval ? 0 : t - drive.start - i * drive.interval);
+        this.offsets.push(
+          Math.max(0, t - drive.start - i * drive.interval) < 1e-9 * drive.interval
+            ? 0
+            : t - drive.start - i * drive.interval,
+        );
       }
       this.offsetIndex[j] = index;
     });
@@ -91,7 +95,9 @@ export class RecordMotion {
       const b = slope[i];
       const c = curve ? curve[i] : 0;
       while (j < this.afterFrom && interval[j] === i) {
-        const one = steps ? steps[this.offsetIndex[j]] : linearStep(omega, rate, this.offsets[this.offsetIndex[j]]);
+        const one = steps
+          ? steps[this.offsetIndex[j]]
+          : linearStep(omega, rate, this.offsets[this.offsetIndex[j]]);
         q[j] +=
           factor *
           (one.positionOfPosition * position +
@@ -132,8 +138,16 @@ export class RecordMotion {
       const end = this.drive.start + this.drive.value.length * this.drive.interval;
       for (let j = this.afterFrom; j < this.times.length; j++) {
         const one = linearStep(omega, rate, this.times[j] - end);
-        q[j] += factor * (one.positionOfPosition * position + one.positionOfVelocity * velocity + one.positionOfLoad * after);
-        v[j] += factor * (one.velocityOfPosition * position + one.velocityOfVelocity * velocity + one.velocityOfLoad * after);
+        q[j] +=
+          factor *
+          (one.positionOfPosition * position +
+            one.positionOfVelocity * velocity +
+            one.positionOfLoad * after);
+        v[j] +=
+          factor *
+          (one.velocityOfPosition * position +
+            one.velocityOfVelocity * velocity +
+            one.velocityOfLoad * after);
       }
       return;
     }

@@ -60,6 +60,46 @@ export class RecordedMotion {
     };
   }
 
+  /** Limits of |y| and |y′| up to a time. */
+  peaks(span: number): { readonly position: number; readonly velocity: number } {
+    const { position, velocity, acceleration, interval: h } = this;
+    let placed = 0;
+    let moved = 0;
+    let pace = 0;
+    const last = position.length - 1;
+    for (let i = 0; i <= last && this.start + i * h <= span; i++) {
+      placed = Math.max(placed, Math.abs(position[i]));
+      moved = Math.max(moved, Math.abs(velocity[i]));
+      if (acceleration !== null)
+        pace = Math.max(pace, Math.abs(acceleration[i]), Math.abs(acceleration[Math.min(i + 1, last)]));
+    }
+    moved += h * pace;
+    // within an interval, and on after the record
+    const drift = Math.max(0, span - (this.start + last * h)) * Math.abs(velocity[last]);
+    return { position: placed + h * moved + drift, velocity: moved };
+  }
+
+  /** ∫y up to each time. */
+  integrals(times: Float64Array): Float64Array {
+    const { position, velocity, acceleration, interval: h } = this;
+    const last = position.length - 1;
+    const within = (i: number, s: number): number => {
+      const a = acceleration === null ? 0 : acceleration[i];
+      const jerk = acceleration === null ? 0 : (acceleration[i + 1] - a) / h;
+      return s * (position[i] + s * (0.5 * velocity[i] + s * (a / 6 + (s * jerk) / 24)));
+    };
+    const sums = new Float64Array(position.length);
+    for (let i = 0; i < last; i++) sums[i + 1] = sums[i] + within(i, h);
+    return times.map((t) => {
+      const place = (t - this.start) / h;
+      const i = sampleBefore(place);
+      if (i < 0) return 0;
+      if (i < last) return sums[i] + within(i, Math.max(0, (place - i) * h));
+      const s = t - this.start - last * h;
+      return sums[last] + s * (position[last] + 0.5 * s * velocity[last]);
+    });
+  }
+
   /** y‴ from the right. */
   jerkAt(t: number): number {
     const { acceleration, interval: h } = this;

@@ -4,11 +4,21 @@ import type { Stations } from '../modes/stations.ts';
 import { ProductSum } from '../numerics/product-sum.ts';
 import type { Mode } from '../modes/mode-series.ts';
 import { dampingRate } from './modal-damping.ts';
+import type { AppliedLoad } from './applied-loads.ts';
 import { FreeMotionTable } from './free-motion-table.ts';
+import { LoadClock } from './load-clock.ts';
 import type { ModalStart } from './modal-projection.ts';
+import { addStillFields } from './still-fields.ts';
 
 /** Fields that are summed over modes; stress is force times a factor. */
-export type FieldKind = 'displacement' | 'velocity' | 'acceleration' | 'force';
+export type FieldKind = 'displacement' | 'relativeDisplacement' | 'velocity' | 'acceleration' | 'force';
+
+/** A mode with its initial state and its factor of each load. */
+export interface MovedMode {
+  readonly mode: Mode;
+  readonly start: ModalStart;
+  readonly factors: readonly number[];
+}
 
 /** Modes handled at once; also the length of a summation block. */
 const BLOCK = 64;
@@ -30,7 +40,8 @@ const TILE = 2048;
  */
 export function sampleMotion(
   member: WaveMember,
-  modes: readonly { readonly mode: Mode; readonly start: ModalStart }[],
+  modes: readonly MovedMode[],
+  loads: readonly AppliedLoad[],
   stations: Stations,
   times: Float64Array,
   kinds: readonly FieldKind[],
@@ -41,7 +52,7 @@ export function sampleMotion(
   const fields = new Map(kinds.map((kind) => [kind, new Float64Array(times.length * columns)]));
   for (let firstRow = 0; firstRow < times.length; firstRow += TILE) {
     const someTimes = times.subarray(firstRow, firstRow + TILE);
-    const clock = new ModalClock(member, someTimes, gaugeTime);
+    const clock = new ModalClock(member, loads, someTimes, gaugeTime);
     for (let firstColumn = 0; firstColumn < columns; firstColumn += TILE) {
       const tile = stationSlice(stations, firstColumn, firstColumn + TILE);
       const look = firstRow === 0 ? visit : null;
@@ -52,6 +63,7 @@ export function sampleMotion(
         const from = sums.get(kind) as Float64Array;
         const into = fields.get(kind) as Float64Array;
         const width = tile.segment.length;
+        if (loads.length > 0) addStillFields(member, loads, tile, someTimes, kind, gaugeTime, from);
         for (let row = 0; row < someTimes.length; row++) {
           const at = (firstRow + row) * columns + firstColumn;
           into.set(from.subarray(row * width, (row + 1) * width), at);
@@ -64,7 +76,7 @@ export function sampleMotion(
 
 function sumTile(
   member: WaveMember,
-  modes: readonly { readonly mode: Mode; readonly start: ModalStart }[],
+  modes: readonly MovedMode[],
   stations: Stations,
   clock: ModalClock,
   kinds: readonly FieldKind[],
@@ -81,12 +93,12 @@ function sumTile(
   for (let from = 0; from < modes.length; from += BLOCK) {
     const count = Math.min(BLOCK, modes.length - from);
     for (let m = 0; m < count; m++) {
-      const { mode, start } = modes[from + m];
+      const { mode } = modes[from + m];
       const u = displacement.subarray(m * columns, (m + 1) * columns);
       const p = flux.subarray(m * columns, (m + 1) * columns);
       sampler.sample(mode.shape, u, p);
       visit(mode, u, p);
-      clock.run(mode, start);
+      clock.run(modes[from + m]);
       for (const [kind, table] of tables) clock.fill(kind, table.subarray(m * rows, (m + 1) * rows));
     }
     for (const [kind, table] of tables) {
@@ -102,76 +114,117 @@ class ModalClock {
   /** Number of times. */
   readonly count: number;
   private readonly gaugeTime: number;
-  private readonly atTimes: FreeMotionTable;
-  private readonly atBegin: FreeMotionTable | null;
-  private readonly atEnd: FreeMotionTable | null;
-  private readonly now: [Float64Array, Float64Array];
-  private readonly first: [Float64Array, Float64Array];
-  private readonly second: [Float64Array, Float64Array];
+  private readonly now: Instant;
+  private readonly first: Instant | null;
+  private readonly second: Instant | null;
+  private readonly moves: boolean;
   private lambda = 0;
   private rate = 0;
 
-  constructor(member: WaveMember, times: Float64Array, gaugeTime: number) {
-    const table = (): [Float64Array, Float64Array] => [
-      new Float64Array(times.length),
-      new Float64Array(times.length),
-    ];
+  constructor(member: WaveMember, loads: readonly AppliedLoad[], times: Float64Array, gaugeTime: number) {
     this.member = member;
     this.count = times.length;
     this.gaugeTime = gaugeTime;
-    this.atTimes = new FreeMotionTable(times);
+    this.now = new Instant(member, loads, times, false);
     const begin = times.map((t) => Math.max(0, t - 0.5 * gaugeTime));
-    this.atBegin = gaugeTime > 0 ? new FreeMotionTable(begin) : null;
-    this.atEnd = gaugeTime > 0 ? new FreeMotionTable(begin.map((t) => t + gaugeTime)) : null;
-    this.now = table();
-    this.first = table();
-    this.second = table();
+    this.first = gaugeTime > 0 ? new Instant(member, loads, begin, true) : null;
+    this.second =
+      gaugeTime > 0
+        ? new Instant(
+            member,
+            loads,
+            begin.map((t) => t + gaugeTime),
+            true,
+          )
+        : null;
+    this.moves = loads.some((load) => load.moving !== null);
   }
 
-  run(mode: Mode, start: ModalStart): void {
-    const { omega, order } = mode.frequency;
-    this.lambda = mode.shape.lambda;
+  run(moved: MovedMode): void {
+    const { omega, order } = moved.mode.frequency;
+    this.lambda = moved.mode.shape.lambda;
     this.rate = dampingRate(this.member.damping, order, omega);
-    const { position, velocity } = start;
-    this.atTimes.fill(position, velocity, omega, this.rate, this.now[0], this.now[1]);
-    this.atBegin?.fill(position, velocity, omega, this.rate, this.first[0], this.first[1]);
-    this.atEnd?.fill(position, velocity, omega, this.rate, this.second[0], this.second[1]);
+    for (const instant of [this.now, this.first, this.second]) instant?.run(moved, this.rate);
   }
 
+  /** q less its quasi-static part F p/ω² (or its rate, acceleration, flux coordinate), or its average. */
   fill(kind: FieldKind, into: Float64Array): void {
-    const [q, v] = this.now;
-    const beta = this.member.damping.stiffnessCoefficient;
-    if (kind === 'displacement') {
-      into.set(q);
-    } else if (this.gaugeTime > 0) {
-      this.fillAverage(kind, into);
+    const { q, v, driven, drivenRate } = this.now;
+    const soft = this.lambda > 0 ? 1 / this.lambda : 0;
+    if (kind === 'displacement' || kind === 'relativeDisplacement') {
+      for (let j = 0; j < into.length; j++) into[j] = q[j] - soft * driven[j];
+    } else if (this.first !== null && this.second !== null) {
+      this.fillAverage(kind, this.first, this.second, into);
     } else if (kind === 'velocity') {
-      into.set(v);
+      for (let j = 0; j < into.length; j++) into[j] = v[j] - soft * drivenRate[j];
     } else if (kind === 'acceleration') {
-      for (let j = 0; j < into.length; j++) into[j] = -this.lambda * q[j] - this.rate * v[j];
-    } else if (beta === 0) {
-      into.set(q);
+      for (let j = 0; j < into.length; j++) into[j] = driven[j] - this.lambda * q[j] - this.rate * v[j];
     } else {
-      for (let j = 0; j < into.length; j++) into[j] = q[j] + beta * v[j];
+      const beta = this.member.damping.stiffnessCoefficient;
+      for (let j = 0; j < into.length; j++) into[j] = q[j] + beta * v[j] - soft * driven[j];
     }
   }
 
-  private fillAverage(kind: FieldKind, into: Float64Array): void {
-    const [q0, v0] = this.first;
-    const [q1, v1] = this.second;
+  private fillAverage(kind: FieldKind, first: Instant, second: Instant, into: Float64Array): void {
     const tau = this.gaugeTime;
+    const soft = this.lambda > 0 ? 1 / this.lambda : 0;
     if (kind === 'velocity') {
-      for (let j = 0; j < into.length; j++) into[j] = (q1[j] - q0[j]) / tau;
+      for (let j = 0; j < into.length; j++) {
+        into[j] = (second.q[j] - first.q[j] - soft * (second.driven[j] - first.driven[j])) / tau;
+      }
     } else if (kind === 'acceleration') {
-      for (let j = 0; j < into.length; j++) into[j] = (v1[j] - v0[j]) / tau;
+      for (let j = 0; j < into.length; j++) into[j] = (second.v[j] - first.v[j]) / tau;
     } else if (this.lambda === 0) {
       into.fill(0);
     } else {
       const drag = this.rate - this.member.damping.stiffnessCoefficient * this.lambda;
-      const factor = -1 / (this.lambda * tau);
+      const factor = -soft / tau;
       for (let j = 0; j < into.length; j++) {
-        into[j] = factor * (v1[j] - v0[j] + drag * (q1[j] - q0[j]));
+        into[j] = factor * (second.v[j] - first.v[j] + drag * (second.q[j] - first.q[j]));
+      }
+      if (this.moves) {
+        // a moving force has no static part outside: its own mean drive stays with the mode
+        const mean = second.movingIntegral(first);
+        for (let j = 0; j < into.length; j++) into[j] += (soft / tau) * mean[j];
       }
     }
+  }
+}
+
+/** Tables of one modal coordinate at one set of times. */
+class Instant {
+  readonly q: Float64Array;
+  readonly v: Float64Array;
+  private readonly free: FreeMotionTable;
+  private readonly loads: LoadClock | null;
+  private readonly none: Float64Array;
+
+  constructor(member: WaveMember, loads: readonly AppliedLoad[], times: Float64Array, integrates: boolean) {
+    this.q = new Float64Array(times.length);
+    this.v = new Float64Array(times.length);
+    this.none = new Float64Array(times.length);
+    this.free = new FreeMotionTable(times);
+    this.loads = loads.length > 0 ? new LoadClock(member, loads, times, integrates) : null;
+  }
+
+  get driven(): Float64Array {
+    return this.loads?.driven ?? this.none;
+  }
+
+  get drivenRate(): Float64Array {
+    return this.loads?.drivenRate ?? this.none;
+  }
+
+  run(moved: MovedMode, rate: number): void {
+    const { position, velocity } = moved.start;
+    this.free.fill(position, velocity, moved.mode.frequency.omega, rate, this.q, this.v);
+    this.loads?.add(moved.mode, rate, moved.factors, [this.q, this.v]);
+  }
+
+  /** ∫P φ_n(x(t)) between the times of another set and these. */
+  movingIntegral(from: Instant): Float64Array {
+    const here = this.loads?.movingIntegrals ?? this.none;
+    const there = from.loads?.movingIntegrals ?? this.none;
+    return here.map((value, j) => value - there[j]);
   }
 }

@@ -45,7 +45,12 @@ export function supportShape(member: WaveMember, end: 'near' | 'far' | 'both'): 
 }
 
 /** r and its flux at a place. */
-export function supportState(member: WaveMember, shape: SupportShape, segment: number, distance: number): StaticState {
+export function supportState(
+  member: WaveMember,
+  shape: SupportShape,
+  segment: number,
+  distance: number,
+): StaticState {
   const piece = shape.pieces[segment];
   return {
     displacement: pieceValue(piece, distance).value,

@@ -1,4 +1,14 @@
-import { add, complex, divide, exponential, modulus, multiply, scale, subtract, type Complex } from '../numerics/complex.ts';
+import {
+  add,
+  complex,
+  divide,
+  exponential,
+  modulus,
+  multiply,
+  scale,
+  subtract,
+  type Complex,
+} from '../numerics/complex.ts';
 
 /** A forcing Re(amplitude · e^{rate t}). */
 export interface WaveForcing {
@@ -73,7 +83,8 @@ export function movedFromRest(omega: number, rate: number, forcing: WaveForcing,
 /** (e^{xt} − e^{yt})/(x − y). */
 function differenceOf(x: Complex, y: Complex, t: number): Complex {
   const half = scale(subtract(x, y), 0.5 * t);
-  if (modulus(half) > 0.5) return divide(subtract(exponential(scale(x, t)), exponential(scale(y, t))), subtract(x, y));
+  if (modulus(half) > 0.5)
+    return divide(subtract(exponential(scale(x, t)), exponential(scale(y, t))), subtract(x, y));
   const middle = exponential(scale(add(x, y), 0.5 * t));
   const square = multiply(half, half);
   let sum = complex(1);

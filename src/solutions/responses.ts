@@ -10,7 +10,10 @@ import type { WaveMember } from '../members/wave-member.ts';
 import { largestFlexibility } from '../modes/largest-flexibility.ts';
 import { evenPositions, placeStations, type Stations } from '../modes/stations.ts';
 import { stressFactors } from '../modes/stress-factors.ts';
+import { readLoads, type AppliedLoad } from '../motion/applied-loads.ts';
+import type { StartedSupport } from '../motion/initial-displacement.ts';
 import { readInitialState, type InitialState } from '../motion/initial-state.ts';
+import { stillPeak } from '../motion/still-peaks.ts';
 import { sampleMotion, type FieldKind } from '../motion/sampled-motion.ts';
 import type {
   Field,
@@ -39,21 +42,25 @@ import { unitOf } from './quantity-units.ts';
  */
 export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
   const member = readMember(request.member);
-  const state = readInitialState(member, request.initial);
   const { quantities, gaugeTime } = request.sample;
   const stations = sampledStations(member, request);
   const times = sampledTimes(request.sample.times);
   const stress = quantities.includes('stress') ? stressFactors(member, stations) : null;
   const span = times.reduce((latest, t) => Math.max(latest, t), 0) + gaugeTime;
 
+  const loads = readLoads(member, request.loads, span);
+  const state = readInitialState(member, request.initial, startedSupports(loads));
   const flexibility = largestFlexibility(member);
+  const still = stillPeak(member, loads, 'displacement', flexibility, 0, span);
   const series = keepModes(
     member,
     state,
+    loads,
+    gaugeTime,
     'modes' in request.series ? request.series.modes : request.series.maxModes,
     !('modes' in request.series),
     span,
-    shortfallOf(request.series, member, flexibility, gaugeTime, state.released),
+    shortfallOf(request.series, member, flexibility, gaugeTime, state.released, still),
     HELD_NUMBERS,
   );
 
@@ -62,6 +69,7 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
   const sums = sampleMotion(
     member,
     series.modes,
+    loads,
     stations,
     times,
     [...new Set(kinds)],
@@ -75,6 +83,7 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
     series,
     flexibility,
     rigid,
+    loads,
     gaugeTime,
     released: state.released,
     span,
@@ -128,8 +137,8 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
         tail: series.tail.energies.energy,
         capturedFraction: total > 0 ? series.energy.captured / total : 1,
       },
-      ceiling: displacementCeiling(series.tail, flexibility),
-      displacementBound: displacementBound(series.tail, flexibility),
+      ceiling: finite(displacementCeiling(series.tail, flexibility, still)),
+      displacementBound: finite(displacementBound(series.tail, flexibility)),
       balance: checks && { maxRelativeDrift: checks.drift },
       orthogonality: checks && checks.orthogonality,
       residual: checks && checks.residual,
@@ -222,4 +231,17 @@ function noticesOf(request: ResponsesRequest, state: InitialState, series: KeptS
     });
   }
   return notices;
+}
+
+/** A number, or null where none exists. */
+function finite(value: number): number | null {
+  return Number.isFinite(value) ? value : null;
+}
+
+/** Supports that are displaced at t = 0. */
+function startedSupports(loads: readonly AppliedLoad[]): StartedSupport[] {
+  return loads.flatMap(({ support }) => {
+    const position = support?.motion.at(0).position ?? 0;
+    return support && position !== 0 ? [{ pieces: support.shape.pieces, position }] : [];
+  });
 }

@@ -1247,13 +1247,13 @@ export interface ResponsesConvergence {
   modesNeeded?: number;
   energy: EnergyAccount;
   /**
-   * Limit of the displacement, known before any mode, m (rad for a shaft): √(2·energy·flexibility) for all time, and what the loads can add within the sampled time span.
+   * Limit of the displacement, known before any mode, m (rad for a shaft): √(2·energy·flexibility) for all time, and what the loads can add within the sampled time span; null where none exists (a force that moves with the wave).
    */
-  ceiling: number;
+  ceiling: number | null;
   /**
-   * Largest possible error of the displacement over the member and the sampled time span, m (rad for a shaft).
+   * Largest possible error of the displacement over the member and the sampled time span, m (rad for a shaft); null where none exists (a force that moves with the wave).
    */
-  displacementBound: number;
+  displacementBound: number | null;
   /**
    * Energy balance; null without checks.
    */

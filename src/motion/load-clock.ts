@@ -1,0 +1,91 @@
+import type { WaveMember } from '../members/wave-member.ts';
+import { evaluateShape } from '../modes/mode-shape.ts';
+import type { Mode } from '../modes/mode-series.ts';
+import { placeStation } from '../modes/stations.ts';
+import type { AppliedLoad } from './applied-loads.ts';
+import type { LoadMover } from './forced-motion.ts';
+
+/** Motion tables of one modal coordinate at one set of times. */
+export type MotionTable = readonly [Float64Array, Float64Array];
+
+/** p and p′ of each load at a set of times. */
+interface Drives {
+  readonly value: Float64Array;
+  readonly rate: Float64Array;
+}
+
+/**
+ * The loads as seen by one modal coordinate after the other: adds their motion to tables of q and q′
+ * and gives the quasi-static part Σ F p/ω² that is taken exactly elsewhere.
+ */
+export class LoadClock {
+  private readonly member: WaveMember;
+  private readonly loads: readonly AppliedLoad[];
+  private readonly movers: LoadMover[];
+  private readonly drives: Drives[];
+  private readonly times: Float64Array;
+  private readonly pair = new Float64Array(2);
+  private readonly integrates: boolean;
+  /** Σ F p, Σ F p′ of the mode added last, at the times. */
+  readonly driven: Float64Array;
+  readonly drivenRate: Float64Array;
+  /** ∫P φ_n(x(t)) of all moving forces up to the times, of the mode added last. */
+  readonly movingIntegrals: Float64Array;
+
+  /** @param integrates whether the integrals of moving forces are wanted */
+  constructor(member: WaveMember, loads: readonly AppliedLoad[], times: Float64Array, integrates: boolean) {
+    this.member = member;
+    this.integrates = integrates;
+    this.loads = loads;
+    this.times = times;
+    this.movers = loads.map((load) => load.moverAt(times));
+    this.drives = loads.map((load) => {
+      const value = new Float64Array(times.length);
+      const rate = new Float64Array(times.length);
+      times.forEach((t, j) => {
+        const drive = load.driveAt(t);
+        value[j] = drive.value;
+        rate[j] = drive.rate;
+      });
+      return { value, rate };
+    });
+    this.driven = new Float64Array(times.length);
+    this.drivenRate = new Float64Array(times.length);
+    this.movingIntegrals = new Float64Array(times.length);
+  }
+
+  /** Adds the motion of a mode under all loads to its tables. */
+  add(mode: Mode, rate: number, factors: readonly number[], table: MotionTable): void {
+    this.driven.fill(0);
+    this.drivenRate.fill(0);
+    this.movingIntegrals.fill(0);
+    this.loads.forEach((load, index) => {
+      const factor = factors[index];
+      this.movers[index].add(mode, rate, factor, table[0], table[1]);
+      if (load.moving !== null) {
+        this.addMovingDrive(mode, load.moving);
+        if (!this.integrates) return;
+        const integrals = load.moving.integrals(mode, this.times);
+        for (let j = 0; j < integrals.length; j++) this.movingIntegrals[j] += integrals[j];
+        return;
+      }
+      const { value, rate: slope } = this.drives[index];
+      for (let j = 0; j < value.length; j++) {
+        this.driven[j] += factor * value[j];
+        this.drivenRate[j] += factor * slope[j];
+      }
+    });
+  }
+
+  private addMovingDrive(mode: Mode, moving: NonNullable<AppliedLoad['moving']>): void {
+    const { member, pair } = this;
+    this.times.forEach((t, j) => {
+      const x = moving.placeAt(t);
+      if (x === null) return;
+      const { i, d } = placeStation(member, x);
+      evaluateShape(member, mode.shape, i, d, pair);
+      this.driven[j] += moving.force * pair[0];
+      this.drivenRate[j] += (moving.force * moving.velocity * pair[1]) / member.stiffness[i];
+    });
+  }
+}

@@ -1,0 +1,175 @@
+import type { WaveMember } from '../members/wave-member.ts';
+import { InertiaRelief } from '../modes/inertia-relief.ts';
+import { StaticResponse } from '../modes/static-response.ts';
+import { placeStation, type Stations } from '../modes/stations.ts';
+import { canDriftFreely } from '../spectrum/spectrum-size.ts';
+import type { AppliedLoad } from './applied-loads.ts';
+import type { FieldKind } from './sampled-motion.ts';
+import { supportState } from './support-shape.ts';
+
+/**
+ * Adds the exact quasi-static part of all loads to a field [times × stations]: w(x) p(t) of each load,
+ * y(t) r(x) of each support, P G(x, vt) of each moving force, and their rates; with a gauge time their
+ * averages over it.
+ *
+ * The acceleration takes only the support's y″ r: modes carry the rest. The force of a moving force is
+ * averaged by its modes alone.
+ * Cost: O(times · stations) a load.
+ */
+export function addStillFields(
+  member: WaveMember,
+  loads: readonly AppliedLoad[],
+  stations: Stations,
+  times: Float64Array,
+  kind: FieldKind,
+  gaugeTime: number,
+  field: Float64Array,
+): void {
+  const begin = times.map((t) => Math.max(0, t - 0.5 * gaugeTime));
+  const end = begin.map((t) => t + gaugeTime);
+  const average = gaugeTime > 0 && kind !== 'displacement' && kind !== 'relativeDisplacement';
+  for (const load of loads) {
+    if (load.moving !== null) {
+      addMoving(member, load.moving, stations, times, begin, end, kind, average, field);
+      continue;
+    }
+    const onLoad = average
+      ? averagedDrive(load, kind, begin, end)
+      : times.map((t) => instantDrive(load, kind, t));
+    addOuter(field, onLoad, stillAt(load, stations, kind));
+    if (load.support === null || kind === 'relativeDisplacement') continue;
+    const onSupport = average
+      ? averagedSupport(member, load, kind, begin, end)
+      : times.map((t) => instantSupport(member, load, kind, t));
+    addOuter(field, onSupport, supportAt(member, load, stations, kind));
+  }
+}
+
+function addOuter(field: Float64Array, rows: Float64Array, columns: Float64Array): void {
+  for (let j = 0, at = 0; j < rows.length; j++) {
+    const factor = rows[j];
+    if (factor === 0) {
+      at += columns.length;
+      continue;
+    }
+    for (let q = 0; q < columns.length; q++, at++) field[at] += factor * columns[q];
+  }
+}
+
+function stillAt(load: AppliedLoad, stations: Stations, kind: FieldKind): Float64Array {
+  return Float64Array.from(stations.segment, (segment, q) => {
+    if (load.still === null || kind === 'acceleration') return 0;
+    const state = load.still.at(segment, stations.distance[q]);
+    return kind === 'force' ? state.flux : state.displacement;
+  });
+}
+
+function supportAt(member: WaveMember, load: AppliedLoad, stations: Stations, kind: FieldKind): Float64Array {
+  const { shape } = load.support as NonNullable<AppliedLoad['support']>;
+  return Float64Array.from(stations.segment, (segment, q) => {
+    const state = supportState(member, shape, segment, stations.distance[q]);
+    return kind === 'force' ? state.flux : state.displacement;
+  });
+}
+
+function instantDrive(load: AppliedLoad, kind: FieldKind, t: number): number {
+  const { value, rate } = load.driveAt(t);
+  return kind === 'velocity' ? rate : kind === 'acceleration' ? 0 : value;
+}
+
+function averagedDrive(
+  load: AppliedLoad,
+  kind: FieldKind,
+  begin: Float64Array,
+  end: Float64Array,
+): Float64Array {
+  if (kind === 'acceleration') return new Float64Array(begin.length);
+  if (kind === 'velocity') {
+    return begin.map((t, j) => (load.driveAt(end[j]).value - load.driveAt(t).value) / (end[j] - t));
+  }
+  const first = load.driveIntegrals(begin);
+  const last = load.driveIntegrals(end);
+  return begin.map((t, j) => (last[j] - first[j]) / (end[j] - t));
+}
+
+function instantSupport(member: WaveMember, load: AppliedLoad, kind: FieldKind, t: number): number {
+  const { motion } = load.support as NonNullable<AppliedLoad['support']>;
+  const state = motion.at(t);
+  switch (kind) {
+    case 'velocity':
+      return state.velocity;
+    case 'acceleration':
+      return state.acceleration;
+    case 'force':
+      return state.position + member.damping.stiffnessCoefficient * state.velocity;
+    default:
+      return state.position;
+  }
+}
+
+function averagedSupport(
+  member: WaveMember,
+  load: AppliedLoad,
+  kind: FieldKind,
+  begin: Float64Array,
+  end: Float64Array,
+): Float64Array {
+  const { motion } = load.support as NonNullable<AppliedLoad['support']>;
+  const beta = member.damping.stiffnessCoefficient;
+  if (kind === 'force') {
+    const first = motion.integrals(begin);
+    const last = motion.integrals(end);
+    return begin.map((t, j) => {
+      const change = motion.at(end[j]).position - motion.at(t).position;
+      return (last[j] - first[j] + beta * change) / (end[j] - t);
+    });
+  }
+  return begin.map((t, j) => {
+    const from = motion.at(t);
+    const to = motion.at(end[j]);
+    const change = kind === 'velocity' ? to.position - from.position : to.velocity - from.velocity;
+    return change / (end[j] - t);
+  });
+}
+
+function addMoving(
+  member: WaveMember,
+  moving: NonNullable<AppliedLoad['moving']>,
+  stations: Stations,
+  times: Float64Array,
+  begin: Float64Array,
+  end: Float64Array,
+  kind: FieldKind,
+  average: boolean,
+  field: Float64Array,
+): void {
+  if (kind === 'acceleration' || (kind === 'force' && average)) return;
+  const source = canDriftFreely(member) ? new InertiaRelief(member) : new StaticResponse(member);
+  const columns = stations.segment.length;
+  const at = (t: number): ((q: number) => number) => {
+    const x = moving.placeAt(t);
+    if (x === null) return () => 0;
+    const { i: j, d: z } = placeStation(member, x);
+    return (q) => {
+      const i = stations.segment[q];
+      const d = stations.distance[q];
+      if (kind === 'force') return moving.force * source.influence(i, d, j, z);
+      if (kind === 'velocity' && !average) {
+        // P v ∂G(x,z)/∂z, the slope at z of the shape that a force at x makes
+        return (moving.force * moving.velocity * source.influence(j, z, i, d)) / member.stiffness[j];
+      }
+      return moving.force * source.mutualFlexibility(i, d, j, z);
+    };
+  };
+  for (let row = 0; row < times.length; row++) {
+    if (average) {
+      const from = at(begin[row]);
+      const to = at(end[row]);
+      for (let q = 0; q < columns; q++)
+        field[row * columns + q] += (to(q) - from(q)) / (end[row] - begin[row]);
+    } else {
+      const now = at(times[row]);
+      for (let q = 0; q < columns; q++) field[row * columns + q] += now(q);
+    }
+  }
+}
