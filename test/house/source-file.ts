@@ -87,7 +87,9 @@ function isPropertyName(node: SyntaxNode, field: string): boolean {
 function isWebAssembly(node: SyntaxNode): boolean {
   if (node.type !== 'MemberExpression' || (node.property as SyntaxNode).name !== 'WebAssembly') return false;
   let object = node.object as SyntaxNode;
-  while (object.type === 'TSAsExpression') object = object.expression as SyntaxNode;
+  while (object.type === 'TSAsExpression' || object.type === 'ParenthesizedExpression') {
+    object = object.expression as SyntaxNode;
+  }
   return object.name === 'globalThis';
 }
 
