@@ -18,7 +18,7 @@ function solveWith(request: ResponsesRequest, series: ResponsesRequest['series']
 }
 
 /** The part of the motion that tolerances refer to: the ceiling; the bound over the member is what is compared. */
-describe('the adaptive length of random members', () => {
+describe('the adaptive length of random members', { timeout: 60_000 }, () => {
   it.each([1e-1, 1e-2])('is the smallest that meets a relative tolerance of %s', (tolerance) => {
     let converged = 0;
     for (const request of requests(60)) {

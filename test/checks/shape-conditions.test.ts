@@ -64,7 +64,7 @@ function values(mode: Mode, quantity: 'displacement' | 'force'): number[] {
   return Array.from(mode.shape?.[quantity] ?? []);
 }
 
-describe.each(FAMILIES)('shapes of %s members', (family) => {
+describe.each(FAMILIES)('shapes of %s members', { timeout: 60_000 }, (family) => {
   it('carry their force over every node: p⁺ − p⁻ = (K − ω²M) φ', () => {
     for (const index of cases(family)) {
       const plain = member(family, index);
