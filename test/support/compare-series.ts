@@ -149,8 +149,8 @@ function compareEnergies(short: ResponsesAnswer, long: ResponsesAnswer, demand: 
   demand('captured', '', energy.captured, energy.total * (1 + 1e-11));
   let beyond = 0;
   for (let n = modesUsed; n < long.coefficients.length; n++) beyond += long.coefficients[n].energy;
-  // The coefficients of the longer series round too: 1e-10 of the largest amplitude, squared.
-  demand('tail', '', beyond, energy.tail * (1 + 1e-9) + 1e-20 * energy.total);
+  // The coefficients of the longer series round too: 1e-9 of the largest amplitude, squared.
+  demand('tail', '', beyond, energy.tail * (1 + 1e-9) + 1e-18 * energy.total);
   const first = long.coefficients[0];
   const field = long.fields.displacement;
   if (field !== undefined && first !== undefined && first.angularFrequency > 0) {
