@@ -8,6 +8,13 @@ function stretch(random: RandomStream, length: number): [number, number] {
   return [from, Math.min(length, from + random.between(0.01, 1) * (length - from) + 0.01 * length)];
 }
 
+/** A stretch for a polynomial in x: not so narrow that its coefficients in double would no longer describe it. */
+function wideStretch(random: RandomStream, length: number): [number, number] {
+  if (random.chance(0.5)) return [0, length];
+  const to = random.between(0.2, 1) * length;
+  return [random.between(0, 0.6) * to, to];
+}
+
 /** Coefficients in x of scale·((x − a)(b − x)/h²)^power, h = (b − a)/2: 1 times scale in the middle. */
 function bump(a: number, b: number, scale: number, power: number): number[] {
   const half = ((b - a) / 2) ** 2;
@@ -44,7 +51,7 @@ function displacementShape(random: RandomStream, member: PlainMember, size: numb
       return { type: 'pull', at, amplitude: size };
     }
     case 'bump': {
-      const [from, to] = random.chance(0.5) ? [0, length] : stretch(random, length);
+      const [from, to] = wideStretch(random, length);
       return { type: 'polynomial', coefficients: bump(from, to, size, random.pick([1, 2, 3])), from, to };
     }
     case 'offset':
@@ -77,13 +84,19 @@ function displacementShape(random: RandomStream, member: PlainMember, size: numb
 function velocityShape(random: RandomStream, member: PlainMember, size: number): Shape {
   const length = lengthOf(member);
   const [from, to] = stretch(random, length);
+  const wide = wideStretch(random, length);
   switch (random.pick(['uniform', 'uniform', 'whole', 'half-sine', 'bump', 'polyline'])) {
     case 'whole':
       return { type: 'uniform', value: size, from: 0 };
     case 'half-sine':
       return { type: 'half-sine', amplitude: size, halfWaves: random.integer(1, 3) };
     case 'bump':
-      return { type: 'polynomial', coefficients: bump(from, to, size, random.pick([1, 2])), from, to };
+      return {
+        type: 'polynomial',
+        coefficients: bump(wide[0], wide[1], size, random.pick([1, 2])),
+        from: wide[0],
+        to: wide[1],
+      };
     case 'polyline':
       return { type: 'polyline', positions: [from, to], values: [size * random.between(-1, 1), size] };
     default:
@@ -159,7 +172,7 @@ export function smoothMotion(random: RandomStream, member: PlainMember): Initial
     halfWaves: random.integer(1, 5),
   });
   const smooth = (amplitude: number): Shape => {
-    const [from, to] = random.chance(0.5) ? [0, length] : stretch(random, length);
+    const [from, to] = wideStretch(random, length);
     return { type: 'polynomial', coefficients: bump(from, to, amplitude, random.pick([2, 3, 4])), from, to };
   };
   const shape = (amplitude: number): Shape => (random.chance(0.4) ? sine(amplitude) : smooth(amplitude));
