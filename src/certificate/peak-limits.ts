@@ -3,7 +3,6 @@ import { ENDS, waveNumberSquare, type ModeShape } from '../modes/mode-shape.ts';
 import { peakDisplacement } from '../modes/shape-figures.ts';
 import { largestRatioAbove } from '../motion/modal-damping.ts';
 import type { Quantity } from '../spec/types.ts';
-import type { RigidPart } from './field-bounds.ts';
 import type { KeptSeries } from './kept-modes.ts';
 import { tailFactors } from './quantity-bounds.ts';
 
@@ -13,7 +12,6 @@ export interface PeakBasis {
   readonly series: KeptSeries;
   /** Largest G over the member, m/N. */
   readonly flexibility: number;
-  readonly rigid: RigidPart;
   readonly gaugeTime: number;
   readonly released: boolean;
   /** Latest sampled time, gauge time included, s. */
@@ -26,7 +24,8 @@ export interface PeakBasis {
  * bound. Of averages where a gauge time is given. Null where no limit exists.
  */
 export function peakLimit(quantity: Quantity, basis: PeakBasis): number | null {
-  const { member, series, gaugeTime, released, rigid, span } = basis;
+  const { member, series, gaugeTime, released, span } = basis;
+  const { rigid } = series.tail;
   const { damping } = member;
   const flux = quantity === 'force' || quantity === 'stress';
   const scale = quantity === 'stress' ? Math.max(...member.stressFactor) : 1;

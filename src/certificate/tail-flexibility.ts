@@ -72,9 +72,11 @@ export class TailFlexibility {
     this.displacement = new Float64Array(count);
     this.flux = new Float64Array(count);
 
-    const elastic = elasticFlexibility(member);
-    const nearlyFree = !drifts && this.whole.some((g) => g > 100 * elastic);
-    this.shift = nearlyFree ? 1 / (elastic * totalMass(member)) : 0;
+    // nearly free: restrained by something much softer than the member itself is
+    const relief = new InertiaRelief(member);
+    const own = largest(at((i, d) => relief.flexibility(i, d)));
+    const nearlyFree = !drifts && own > 0 && largest(this.whole) > 100 * own;
+    this.shift = nearlyFree ? 1 / (own * totalMass(member)) : 0;
     if (nearlyFree) {
       const shiftedResponse = new StaticResponse(member, this.shift);
       const start = at((i, d) => shiftedResponse.flexibility(i, d));
@@ -139,15 +141,20 @@ export class TailFlexibility {
     );
   }
 
+  /** Whether the modes took more of a flexibility than there is, beyond its floor: a shape must be wrong. */
+  overdrawn(): boolean {
+    return (
+      this.rest.some((rest, q) => rest < -this.floor[q]) ||
+      this.restFlux.some((rest, q) => rest < -this.floorFlux[q])
+    );
+  }
+
   /** Bound on ΔH at station q, kg, floor included. */
   fluxTail(q: number): number {
     return Math.max(0, this.restFlux[q]) + this.floorFlux[q];
   }
 }
 
-/** Σ l/k, the flexibility of the member as one stretch, m/N. */
-export function elasticFlexibility(member: WaveMember): number {
-  let flexibility = 0;
-  for (let i = 0; i < member.segmentCount; i++) flexibility += member.length[i] / member.stiffness[i];
-  return flexibility;
+function largest(values: Float64Array): number {
+  return values.reduce((most, value) => Math.max(most, value), 0);
 }

@@ -1,4 +1,4 @@
-import { certify, type RigidPart } from '../certificate/field-bounds.ts';
+import { certify } from '../certificate/field-bounds.ts';
 import { checkIndependently } from '../certificate/independent-checks.ts';
 import { keepModes, type KeptSeries } from '../certificate/kept-modes.ts';
 import { peakLimit, type PeakBasis } from '../certificate/peak-limits.ts';
@@ -52,7 +52,7 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
     'modes' in request.series ? request.series.modes : request.series.maxModes,
     !('modes' in request.series),
     span,
-    shortfallOf(request.series, member, flexibility, gaugeTime, state.released),
+    shortfallOf(request.series, member, flexibility, gaugeTime, state.released, span),
     HELD_NUMBERS,
   );
 
@@ -68,12 +68,10 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
     (mode, u, p, first) => tails.addSampled(mode, u, p, first),
   );
 
-  const rigid = rigidPart(series);
   const basis: PeakBasis = {
     member,
     series,
     flexibility,
-    rigid,
     gaugeTime,
     released: state.released,
     span,
@@ -82,17 +80,7 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
   const peaks: Peaks = {};
   quantities.forEach((quantity, index) => {
     const factor = quantity === 'stress' ? stress : null;
-    const certificate = certify(
-      quantity,
-      member,
-      series,
-      tails,
-      gaugeTime,
-      state.released,
-      rigid,
-      span,
-      factor,
-    );
+    const certificate = certify(quantity, member, series, tails, gaugeTime, state.released, span, factor);
     const values = rowsOf(sums.get(kinds[index]) as Float64Array, stations.position.length, factor);
     fields[quantity] = {
       unit: unitOf(quantity, member.kind),
@@ -105,7 +93,8 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
     peaks[quantity] = sampledPeak(values, stations, times, peakLimit(quantity, basis));
   });
 
-  const total = state.energies[0];
+  const total = state.energies[0] + state.rigidEnergy;
+  const captured = series.modes.reduce((sum, kept) => sum + kept.start.energy, 0);
   const checks = request.checks ? checkIndependently(member, series.modes, times, total) : null;
   return {
     coefficients: series.modes.map(({ mode, start }) => ({
@@ -123,12 +112,12 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
       ...(series.modesNeeded !== null && { modesNeeded: series.modesNeeded }),
       energy: {
         total,
-        captured: series.energy.captured,
+        captured,
         tail: series.tail.energies.energy,
-        capturedFraction: total > 0 ? series.energy.captured / total : 1,
+        capturedFraction: total > 0 ? captured / total : 1,
       },
       ceiling: displacementCeiling(series.tail, flexibility),
-      displacementBound: displacementBound(series.tail, flexibility),
+      displacementBound: displacementBound(series.tail, flexibility, span),
       balance: checks && { maxRelativeDrift: checks.drift },
       orthogonality: checks && checks.orthogonality,
       residual: checks && checks.residual,
@@ -149,17 +138,6 @@ function sampledTimes(times: Times): Float64Array {
   return Float64Array.from({ length: count }, (_, j) =>
     j === count - 1 ? end : start + ((end - start) * j) / (count - 1),
   );
-}
-
-/** |a₀|φ₀ and |v₀|φ₀ of the rigid-body mode; 0 where there is none. */
-function rigidPart(series: KeptSeries): RigidPart {
-  const first = series.modes[0];
-  if (first.mode.frequency.omega > 0) return { position: 0, velocity: 0 };
-  const height = first.mode.shape.ends[0];
-  return {
-    position: Math.abs(first.start.position) * height,
-    velocity: Math.abs(first.start.velocity) * height,
-  };
 }
 
 /** Rows of a table, one a time, times a factor a column. */
@@ -195,7 +173,7 @@ function sampledPeak(
 
 function noticesOf(request: ResponsesRequest, state: InitialState, series: KeptSeries): Notice[] {
   const notices: Notice[] = [];
-  if (state.lostEnergy > 1e-12 * state.energies[0]) {
+  if (state.lostEnergy > 1e-12 * (state.energies[0] + state.rigidEnergy)) {
     notices.push({
       code: 'massless-stretch-settled',
       detail: `Massless stretches cannot keep a shape of their own: for t > 0 they follow the places around them, and ${state.lostEnergy} J of the given shape's strain energy are left out.`,
