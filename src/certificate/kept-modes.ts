@@ -35,7 +35,7 @@ export interface TailState {
   readonly whole: {
     readonly energies: TailEnergies;
     readonly member: MemberTail;
-    /** Whether the elastic energy is nothing but rounding. */
+    /** Whether there is no elastic energy, or nothing but rounding beside a rigid-body motion. */
     readonly silent: boolean;
   };
 }
@@ -181,7 +181,7 @@ function wholeMotion(
       nextOmega: omega,
     },
     member: memberTail(member, flexibility, omega * omega),
-    silent: total <= state.roundings[0],
+    silent: total === 0 || (state.rigidEnergy > 0 && total <= state.roundings[0]),
   };
 }
 

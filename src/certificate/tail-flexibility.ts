@@ -104,24 +104,30 @@ export class TailFlexibility {
     const error =
       omega * this.travelTime * ((0.5 * (upper - lower)) / (omega || 1) + EPS) +
       4 * EPS * member.segmentCount;
+    const soft = 1 / lambda;
+    const twice = 2 * error * soft;
+    const reduced = lambda / (lambda + this.shift);
+    let segment = -1;
+    let impedance = 0;
+    let admittance = 0;
     for (let m = 0; m < displacement.length; m++) {
       const q = first + m;
-      const i = stations.segment[q];
-      const u = displacement[m];
-      const p = flux[m];
-      const k = member.stiffness[i];
-      const impedance = k * Math.sqrt(Math.max(0, waveNumberSquare(member, i, lambda)));
-      const uAmplitude = Math.abs(u) + (impedance > 0 ? Math.abs(p) / impedance : 0);
-      const pAmplitude = Math.abs(p) + impedance * Math.abs(u);
-      const square = (u * u) / lambda;
-      const slack = (2 * error * Math.abs(u) * uAmplitude) / lambda;
+      if (stations.segment[q] !== segment) {
+        segment = stations.segment[q];
+        const square = waveNumberSquare(member, segment, lambda);
+        impedance = square > 0 ? member.stiffness[segment] * Math.sqrt(square) : 0;
+        admittance = impedance > 0 ? 1 / impedance : 0;
+      }
+      const u = Math.abs(displacement[m]);
+      const p = Math.abs(flux[m]);
+      const square = u * u * soft;
+      const slack = twice * u * (u + p * admittance);
       this.rest[q] -= square;
       this.floor[q] += slack;
-      const fluxRatio = p / lambda;
+      const fluxRatio = p * soft;
       this.restFlux[q] -= fluxRatio * fluxRatio;
-      this.floorFlux[q] += (2 * error * Math.abs(fluxRatio) * pAmplitude) / lambda;
+      this.floorFlux[q] += twice * fluxRatio * (p + impedance * u);
       if (this.shifted && this.shiftedFloor) {
-        const reduced = lambda / (lambda + this.shift);
         this.shifted[q] -= square * reduced;
         this.shiftedFloor[q] += slack * reduced;
       }

@@ -10,7 +10,7 @@ import type {
   Shape,
 } from '../../src/spec/types.ts';
 import type { PlainMember } from '../support/plain-member.ts';
-import { requestMember, responsesRequest } from '../support/requests.ts';
+import { responsesRequest } from '../support/requests.ts';
 import { plainTrial, uniformTrial, type TrialMember } from '../spectrum/trial-members.ts';
 
 const EPS = Number.EPSILON;
