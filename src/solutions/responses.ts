@@ -22,6 +22,7 @@ import type {
   ResponsesRequest,
   Times,
 } from '../spec/types.ts';
+import { contactNotice } from './contact-notice.ts';
 import { HELD_NUMBERS } from './limits.ts';
 import { unitOf } from './quantity-units.ts';
 
@@ -123,7 +124,7 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
       residual: checks && checks.residual,
       spectrumComplete: true,
     },
-    notices: noticesOf(request, state, series),
+    notices: noticesOf(request, member, state, series, times),
   };
 }
 
@@ -171,7 +172,13 @@ function sampledPeak(
   return { value, at, time, upper };
 }
 
-function noticesOf(request: ResponsesRequest, state: InitialState, series: KeptSeries): Notice[] {
+function noticesOf(
+  request: ResponsesRequest,
+  member: WaveMember,
+  state: InitialState,
+  series: KeptSeries,
+  times: Float64Array,
+): Notice[] {
   const notices: Notice[] = [];
   if (state.lostEnergy > 1e-12 * (state.energies[0] + state.rigidEnergy)) {
     notices.push({
@@ -186,6 +193,8 @@ function noticesOf(request: ResponsesRequest, state: InitialState, series: KeptS
         'Nothing holds the member, so it drifts as a whole; the ceiling and the tolerance refer to its elastic motion.',
     });
   }
+  const contact = contactNotice(member, request.initial, series, times);
+  if (contact !== null) notices.push(contact);
   if ('modes' in request.series && series.modes.length < request.series.modes) {
     notices.push({
       code: 'finite-modes',
