@@ -13,22 +13,29 @@ const EPS = Number.EPSILON;
  * E⁰_tail ≤ E¹_tail/ω_{N+1}² ≤ E²_tail/ω_{N+1}⁴, and goes below its subtraction floor.
  */
 export class EnergyTail {
-  /** Totals of the levels, J, J/s², J/s⁴. */
+  /** Totals of the levels without rigid-body motion, J, J/s², J/s⁴. */
   readonly total: readonly [number, number | null, number | null];
-  /** Energy of the modes added, J. */
+  /** Energy of the elastic modes added, J. */
   captured = 0;
   private readonly rest: [number, number, number];
   private readonly floor: [number, number, number];
   private previousEnergy = 0;
 
-  constructor(total: readonly [number, number | null, number | null]) {
+  constructor(
+    total: readonly [number, number | null, number | null],
+    roundings: readonly [number, number, number] = [0, 0, 0],
+  ) {
     this.total = total;
     this.rest = [total[0], total[1] ?? 0, total[2] ?? 0];
-    this.floor = [64 * EPS * total[0], 64 * EPS * (total[1] ?? 0), 64 * EPS * (total[2] ?? 0)];
+    this.floor = [
+      64 * EPS * total[0] + roundings[0],
+      64 * EPS * (total[1] ?? 0) + roundings[1],
+      64 * EPS * (total[2] ?? 0) + roundings[2],
+    ];
   }
 
   /**
-   * Takes a mode out.
+   * Takes an elastic mode out.
    *
    * @param energy E_n, J
    * @param lambda ω_n²
@@ -75,6 +82,15 @@ export class EnergyTail {
   /** Energy captured beyond the total and its floor, J; above 0 only if something is wrong. */
   get excess(): number {
     return -this.rest[0] - this.floor[0];
+  }
+
+  /**
+   * Energy that is missing, J, above 0 only if something is wrong: with every mode taken what is left
+   * beyond the floor; before that what is left beyond both floors and the limit E¹_tail/ω_{N+1}².
+   */
+  missing(nextLambda: number): number {
+    const limit = nextLambda === Number.POSITIVE_INFINITY ? 0 : this.first(nextLambda) / nextLambda;
+    return this.rest[0] - this.floor[0] - limit;
   }
 
   private plain(level: 0 | 1 | 2): number {

@@ -1,6 +1,7 @@
 import type { WaveMember } from '../members/wave-member.ts';
 import type { Quantity, Verdict } from '../spec/types.ts';
-import type { KeptSeries } from './kept-modes.ts';
+import type { KeptSeries, RigidPart } from './kept-modes.ts';
+import type { Rounding } from './rounding.ts';
 import { tailFactors, type BoundKind, type TailFactors } from './quantity-bounds.ts';
 import { largestRatioAbove } from '../motion/modal-damping.ts';
 import type { TailFlexibility } from './tail-flexibility.ts';
@@ -17,12 +18,6 @@ export interface QuantityCertificate {
   readonly verdict: Verdict;
 }
 
-/** The rigid-body part of the motion: |a₀|φ₀ and |v₀|φ₀, m and m/s. */
-export interface RigidPart {
-  readonly position: number;
-  readonly velocity: number;
-}
-
 /**
  * The error of a quantity at every station: tail of the series plus rounding of what was summed.
  *
@@ -37,7 +32,6 @@ export function certify(
   tails: TailFlexibility,
   gaugeTime: number,
   released: boolean,
-  rigid: RigidPart,
   span: number,
   factor: Float64Array | null,
 ): QuantityCertificate {
@@ -61,8 +55,8 @@ export function certify(
     };
   }
   const nextLambda = tail.energies.nextOmega * tail.energies.nextOmega;
-  const noise = roundingFactors(quantity, member, series, gaugeTime);
-  const drift = rigidRounding(quantity, rigid, span, gaugeTime);
+  const noise = roundingFactors(quantity, member, series.rounding, tail.whole.energies.nextOmega, gaugeTime);
+  const drift = rigidRounding(quantity, tail.rigid, span, gaugeTime, member.damping.massCoefficient);
   const bound = new Float64Array(tails.stations.segment.length);
   for (let q = 0; q < bound.length; q++) {
     const g = complete ? 0 : Math.sqrt(tails.flexibilityTail(q, nextLambda));
@@ -78,17 +72,20 @@ export function certify(
   return { bound, kind, rms: null, verdict };
 }
 
-/** Sum of magnitudes times rounding, as the factor of √G (displacement and its rates) or √H (flux). */
+/**
+ * Sum of magnitudes times rounding, as the factor of √G (displacement and its rates) or √H (flux).
+ *
+ * @param lowest lowest elastic frequency, rad/s
+ */
 export function roundingFactors(
   quantity: Quantity,
   member: WaveMember,
-  series: KeptSeries,
+  rounding: Rounding,
+  lowest: number,
   gaugeTime: number,
 ): number {
-  const { rounding } = series;
   const beta = member.damping.stiffnessCoefficient;
-  const first = series.modes.find((kept) => kept.mode.frequency.omega > 0)?.mode.frequency.omega ?? 1;
-  const drag = 1 + 2 * largestRatioAbove(member.damping, 0) + member.damping.massCoefficient / first;
+  const drag = 1 + 2 * largestRatioAbove(member.damping, 0) + member.damping.massCoefficient / lowest;
   const gauge = 2 / gaugeTime;
   switch (quantity) {
     case 'displacement':
@@ -104,7 +101,14 @@ export function roundingFactors(
   }
 }
 
-function rigidRounding(quantity: Quantity, rigid: RigidPart, span: number, gaugeTime: number): number {
+/** Rounding of the rigid-body part of a quantity. */
+export function rigidRounding(
+  quantity: Quantity,
+  rigid: RigidPart,
+  span: number,
+  gaugeTime: number,
+  drag: number,
+): number {
   const path = rigid.position + rigid.velocity * span;
   switch (quantity) {
     case 'displacement':
@@ -113,7 +117,7 @@ function rigidRounding(quantity: Quantity, rigid: RigidPart, span: number, gauge
     case 'velocity':
       return 64 * EPS * (rigid.velocity + (gaugeTime > 0 ? (2 * path) / gaugeTime : 0));
     case 'acceleration':
-      return 0;
+      return 64 * EPS * rigid.velocity * (drag + (gaugeTime > 0 ? 2 / gaugeTime : 0));
     case 'force':
     case 'stress':
       return 0;
@@ -137,7 +141,7 @@ function rmsOf(
   for (const lump of member.mass) mass += lump;
   const flux = quantity === 'force' || quantity === 'stress';
   const rounding = series.rounding.level(quantity === 'acceleration' ? 1 : 0);
-  const scale = factor ? factor.reduce((largest, value) => Math.max(largest, value), 0) : 1;
+  const scale = factor ? member.stressFactor.reduce((largest, value) => Math.max(largest, value), 0) : 1;
   return ((factors.rmsNumerator + rounding) / Math.sqrt(flux ? flexibility : mass)) * scale;
 }
 

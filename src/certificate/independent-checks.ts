@@ -19,6 +19,8 @@ export interface CheckResults {
 
 /** Products of modes, points and instants that the checks may spend. */
 const WORK = 4e6;
+/** Points beyond which a grid is not worth its time: the checks are then left out. */
+const LARGEST_GRID = 1_000_000;
 /** Instants of the energy balance at most. */
 const INSTANTS = 64;
 /** Shapes held for the pairs far apart at most; 45 shapes make 990 pairs. */
@@ -36,17 +38,18 @@ const HELD = 45;
  *   force balance of each node, relative to the terms.
  *
  * Of long series every m-th triple of modes is checked and fewer instants are taken, so that the
- * cost stays near 4e6 multiplications.
+ * cost stays near 4e6 multiplications; null where one shape alone would need a million points.
  */
 export function checkIndependently(
   member: WaveMember,
   kept: readonly KeptMode[],
   times: Float64Array,
   energy: number,
-): CheckResults {
+): CheckResults | null {
   const highest = kept[kept.length - 1].mode.shape.lambda;
   const grid = new QuadratureGrid(member, highest);
   const perMode = grid.size;
+  if (perMode > LARGEST_GRID) return null;
   const instants = pick(
     times,
     Math.max(1, Math.min(INSTANTS, Math.floor(WORK / (2 * perMode * kept.length)))),
@@ -212,24 +215,32 @@ function shapeResidual(
       ratio(pFar - pNear + density * sumU, Math.abs(pFar) + Math.abs(pNear) + Math.abs(density) * sizeU),
       ratio(uFar - uNear - soft * sumP, Math.abs(uFar) + Math.abs(uNear) + soft * sizeP),
     );
-    if (i + 1 < member.segmentCount) {
-      const next = ends[ENDS * (i + 1) + 1];
-      const load = (member.spring[i + 1] - lambda * member.mass[i + 1]) * uFar;
-      const own = (member.spring[i + 1] + lambda * member.mass[i + 1]) * Math.abs(uFar);
-      // the two sides were marched apart: a quiet node is held against the mode's own flux
-      worst = Math.max(
-        worst,
-        ratio(
-          next - pFar - load,
-          Math.abs(next) +
-            Math.abs(pFar) +
-            own +
-            Math.sqrt(density > 0 ? density * member.stiffness[i] : 0) * Math.abs(uFar),
-        ),
-      );
+    const impedance = density > 0 ? Math.sqrt(density * member.stiffness[i]) : 0;
+    const next = i + 1 < member.segmentCount ? ends[ENDS * (i + 1) + 1] : 0;
+    if (i + 1 < member.segmentCount || !member.farFixed) {
+      worst = Math.max(worst, nodeResidual(member, lambda, i + 1, uFar, pFar, next, impedance));
+    }
+    if (i === 0 && !member.nearFixed) {
+      worst = Math.max(worst, nodeResidual(member, lambda, 0, uNear, 0, pNear, impedance));
     }
   }
   return worst;
+}
+
+/** Force balance p⁺ − p⁻ = (K − ω² M) φ of a node, relative to its terms and to the wave beside it. */
+function nodeResidual(
+  member: WaveMember,
+  lambda: number,
+  node: number,
+  u: number,
+  before: number,
+  after: number,
+  impedance: number,
+): number {
+  const spring = member.spring[node];
+  const inertia = lambda * member.mass[node];
+  const size = Math.abs(after) + Math.abs(before) + (spring + inertia + impedance) * Math.abs(u);
+  return ratio(after - before - (spring - inertia) * u, size);
 }
 
 function ratio(defect: number, size: number): number {

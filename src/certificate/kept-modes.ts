@@ -21,6 +21,12 @@ export interface KeptMode {
   readonly factors: readonly number[];
 }
 
+/** The rigid-body part of the motion: |a₀|φ₀ and |v₀|φ₀, m and m/s. */
+export interface RigidPart {
+  readonly position: number;
+  readonly velocity: number;
+}
+
 /** What is known of the tail after N modes, over the whole member. */
 export interface TailState {
   readonly kept: number;
@@ -28,13 +34,15 @@ export interface TailState {
   readonly member: MemberTail;
   readonly rounding: Rounding;
   readonly loads: LoadTailFactors;
-  /** Kinetic energy of the rigid-body mode, J. */
-  readonly rigidEnergy: number;
+  /** Rigid-body part of the motion; 0 where there is none. */
+  readonly rigid: RigidPart;
   /** The whole elastic motion taken as a tail: its energies and the suprema of G and H. */
   readonly whole: {
     readonly energies: TailEnergies;
     readonly member: MemberTail;
     readonly loads: LoadTailFactors;
+    /** Whether there is no elastic energy, or nothing but rounding beside a rigid-body motion. */
+    readonly silent: boolean;
   };
 }
 
@@ -85,7 +93,7 @@ export function keepModes(
 ): KeptSeries {
   const series = new ModeSeries(member);
   const projection = new ModalProjection(member, state.displacement, state.velocity);
-  const energy = new EnergyTail(state.energies);
+  const energy = new EnergyTail(state.energies, state.roundings);
   const flexibility = new TailFlexibility(member, controlStations(member));
   const rounding = new Rounding(span, series.frequencies.travelTime, member.segmentCount);
   const loadTails = new LoadTails(member, loads);
@@ -93,21 +101,31 @@ export function keepModes(
   const history: number[] = [];
   const mostHeld = Math.floor(heldNumbers / (4 * member.segmentCount));
   let coupling = 0;
-  let rigidEnergy = 0;
   let whole: TailState['whole'] | null = null;
+  let rigid: RigidPart = { position: 0, velocity: 0 };
+
+  const tooMany = (count: number): never => {
+    throw fault('too-many-values', '/series', {
+      count: 4 * member.segmentCount * count,
+      what: `${count} modes of ${member.segmentCount} segments`,
+      limit: heldNumbers,
+    });
+  };
+  if (!adaptive && Math.min(limit, series.frequencies.total) > mostHeld) tooMany(limit);
 
   /** The elastic motion before any elastic mode is taken out, ω its lowest frequency. */
   const wholeMotion = (omega: number, kept: number): TailState['whole'] => {
     const [total, first, second] = state.energies;
     return {
       energies: {
-        energy: Math.max(0, total - rigidEnergy),
-        first: first ?? Number.POSITIVE_INFINITY,
-        second: second ?? Number.POSITIVE_INFINITY,
+        energy: total + state.roundings[0] + 64 * Number.EPSILON * total,
+        first: first === null ? Number.POSITIVE_INFINITY : first + state.roundings[1],
+        second: second === null ? Number.POSITIVE_INFINITY : second + state.roundings[2],
         nextOmega: omega,
       },
       member: memberTail(member, flexibility, omega * omega),
       loads: loadTails.factors(omega, kept, gaugeTime, span),
+      silent: loads.length === 0 && (total === 0 || (state.rigidEnergy > 0 && total <= state.roundings[0])),
     };
   };
 
@@ -115,15 +133,16 @@ export function keepModes(
   for (;;) {
     const mode: Mode = upcoming as Mode;
     const start = projection.project(mode.shape);
-    if (mode.frequency.omega === 0) rigidEnergy = start.energy;
-    else whole ??= wholeMotion(mode.frequency.lower, modes.length);
+    const elastic = mode.frequency.omega > 0;
+    if (elastic) whole ??= wholeMotion(mode.frequency.lower, modes.length);
+    else rigid = rigidPart(mode, start);
     const previous = modes[modes.length - 1]?.mode;
     const shared = couplingOf(member, mode, previous);
     coupling = Math.max(coupling, shared);
     const factors = loadTails.add(mode);
     modes.push({ mode, start, factors });
     rounding.add(mode, start, loads.length > 0 ? loadTails.amplitudes(mode, factors, span) : 0);
-    energy.add(start.energy, mode.shape.lambda, rounding.slack, shared);
+    if (elastic) energy.add(start.energy, mode.shape.lambda, rounding.slack, shared);
     flexibility.add(mode);
     upcoming = series.next();
 
@@ -135,10 +154,15 @@ export function keepModes(
         member: { flexibility: 0, fluxInertia: 0 },
         rounding,
         loads: NO_LOADS,
-        rigidEnergy,
-        whole: whole ?? { energies: NOTHING, member: { flexibility: 0, fluxInertia: 0 }, loads: NO_LOADS },
+        rigid,
+        whole: whole ?? {
+          energies: NOTHING,
+          member: { flexibility: 0, fluxInertia: 0 },
+          loads: NO_LOADS,
+          silent: true,
+        },
       };
-      requireConsistent(energy);
+      requireConsistent(energy, flexibility, Number.POSITIVE_INFINITY);
       return { modes, tail, energy, rounding, verdict: 'complete', modesNeeded: null, coupling };
     }
     const last = kept >= limit;
@@ -158,7 +182,7 @@ export function keepModes(
       member: memberTail(member, flexibility, nextLambda),
       rounding,
       loads: loadTails.factors(nextOmega, kept, gaugeTime, span),
-      rigidEnergy,
+      rigid,
       whole,
     };
     // the rigid-body mode must be among the kept; every series keeps at least one mode
@@ -166,17 +190,11 @@ export function keepModes(
     history.push(ratio);
     const verdict = decide(ratio, roundingRatio, last, energy.atFloor);
     if (verdict !== null) {
-      requireConsistent(energy);
+      requireConsistent(energy, flexibility, nextLambda);
       const modesNeeded = verdict === 'mode-limit' ? estimateNeeded(history, kept, ratio, adaptive) : null;
       return { modes, tail, energy, rounding, verdict, modesNeeded, coupling };
     }
-    if (kept >= mostHeld) {
-      throw fault('too-many-values', '/series', {
-        count: 4 * member.segmentCount * limit,
-        what: `${limit} modes of ${member.segmentCount} segments`,
-        limit: heldNumbers,
-      });
-    }
+    if (kept >= mostHeld) tooMany(limit);
   }
 }
 
@@ -213,11 +231,20 @@ function estimateNeeded(
   return needed < 1e9 ? Math.ceil(needed) : null;
 }
 
-/** More energy captured than there is means a wrong shape: never clamped silently. */
-function requireConsistent(energy: EnergyTail): void {
-  if (energy.excess <= 0) return;
+/**
+ * Energies and flexibilities must add up: more captured than there is, less than the smoothness of the
+ * data allows, or a flexibility overdrawn means a wrong shape, and is never clamped silently.
+ */
+function requireConsistent(energy: EnergyTail, flexibility: TailFlexibility, nextLambda: number): void {
+  const overdrawn = flexibility.overdrawn();
+  if (energy.excess <= 0 && !(energy.missing(nextLambda) > 0) && !overdrawn) return;
   throw fault('energy-inconsistent', '', {
     captured: energy.captured,
     total: energy.total[0],
   });
+}
+
+function rigidPart(mode: Mode, start: ModalStart): RigidPart {
+  const height = mode.shape.ends[0];
+  return { position: Math.abs(start.position) * height, velocity: Math.abs(start.velocity) * height };
 }

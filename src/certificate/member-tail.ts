@@ -35,8 +35,11 @@ export function controlStations(member: WaveMember, between = 3): Stations {
  *
  * Within a segment where every later mode travels, k(ω²ρ − s) φ² + p² is constant, so for any x* in it
  *   ΔG ≤ ΔG(x*) + ΔH(x*)/(Z² (1 − s/(ρ ω_{N+1}²))),   ΔH ≤ ΔH(x*) + Z² ΔG(x*),   Z² = kρ;
- * everywhere |√ΔG(x) − √ΔG(y)| ≤ √∫dz/k and |√ΔH(x) − √ΔH(y)| ≤ √∫ρ + √(∫s²/ρ)/ω_{N+1}², or
- * without inertia s |x − y| √ΔG/ω_{N+1}. The smaller of the two. Cost: O(stations).
+ * everywhere, with g the distance of neighbouring stations and κ_s = √(s/k),
+ *   √ΔG ≤ max of both + √(tanh(κ_s g/2)/(2√(ks)))   (√(g/4k) without bedding),
+ * a displacement being the static interpolation of both, which is no larger, and a part held at both;
+ * |√ΔH(x) − √ΔH(y)| ≤ √∫ρ + √(∫s²/ρ)/ω_{N+1}², or without inertia s |x − y| √ΔG/ω_{N+1}.
+ * The smaller of the two. Cost: O(stations).
  */
 export function memberTail(
   member: WaveMember,
@@ -77,11 +80,17 @@ export function memberTail(
       fluxInertia = Math.max(fluxInertia, (Math.sqrt(peakH) + drift) ** 2);
       continue;
     }
-    // no station is farther than half the largest gap, a good quarter of the segment over `between`
-    const gap = (0.56 * 1.12 * member.length[i]) / (between + 1);
-    const nearG = (Math.sqrt(peakG) + Math.sqrt(gap / k)) ** 2;
+    // between neighbouring stations: the larger of the two and what is flexible with both held
+    const gap = (1.11 * member.length[i]) / (between + 1);
+    const bedding = Math.sqrt(s / k);
+    const held =
+      s > 0
+        ? Math.sqrt(Math.tanh(0.5 * bedding * gap) / (2 * Math.sqrt(k * s)))
+        : Math.sqrt((0.25 * gap) / k);
+    const nearG = (Math.sqrt(peakG) + held) ** 2;
+    const half = 0.5 * gap;
     const nearH =
-      (Math.sqrt(peakH) + Math.sqrt(gap * rho) + Math.sqrt((gap * s * s) / rho) / nextLambda) ** 2;
+      (Math.sqrt(peakH) + Math.sqrt(half * rho) + Math.sqrt((half * s * s) / rho) / nextLambda) ** 2;
     flexibility = Math.max(flexibility, Math.min(nearG, joinedG));
     fluxInertia = Math.max(fluxInertia, Math.min(nearH, joinedH));
   }

@@ -5,7 +5,6 @@ import type { AppliedLoad } from '../motion/applied-loads.ts';
 import { largestRatioAbove } from '../motion/modal-damping.ts';
 import { stillPeak } from '../motion/still-peaks.ts';
 import type { Quantity } from '../spec/types.ts';
-import type { RigidPart } from './field-bounds.ts';
 import type { KeptSeries } from './kept-modes.ts';
 import { tailFactors } from './quantity-bounds.ts';
 
@@ -15,7 +14,6 @@ export interface PeakBasis {
   readonly series: KeptSeries;
   /** Largest G over the member, m/N. */
   readonly flexibility: number;
-  readonly rigid: RigidPart;
   readonly loads: readonly AppliedLoad[];
   readonly gaugeTime: number;
   readonly released: boolean;
@@ -29,7 +27,8 @@ export interface PeakBasis {
  * bound. Of averages where a gauge time is given. Null where no limit exists.
  */
 export function peakLimit(quantity: Quantity, basis: PeakBasis): number | null {
-  const { member, series, gaugeTime, released, rigid, span } = basis;
+  const { member, series, gaugeTime, released, span } = basis;
+  const { rigid } = series.tail;
   const { damping } = member;
   const flux = quantity === 'force' || quantity === 'stress';
   const scale = quantity === 'stress' ? Math.max(...member.stressFactor) : 1;

@@ -34,7 +34,8 @@ export class QuadratureGrid {
       this.first[i + 1] = this.first[i] + POINTS * this.panels[i];
     }
     this.size = this.first[n];
-    this.weights = new Float64Array(this.size);
+    this.weights = new Float64Array(Math.min(this.size, 1 << 20));
+    if (this.size > this.weights.length) return;
     for (let i = 0; i < n; i++) {
       const width = member.length[i] / this.panels[i];
       for (let at = this.first[i], q = 0; at < this.first[i + 1]; at++, q = (q + 1) % POINTS) {

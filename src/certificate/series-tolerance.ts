@@ -2,16 +2,17 @@ import type { WaveMember } from '../members/wave-member.ts';
 import type { ResponsesSeries } from '../spec/types.ts';
 import { totalMass } from '../spectrum/spectrum-size.ts';
 import type { Shortfall, TailState } from './kept-modes.ts';
+import { rigidRounding, roundingFactors } from './field-bounds.ts';
 import { tailFactors } from './quantity-bounds.ts';
 
 /** Tolerance that a fixed number of modes is judged by, relative to the ceiling. */
 const USUAL_TOLERANCE = 1e-3;
 
 /** Error of the displacement anywhere on the member within the span, m: tail and rounding. */
-export function displacementBound(tail: TailState, flexibility: number): number {
+export function displacementBound(tail: TailState, flexibility: number, span: number): number {
   const left =
     (Math.sqrt(2 * tail.energies.energy) + tail.loads.displacement) * Math.sqrt(tail.member.flexibility);
-  return left + displacementRounding(tail, flexibility);
+  return left + displacementRounding(tail, flexibility, span);
 }
 
 /** √(2E G) over the member and what loads can add: the elastic displacement never exceeds it, m. */
@@ -37,6 +38,7 @@ export function shortfallOf(
   gaugeTime: number,
   released: boolean,
   still: number,
+  span: number,
 ): Shortfall {
   const wanted = 'tolerances' in series ? series.tolerances : {};
   const relative = 'relativeTolerance' in series ? series.relativeTolerance : USUAL_TOLERANCE;
@@ -46,23 +48,31 @@ export function shortfallOf(
     if (!Number.isFinite(tail.loads.displacement)) {
       // a force that travels with the wave: only the mean square can be waited for, against the static shape
       const mean = tail.loads.rmsDisplacement / Math.sqrt(totalMass(member));
-      return { ratio: Number.isFinite(mean) ? share(mean, relative * still, mean) : 0, roundingRatio: 0 };
+      return { ratio: Number.isFinite(mean) ? share(mean, relative * still) : 0, roundingRatio: 0 };
     }
-    const tolerance = wanted.displacement ?? (force === null ? relative * ceiling : Number.POSITIVE_INFINITY);
-    const ratio = Math.max(
-      share(displacementBound(tail, flexibility), tolerance, ceiling),
-      force === null ? 0 : share(force.bound, wanted.force as number, force.bound),
-    );
-    const roundingRatio = Math.max(
-      share(displacementRounding(tail, flexibility), tolerance, ceiling),
-      force === null ? 0 : share(force.rounding, wanted.force as number, force.bound),
-    );
+    const error = displacementBound(tail, flexibility, span);
+    const noise = displacementRounding(tail, flexibility, span);
+    let ratio = 0;
+    let roundingRatio = 0;
+    if (wanted.displacement !== undefined) {
+      ratio = share(error, wanted.displacement);
+      roundingRatio = share(noise, wanted.displacement);
+    } else if (force === null && !tail.whole.silent) {
+      // an elastic motion of rounding size is none: it meets any relative tolerance
+      ratio = share(error, relative * ceiling);
+      roundingRatio = share(noise, relative * ceiling);
+    }
+    if (force !== null) {
+      ratio = Math.max(ratio, share(force.bound, wanted.force as number));
+      roundingRatio = Math.max(roundingRatio, share(force.rounding, wanted.force as number));
+    }
     return { ratio, roundingRatio };
   };
 }
 
-function displacementRounding(tail: TailState, flexibility: number): number {
-  return tail.rounding.level(0) * Math.sqrt(flexibility);
+function displacementRounding(tail: TailState, flexibility: number, span: number): number {
+  const elastic = tail.rounding.level(0) * Math.sqrt(flexibility);
+  return elastic + rigidRounding('displacement', tail.rigid, span, 0, 0);
 }
 
 function forceBound(
@@ -82,12 +92,12 @@ function forceBound(
   );
   if (!factors.exists) return null;
   const rounding =
-    (gaugeTime > 0 ? (4 / gaugeTime) * tail.rounding.level(0) : tail.rounding.level(1)) *
+    roundingFactors('force', member, tail.rounding, tail.whole.energies.nextOmega, gaugeTime) *
     Math.sqrt(tail.whole.member.fluxInertia);
   return { bound: factors.onFluxInertia * Math.sqrt(tail.member.fluxInertia) + rounding, rounding };
 }
 
-/** Error over tolerance; nothing is missing where the size itself is 0. */
-function share(error: number, tolerance: number, size: number): number {
-  return error === 0 || size === 0 ? 0 : error / tolerance;
+/** Error over tolerance. */
+function share(error: number, tolerance: number): number {
+  return error === 0 ? 0 : error / tolerance;
 }

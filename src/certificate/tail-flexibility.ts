@@ -72,9 +72,11 @@ export class TailFlexibility {
     this.displacement = new Float64Array(count);
     this.flux = new Float64Array(count);
 
-    const elastic = elasticFlexibility(member);
-    const nearlyFree = !drifts && this.whole.some((g) => g > 100 * elastic);
-    this.shift = nearlyFree ? 1 / (elastic * totalMass(member)) : 0;
+    // nearly free: restrained by something much softer than the member itself is
+    const relief = new InertiaRelief(member);
+    const own = largest(at((i, d) => relief.flexibility(i, d)));
+    const nearlyFree = !drifts && own > 0 && largest(this.whole) > 100 * own;
+    this.shift = nearlyFree ? 1 / (own * totalMass(member)) : 0;
     if (nearlyFree) {
       const shiftedResponse = new StaticResponse(member, this.shift);
       const start = at((i, d) => shiftedResponse.flexibility(i, d));
@@ -102,24 +104,30 @@ export class TailFlexibility {
     const error =
       omega * this.travelTime * ((0.5 * (upper - lower)) / (omega || 1) + EPS) +
       4 * EPS * member.segmentCount;
+    const soft = 1 / lambda;
+    const twice = 2 * error * soft;
+    const reduced = lambda / (lambda + this.shift);
+    let segment = -1;
+    let impedance = 0;
+    let admittance = 0;
     for (let m = 0; m < displacement.length; m++) {
       const q = first + m;
-      const i = stations.segment[q];
-      const u = displacement[m];
-      const p = flux[m];
-      const k = member.stiffness[i];
-      const impedance = k * Math.sqrt(Math.max(0, waveNumberSquare(member, i, lambda)));
-      const uAmplitude = Math.abs(u) + (impedance > 0 ? Math.abs(p) / impedance : 0);
-      const pAmplitude = Math.abs(p) + impedance * Math.abs(u);
-      const square = (u * u) / lambda;
-      const slack = (2 * error * Math.abs(u) * uAmplitude) / lambda;
+      if (stations.segment[q] !== segment) {
+        segment = stations.segment[q];
+        const square = waveNumberSquare(member, segment, lambda);
+        impedance = square > 0 ? member.stiffness[segment] * Math.sqrt(square) : 0;
+        admittance = impedance > 0 ? 1 / impedance : 0;
+      }
+      const u = Math.abs(displacement[m]);
+      const p = Math.abs(flux[m]);
+      const square = u * u * soft;
+      const slack = twice * u * (u + p * admittance);
       this.rest[q] -= square;
       this.floor[q] += slack;
-      const fluxRatio = p / lambda;
+      const fluxRatio = p * soft;
       this.restFlux[q] -= fluxRatio * fluxRatio;
-      this.floorFlux[q] += (2 * error * Math.abs(fluxRatio) * pAmplitude) / lambda;
+      this.floorFlux[q] += twice * fluxRatio * (p + impedance * u);
       if (this.shifted && this.shiftedFloor) {
-        const reduced = lambda / (lambda + this.shift);
         this.shifted[q] -= square * reduced;
         this.shiftedFloor[q] += slack * reduced;
       }
@@ -139,15 +147,20 @@ export class TailFlexibility {
     );
   }
 
+  /** Whether the modes took more of a flexibility than there is, beyond its floor: a shape must be wrong. */
+  overdrawn(): boolean {
+    return (
+      this.rest.some((rest, q) => rest < -this.floor[q]) ||
+      this.restFlux.some((rest, q) => rest < -this.floorFlux[q])
+    );
+  }
+
   /** Bound on ΔH at station q, kg, floor included. */
   fluxTail(q: number): number {
     return Math.max(0, this.restFlux[q]) + this.floorFlux[q];
   }
 }
 
-/** Σ l/k, the flexibility of the member as one stretch, m/N. */
-export function elasticFlexibility(member: WaveMember): number {
-  let flexibility = 0;
-  for (let i = 0; i < member.segmentCount; i++) flexibility += member.length[i] / member.stiffness[i];
-  return flexibility;
+function largest(values: Float64Array): number {
+  return values.reduce((most, value) => Math.max(most, value), 0);
 }

@@ -2,7 +2,8 @@ import type { WaveMember } from '../members/wave-member.ts';
 import { NaturalFrequencies, type NaturalFrequency } from '../spectrum/natural-frequencies.ts';
 import { totalMass } from '../spectrum/spectrum-size.ts';
 import { massProduct } from './mass-product.ts';
-import { rigidShape, shapeAt, type ModeShape } from './mode-shape.ts';
+import { rigidShape, type ModeShape } from './mode-shape.ts';
+import { shapeAt } from './shape-at.ts';
 
 /** A mode of the member: its frequency with enclosure and its mass-normalised shape. */
 export interface Mode {
@@ -12,17 +13,19 @@ export interface Mode {
   readonly coupling: number;
 }
 
-/** Neighbours closer than this (relative) are shaped together. */
-const CLOSE = 1e-3;
-/** Segments tried as joints for the shapes of a close group. */
+/** Neighbours closer than this (relative) may be shaped together. */
+const CLOSE = 1e-4;
+/** More modes than this so close together are a dense spectrum, not twins, and are shaped one by one. */
+const GROUP_LIMIT = 6;
+/** Nodes tried as joints for the shapes of a close group. */
 const JOINT_LIMIT = 64;
-/** Least independent part, match counted, below which no second shape was found. */
-const INDEPENDENT = 1e-9;
+/** Independent part from which a shape needs no other joint. */
+const INDEPENDENT_ENOUGH = 0.5;
 
 /**
  * The modes of a member in ascending order, made on demand.
  *
- * Shapes of neighbours whose frequencies differ by less than 1e-3 are made together: within such a
+ * Shapes of neighbours whose frequencies differ by less than 1e-4 are made together: within such a
  * group a single shape is defined only up to rounding over the gap, and two careless matches can
  * give the same shape twice. The group's shapes are therefore chosen independent, from joints in
  * different segments if need be, and made orthonormal in the mass product.
@@ -66,13 +69,11 @@ export class ModeSeries {
       const next = this.frequencies.next();
       this.ahead = next;
       if (next === null || next.omega - group[group.length - 1].omega > CLOSE * next.omega) break;
-      // a dense spectrum is not a close group: spacing must also be small against the mean spacing
-      const mean = Math.PI / this.frequencies.travelTime;
-      if (next.omega - group[group.length - 1].omega > 0.05 * mean) break;
+      if (group.length === GROUP_LIMIT) break;
       group.push(next);
     }
     if (group.length === 1) {
-      const shape = shapeAt(this.member, first.omega, first.joint);
+      const shape = shapeAt(this.member, first.omega);
       this.queue.push({ frequency: first, shape, coupling: 0 });
     } else {
       this.queue.push(...shapeGroup(this.member, group));
@@ -84,33 +85,25 @@ export class ModeSeries {
 function shapeGroup(member: WaveMember, group: readonly NaturalFrequency[]): Mode[] {
   const modes: Mode[] = [];
   for (const frequency of group) {
-    let best: ModeShape | null = null;
-    let bestPart = 0;
-    for (const joint of joints(member, frequency.joint)) {
-      const candidate = shapeAt(member, frequency.omega, joint);
-      const freed = free(member, candidate, modes);
-      // a poor match brings other modes in; beyond some independence nothing is gained
-      const part = Math.min(freed.part, 0.7) / (1 + candidate.mismatch * 1e11);
-      if (part > bestPart) {
-        bestPart = part;
-        best = freed.shape;
+    let best = free(member, shapeAt(member, frequency.omega), modes);
+    if (best.part < INDEPENDENT_ENOUGH) {
+      const stride = Math.max(1, Math.floor(member.segmentCount / JOINT_LIMIT));
+      for (let node = 0; node <= member.segmentCount; node += stride) {
+        const candidate = free(member, shapeAt(member, frequency.omega, node), modes);
+        if (worth(candidate) > worth(best)) best = candidate;
       }
-      if (part > 0.5) break;
     }
-    if (best === null || bestPart < INDEPENDENT) {
-      best = free(member, shapeAt(member, frequency.omega, frequency.joint), []).shape;
-    }
+    const { shape } = best;
     let coupling = 0;
-    for (const mode of modes) coupling = Math.max(coupling, Math.abs(massProduct(member, best, mode.shape)));
-    modes.push({ frequency, shape: best, coupling });
+    for (const mode of modes) coupling = Math.max(coupling, Math.abs(massProduct(member, shape, mode.shape)));
+    modes.push({ frequency, shape, coupling });
   }
   return modes;
 }
 
-function* joints(member: WaveMember, first: number): Generator<number> {
-  yield first;
-  const stride = Math.max(1, Math.floor(member.segmentCount / JOINT_LIMIT));
-  for (let i = 0; i < member.segmentCount; i += stride) if (i !== first) yield i;
+/** Independence up to a point beyond which nothing is gained, against a poor match, which brings other modes in. */
+function worth(candidate: { shape: ModeShape; part: number }): number {
+  return Math.min(candidate.part, 0.7) / (1 + candidate.shape.mismatch * 1e11);
 }
 
 /** A shape made orthogonal to others (twice, for full orthogonality), and how much of it was left. */

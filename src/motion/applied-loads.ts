@@ -101,6 +101,7 @@ function distributedShape(member: WaveMember, profile: GivenShape): LoadShape {
     return {
       ...piece,
       powers: piece.powers.map((c) => c * factor),
+      magnitude: piece.magnitude * factor,
       waves: piece.waves.map((term) => ({
         ...term,
         value: term.value * factor,
@@ -119,6 +120,7 @@ function bodyShape(member: WaveMember): LoadShape {
     length: member.length[segment],
     powers: [rho],
     waves: [],
+    magnitude: rho,
   }));
   let massNorm = 0;
   for (let i = 0; i < member.segmentCount; i++) massNorm += member.inertia[i] * member.length[i];

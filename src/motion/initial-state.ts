@@ -2,8 +2,8 @@ import type { WaveMember } from '../members/wave-member.ts';
 import { masslessStretches } from '../modes/massless-stretches.ts';
 import { StaticResponse } from '../modes/static-response.ts';
 import type { InitialMotion } from '../spec/types.ts';
-import { canDriftFreely } from '../spectrum/spectrum-size.ts';
-import { massForm, piecesStrainForm, strainForm } from './field-energy.ts';
+import { canDriftFreely, totalMass } from '../spectrum/spectrum-size.ts';
+import { massForm, massRounding, piecesStrainForm, strainForm, strainRounding } from './field-energy.ts';
 import {
   readDisplacement,
   settle,
@@ -13,6 +13,7 @@ import {
 import { readVelocity, type InitialVelocity } from './initial-velocity.ts';
 import { listOf } from './shape-pieces.ts';
 import { acceleration, inEnergySpace } from './smoothness.ts';
+import { pieceIntegral } from './wave-integrals.ts';
 
 /** The initial state of a member with the energies that its data allow. */
 export interface InitialState {
@@ -22,8 +23,13 @@ export interface InitialState {
   /**
    * E⁰ = ½a(f,f) + ½m(g,g), J; E¹ the same of (g, u_tt), J/s², where f lies in the domain of the wave
    * operator and g has finite strain energy; E² once more, J/s⁴; null where the data are not that smooth.
+   * Without the rigid-body motion, which an unrestrained member has besides.
    */
   readonly energies: readonly [number, number | null, number | null];
+  /** Bounds on the rounding of the energies. */
+  readonly roundings: readonly [number, number, number];
+  /** Kinetic energy of the rigid-body motion, J. */
+  readonly rigidEnergy: number;
   /** Strain energy of the given shape that massless stretches cannot keep, J. */
   readonly lostEnergy: number;
   /** Whether the motion starts from rest. */
@@ -43,7 +49,15 @@ export function readInitialState(
   const displacement = settle(member, given, stretches);
 
   const strain = 0.5 * strainForm(member, displacement, response);
-  const kinetic = 0.5 * massForm(member, velocity.pieces, velocity.masses);
+  const mean = response === null ? meanVelocity(member, velocity) : 0;
+  const own = mean === 0 ? velocity : relativeTo(member, velocity, mean);
+  const kinetic = 0.5 * massForm(member, own.pieces, own.masses);
+  const rigidEnergy = 0.5 * totalMass(member) * mean * mean;
+  const roundings: [number, number, number] = [
+    strainRounding(member, displacement.pieces) + massRounding(member, own.pieces),
+    0,
+    0,
+  ];
   const lost = stretches.length > 0 ? 0.5 * strainForm(member, given, response) - strain : 0;
 
   // one level up, u_t takes the place of u and u_tt that of u_t
@@ -53,6 +67,7 @@ export function readInitialState(
   let second: number | null = null;
   if (speed !== null && start !== null) {
     first = 0.5 * piecesStrainForm(member, speed) + 0.5 * massForm(member, start.pieces, start.masses);
+    roundings[1] = strainRounding(member, speed) + massRounding(member, start.pieces);
     const startSettled = inEnergySpace(member, start, stretches);
     const jerk = acceleration(member, speed, []);
     if (startSettled !== null && jerk !== null) {
@@ -60,12 +75,37 @@ export function readInitialState(
         0.5 * piecesStrainForm(member, startSettled) + 0.5 * massForm(member, jerk.pieces, jerk.masses);
     }
   }
-  const still = velocity.masses.every((value) => value === 0) && kinetic === 0;
+  const still = velocity.masses.every((value) => value === 0) && kinetic === 0 && mean === 0;
   return {
     displacement,
     velocity,
     energies: [strain + kinetic, first, second],
+    roundings,
+    rigidEnergy,
     lostEnergy: Math.max(0, lost),
     released: still && listOf(initial.impulses).length === 0,
+  };
+}
+
+/** m(1, g)/m, the velocity of the whole. */
+function meanVelocity(member: WaveMember, velocity: InitialVelocity): number {
+  let momentum = 0;
+  for (const piece of velocity.pieces) {
+    const rho = member.inertia[piece.segment];
+    if (rho > 0) momentum += rho * pieceIntegral(piece);
+  }
+  for (let j = 0; j <= member.segmentCount; j++) momentum += member.mass[j] * velocity.masses[j];
+  return momentum / totalMass(member);
+}
+
+/** The velocity seen from the moving whole. */
+function relativeTo(member: WaveMember, velocity: InitialVelocity, mean: number): InitialVelocity {
+  return {
+    pieces: velocity.pieces.map((piece) => ({
+      ...piece,
+      powers: [(piece.powers[0] ?? 0) - mean, ...piece.powers.slice(1)],
+      magnitude: piece.magnitude + Math.abs(mean),
+    })),
+    masses: velocity.masses.map((value, j) => (member.mass[j] > 0 ? value - mean : 0)),
   };
 }

@@ -56,7 +56,14 @@ export function readVelocity(
   };
   const pieces = shapePieces(member, given, breaks, extra);
 
-  const atNodes = velocityAtNodes(member, pieces);
+  // a spread impulse acts on the inertia beside a mass, not on the mass
+  const shaped =
+    spread.length === 0
+      ? pieces
+      : shapePieces(member, given, breaks, (from, to, segment) => ({
+          waves: pulls.map((pull) => staticTerm(member, pull, response as StaticResponse, from, to, segment)),
+        }));
+  const atNodes = velocityAtNodes(member, shaped);
   const masses = new Float64Array(member.segmentCount + 1);
   for (let j = 0; j <= member.segmentCount; j++) if (member.mass[j] > 0) masses[j] = atNodes[j];
   for (const own of initial.massVelocities ?? []) {

@@ -54,7 +54,7 @@ export function freeMotion(
     const fade = Math.exp(-slow * t);
     const quick = Math.exp(-2 * mu * t);
     const c = 0.5 * fade * (1 + quick);
-    const s = mu * t < 1e-4 ? fade * t * (1 - mu * t) : (-0.5 * fade * Math.expm1(-2 * mu * t)) / mu;
+    const s = mu === 0 ? fade * t : (-0.5 * fade * Math.expm1(-2 * mu * t)) / mu;
     position[j] = a * c + (v + half * a) * s;
     velocity[j] = v * c - (lambda * a + half * v) * s;
   }

@@ -179,6 +179,7 @@ function slopeOf(piece: Piece): Piece {
     ...piece,
     powers: derivedPowers(piece.powers).map((c) => c / piece.length),
     waves: piece.waves.map((term) => derivativeOf(term, piece.length)),
+    magnitude: (piece.magnitude * Math.max(0, piece.powers.length - 1)) / piece.length,
   };
 }
 

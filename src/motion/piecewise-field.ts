@@ -22,6 +22,8 @@ export interface Piece {
   /** Coefficients of 1, t, t², … with t = ξ/h, ξ from the cell's near end. */
   readonly powers: readonly number[];
   readonly waves: readonly WaveTerm[];
+  /** Sum of the absolute terms that the powers were made of: the scale of their rounding. */
+  readonly magnitude: number;
 }
 
 /** A function on the whole member: cells in ascending order, covering every segment. */
@@ -38,6 +40,7 @@ const STRONG_DECAY = 1;
 
 /** Value of a wave term at ξ. */
 export function waveValue(term: WaveTerm, length: number, xi: number): number {
+  if (xi === length) return term.farValue;
   const square = term.square * length * length;
   if (square < -STRONG_DECAY) {
     const kappa = Math.sqrt(-term.square);
@@ -90,7 +93,7 @@ export function derivedPowers(powers: readonly number[]): number[] {
 export function pieceValue(piece: Piece, xi: number): Sampled {
   const t = xi / piece.length;
   let value = horner(piece.powers, t);
-  let scale = horner(piece.powers.map(Math.abs), t);
+  let scale = piece.magnitude;
   for (const term of piece.waves) {
     value += waveValue(term, piece.length, xi);
     scale += amplitude(term);
@@ -103,7 +106,7 @@ export function pieceSlope(piece: Piece, xi: number): Sampled {
   const t = xi / piece.length;
   const powers = derivedPowers(piece.powers);
   let value = horner(powers, t) / piece.length;
-  let scale = horner(powers.map(Math.abs), t) / piece.length;
+  let scale = (piece.magnitude * Math.max(0, piece.powers.length - 1)) / piece.length;
   for (const term of piece.waves) {
     value += waveSlope(term, piece.length, xi);
     scale += amplitude(term) * Math.sqrt(Math.abs(term.square)) + Math.abs(term.slope);

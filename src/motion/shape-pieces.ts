@@ -56,22 +56,30 @@ function pieceOf(
   const h = to - from;
   const powers: number[] = [...(extra.powers ?? [])];
   const waves: WaveTerm[] = [...(extra.waves ?? [])];
-  const add = (terms: readonly number[]): void => terms.forEach((c, j) => (powers[j] = (powers[j] ?? 0) + c));
+  let magnitude = powers.reduce((sum, c) => sum + Math.abs(c), 0);
+  const add = (terms: readonly number[], size: number): void => {
+    terms.forEach((c, j) => (powers[j] = (powers[j] ?? 0) + c));
+    magnitude += size;
+  };
   for (const shape of shapes) {
     const middle = 0.5 * (from + to);
     switch (shape.type) {
       case 'uniform':
-        if (within(shape, middle, total)) add([shape.value]);
+        if (within(shape, middle, total)) add([shape.value], Math.abs(shape.value));
         break;
       case 'polynomial':
-        if (within(shape, middle, total)) add(shifted(shape.coefficients, from, h));
+        if (within(shape, middle, total))
+          add(shifted(shape.coefficients, from, h), absoluteTerms(shape.coefficients, to));
         break;
       case 'polyline': {
         const { positions, values } = shape;
-        const last = positions.findIndex((x) => x >= middle);
-        if (last <= 0) break;
+        const last = firstAtLeast(positions, middle);
+        if (last <= 0 || last >= positions.length) break;
         const slope = (values[last] - values[last - 1]) / (positions[last] - positions[last - 1]);
-        add([values[last - 1] + slope * (from - positions[last - 1]), slope * h]);
+        add(
+          [values[last - 1] + slope * (from - positions[last - 1]), slope * h],
+          Math.abs(values[last - 1]) + Math.abs(values[last]),
+        );
         break;
       }
       case 'half-sine': {
@@ -87,7 +95,7 @@ function pieceOf(
       }
     }
   }
-  return { segment, start: from - member.position[segment], length: h, powers, waves };
+  return { segment, start: from - member.position[segment], length: h, powers, waves, magnitude };
 }
 
 /** Where the shape changes its formula, m. */
@@ -105,6 +113,23 @@ function breakpoints(shape: GivenShape, length: number): readonly number[] {
 
 function within(shape: { from: number; to?: number }, x: number, length: number): boolean {
   return x >= shape.from && x <= (shape.to ?? length);
+}
+
+/** Σ|c_j| x^j. */
+function absoluteTerms(coefficients: readonly number[], x: number): number {
+  return coefficients.reduceRight((sum, c) => sum * x + Math.abs(c), 0);
+}
+
+/** Index of the first position not before x. */
+function firstAtLeast(positions: readonly number[], x: number): number {
+  let low = 0;
+  let high = positions.length;
+  while (low < high) {
+    const mid = (low + high) >> 1;
+    if (positions[mid] >= x) high = mid;
+    else low = mid + 1;
+  }
+  return low;
 }
 
 /** Coefficients in t of Σ c_j (from + h t)^j (Taylor shift by Horner's scheme). */

@@ -112,7 +112,7 @@ export function acceleration(
 
 function accelerated(member: WaveMember, piece: Piece): Piece {
   const rho = member.inertia[piece.segment];
-  if (rho === 0) return { ...piece, powers: [], waves: [] };
+  if (rho === 0) return { ...piece, powers: [], waves: [], magnitude: 0 };
   const k = member.stiffness[piece.segment];
   const s = member.foundation[piece.segment];
   const h2 = piece.length * piece.length;
@@ -129,7 +129,9 @@ function accelerated(member: WaveMember, piece: Piece): Piece {
       farValue: factor * term.farValue,
     };
   });
-  return { ...piece, powers, waves };
+  const degree = piece.powers.length;
+  const magnitude = (piece.magnitude * ((k / h2) * degree * degree + s)) / rho;
+  return { ...piece, powers, waves, magnitude };
 }
 
 function endsSegment(member: WaveMember, piece: Piece): boolean {

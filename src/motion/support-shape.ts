@@ -61,17 +61,26 @@ export function supportState(
 function staticPiece(member: WaveMember, segment: number, near: number, far: number): Piece {
   const length = member.length[segment];
   const square = -member.foundation[segment] / member.stiffness[segment];
-  if (square === 0) return { segment, start: 0, length, powers: [near, far - near], waves: [] };
+  if (square === 0)
+    return {
+      segment,
+      start: 0,
+      length,
+      powers: [near, far - near],
+      waves: [],
+      magnitude: Math.abs(near) + Math.abs(far),
+    };
   const a = Math.min(Math.sqrt(-square) * length, 700);
   const slope = ((far - near * Math.cosh(a)) * (a / Math.sinh(a))) / length;
   const wave: WaveTerm = { square, value: near, slope, farValue: far };
-  return { segment, start: 0, length, powers: [], waves: [wave] };
+  return { segment, start: 0, length, powers: [], waves: [wave], magnitude: 0 };
 }
 
 export function scaledPiece(piece: Piece, factor: number): Piece {
   return {
     ...piece,
     powers: piece.powers.map((c) => c * factor),
+    magnitude: piece.magnitude * factor,
     waves: piece.waves.map((term) => ({
       square: term.square,
       value: term.value * factor,

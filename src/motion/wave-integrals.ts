@@ -1,8 +1,12 @@
-import { GAUSS_20 } from '../numerics/gauss-legendre.ts';
+import { GAUSS_20, gaussLegendre, type QuadratureRule } from '../numerics/gauss-legendre.ts';
+import { sinc } from '../numerics/wave-functions.ts';
 import { derivedPowers, horner, waveSlope, waveValue, type Piece, type WaveTerm } from './piecewise-field.ts';
 
 /** Largest phase of one Gauss panel. */
 const PANEL = 3;
+/** Phase below which 8 points are as good as 20 for a polynomial of degree up to 3. */
+const SHORT = 0.5;
+const GAUSS_8 = gaussLegendre(8);
 
 /**
  * ∫₀ʰ f y over a cell, f a piece and y a solution of y″ + κ² y = 0 given at both ends of the cell.
@@ -21,9 +25,33 @@ export function pieceTimesWave(piece: Piece, y: WaveTerm): number {
   return total;
 }
 
+/** ∫₀ʰ of a piece. */
+export function pieceIntegral(piece: Piece): number {
+  const powers = piece.powers.reduce((sum, c, j) => sum + c / (j + 1), 0) * piece.length;
+  return piece.waves.reduce((sum, term) => sum + waveIntegral(term, piece.length), powers);
+}
+
+/**
+ * ∫₀ʰ y of a wave, closed form without cancellation: y₀ h sinc a + y₀′ (h²/2) sinc²(a/2), or
+ * (y₀ + y₁) tanh(a/2)/κ where it decays.
+ */
+export function waveIntegral(y: WaveTerm, h: number): number {
+  const square = y.square * h * h;
+  if (square < -1) {
+    const kappa = Math.sqrt(-y.square);
+    return ((y.value + y.farValue) * Math.tanh(0.5 * kappa * h)) / kappa;
+  }
+  const half = sinc(0.25 * square);
+  return h * (y.value * sinc(square) + 0.5 * h * y.slope * half * half);
+}
+
 function powersTimesWave(powers: readonly number[], y: WaveTerm, h: number): number {
+  if (powers.length === 1) return powers[0] * waveIntegral(y, h);
   const square = y.square * h * h;
   const phase = Math.sqrt(Math.abs(square));
+  if (phase < SHORT && powers.length <= 4) {
+    return gauss(h, 0, (xi) => horner(powers, xi / h) * waveValue(y, h, xi), GAUSS_8);
+  }
   if (phase <= Math.max(PANEL, powers.length)) {
     return gauss(h, phase, (xi) => horner(powers, xi / h) * waveValue(y, h, xi));
   }
@@ -61,8 +89,9 @@ function waveTimesWave(f: WaveTerm, y: WaveTerm, h: number): number {
     const midSum = sc * Math.cos(sum) - ss * Math.sin(sum);
     return 0.5 * h * (midDifference * sincDifference - (midSum * Math.sin(sum)) / sum);
   }
-  if (f.square < 0 !== y.square < 0 && a * a + b * b > PANEL * PANEL) {
-    // (f′y − f y′)′ = (κ_y² − κ_f²) f y, of one sign here
+  const apart = f.square < 0 !== y.square < 0 || a > 2 * b || b > 2 * a;
+  if (apart && a * a + b * b > PANEL * PANEL) {
+    // (f′y − f y′)′ = (κ_y² − κ_f²) f y, the squares far apart
     const end = waveSlope(f, h, h) * waveValue(y, h, h) - waveValue(f, h, h) * waveSlope(y, h, h);
     return (end - (f.slope * y.value - f.value * y.slope)) / (y.square - f.square);
   }
@@ -70,14 +99,19 @@ function waveTimesWave(f: WaveTerm, y: WaveTerm, h: number): number {
 }
 
 /** ∫₀ʰ g with 20-point panels of at most the given phase each. */
-export function gauss(h: number, phase: number, g: (xi: number) => number): number {
+export function gauss(
+  h: number,
+  phase: number,
+  g: (xi: number) => number,
+  rule: QuadratureRule = GAUSS_20,
+): number {
   const panels = Math.max(1, Math.ceil(phase / PANEL));
   const width = h / panels;
   let total = 0;
   for (let panel = 0; panel < panels; panel++) {
     let sum = 0;
-    for (let q = 0; q < GAUSS_20.nodes.length; q++) {
-      sum += GAUSS_20.weights[q] * g((panel + GAUSS_20.nodes[q]) * width);
+    for (let q = 0; q < rule.nodes.length; q++) {
+      sum += rule.weights[q] * g((panel + rule.nodes[q]) * width);
     }
     total += sum;
   }

@@ -4,6 +4,8 @@ import { PRODUCT_KERNEL } from './product-kernel.ts';
 const PAGE = 65536;
 /** Rows and columns are handled in panels of four. */
 const PANEL = 4;
+/** Fewer rows than this are summed one by one: panels would be mostly padding. */
+const FEW_ROWS = 3;
 
 interface Kernel {
   readonly memory: { readonly buffer: ArrayBuffer; grow(pages: number): number };
@@ -25,10 +27,13 @@ export class ProductSum {
   private readonly columns: number;
   private readonly rowPanels: number;
   private readonly columnPanels: number;
-  private readonly kernel: Kernel;
+  private readonly kernel: Kernel | null;
   private readonly packedA: Float64Array;
   private readonly packedB: Float64Array;
   private readonly packedC: Float64Array;
+  /** The sum of few rows, and of one block of them. */
+  private readonly plain: Float64Array;
+  private readonly block: Float64Array;
 
   /** @param depth most rows that A and B have in one call */
   constructor(rows: number, columns: number, depth: number) {
@@ -36,6 +41,14 @@ export class ProductSum {
     this.columns = columns;
     this.rowPanels = Math.ceil(rows / PANEL);
     this.columnPanels = Math.ceil(columns / PANEL);
+    const few = rows <= FEW_ROWS;
+    this.plain = new Float64Array(few ? rows * columns : 0);
+    this.block = new Float64Array(few ? columns : 0);
+    if (few) {
+      this.kernel = null;
+      this.packedA = this.packedB = this.packedC = this.plain;
+      return;
+    }
     this.kernel = instantiate();
     const sizeA = depth * PANEL * this.rowPanels;
     const sizeB = depth * PANEL * this.columnPanels;
@@ -50,6 +63,10 @@ export class ProductSum {
 
   /** Adds Aᵀ B of the first n rows of A [n × rows] and B [n × columns]. */
   add(n: number, a: Float64Array, b: Float64Array): void {
+    if (this.kernel === null) {
+      this.addFew(n, a, b);
+      return;
+    }
     pack(a, this.rows, n, this.packedA);
     pack(b, this.columns, n, this.packedB);
     this.kernel.addProduct(
@@ -62,9 +79,23 @@ export class ProductSum {
     );
   }
 
+  /** The same sums in the same order, row by row. */
+  private addFew(n: number, a: Float64Array, b: Float64Array): void {
+    const { rows, columns, plain, block } = this;
+    for (let r = 0; r < rows; r++) {
+      block.fill(0);
+      for (let m = 0; m < n; m++) {
+        const factor = a[m * rows + r];
+        for (let q = 0, at = m * columns; q < columns; q++, at++) block[q] += factor * b[at];
+      }
+      for (let q = 0, at = r * columns; q < columns; q++, at++) plain[at] += block[q];
+    }
+  }
+
   /** The sum, shape [rows × columns] row-major. */
   values(): Float64Array {
     const { rows, columns, columnPanels, packedC } = this;
+    if (this.kernel === null) return this.plain;
     const values = new Float64Array(rows * columns);
     for (let r = 0; r < rows; r++) {
       const from = (Math.floor(r / PANEL) * columnPanels * PANEL + (r % PANEL)) * PANEL;

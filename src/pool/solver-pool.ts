@@ -41,9 +41,15 @@ interface Job {
 }
 
 /**
+ * Time in ms that a worker gets to finish a solve whose client has gone. Replacing a worker
+ * takes about as long, so stopping at once would cost more than it saves where clients often leave.
+ */
+const patience = 250;
+
+/**
  * A fixed number of worker threads behind a bounded line of waiting requests, first come, first
  * served. Every request is settled exactly once: by its answer, by faults, or because its client has
- * gone. A worker whose task is stopped, crashes or runs out of memory is ended and replaced.
+ * gone. A worker that crashes, runs out of memory or works on for nobody is ended and replaced.
  *
  * The line is kept here because the pool library counts only tasks without an abort signal against
  * its own queue limit, and moves those with one out of order.
@@ -128,10 +134,10 @@ export class SolverPool {
 
   #admit(task: SolveTask, limits: SolveLimits, resolve: (outcome: SolveOutcome) => void): void {
     const left = Math.max(0, limits.arrived + limits.deadline * 1000 - performance.now());
-    const timer = setTimeout(
-      () => job.settle(refusal('deadline-exceeded', { seconds: limits.deadline })),
-      left,
-    );
+    const timer = setTimeout(() => {
+      job.settle(refusal('deadline-exceeded', { seconds: limits.deadline }));
+      job.stopper.abort();
+    }, left);
     const leave = (): void => job.settle({ kind: 'gone' });
     const job: Job = {
       task,
@@ -140,7 +146,7 @@ export class SolverPool {
         clearTimeout(timer);
         limits.gone?.removeEventListener('abort', leave);
         resolve(outcome);
-        this.#remove(job);
+        this.#leave(job);
       },
     };
     if (limits.gone?.aborted) return leave();
@@ -149,16 +155,14 @@ export class SolverPool {
     this.#next();
   }
 
-  /** Takes a settled request out of the pool; a worker still at it is ended and replaced. */
-  #remove(job: Job): void {
-    if (this.#running.delete(job)) {
-      job.stopper.abort();
-    } else {
-      const place = this.#waiting.indexOf(job);
-      if (place >= 0) this.#waiting.splice(place, 1);
+  /** Takes a settled request out of the line, or bounds the time of a worker that is still at it. */
+  #leave(job: Job): void {
+    if (this.#running.has(job)) {
+      setTimeout(() => this.#running.has(job) && job.stopper.abort(), patience).unref();
+      return;
     }
-    this.#next();
-    if (this.#running.size === 0) this.#drained();
+    const place = this.#waiting.indexOf(job);
+    if (place >= 0) this.#waiting.splice(place, 1);
   }
 
   #next(): void {
@@ -182,6 +186,8 @@ export class SolverPool {
     }
     this.#running.delete(job);
     job.settle(outcome);
+    this.#next();
+    if (this.#running.size === 0) this.#drained();
   }
 
   #outcomeOf(result: SolveResult): SolveOutcome {
@@ -199,7 +205,10 @@ export class SolverPool {
   }
 
   #refuseAll(): void {
-    for (const job of [...this.#waiting, ...this.#running]) job.settle(refusal('stopping'));
+    for (const job of [...this.#waiting, ...this.#running]) {
+      job.settle(refusal('stopping'));
+      job.stopper.abort();
+    }
   }
 }
 

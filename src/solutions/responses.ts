@@ -1,4 +1,4 @@
-import { certify, type RigidPart } from '../certificate/field-bounds.ts';
+import { certify } from '../certificate/field-bounds.ts';
 import { checkIndependently } from '../certificate/independent-checks.ts';
 import { keepModes, type KeptSeries } from '../certificate/kept-modes.ts';
 import { peakLimit, type PeakBasis } from '../certificate/peak-limits.ts';
@@ -26,6 +26,7 @@ import type {
   ResponsesRequest,
   Times,
 } from '../spec/types.ts';
+import { contactNotice } from './contact-notice.ts';
 import { HELD_NUMBERS } from './limits.ts';
 import { unitOf } from './quantity-units.ts';
 
@@ -60,7 +61,7 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
     'modes' in request.series ? request.series.modes : request.series.maxModes,
     !('modes' in request.series),
     span,
-    shortfallOf(request.series, member, flexibility, gaugeTime, state.released, still),
+    shortfallOf(request.series, member, flexibility, gaugeTime, state.released, still, span),
     HELD_NUMBERS,
   );
 
@@ -77,12 +78,10 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
     (mode, u, p, first) => tails.addSampled(mode, u, p, first),
   );
 
-  const rigid = rigidPart(series);
   const basis: PeakBasis = {
     member,
     series,
     flexibility,
-    rigid,
     loads,
     gaugeTime,
     released: state.released,
@@ -92,17 +91,7 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
   const peaks: Peaks = {};
   quantities.forEach((quantity, index) => {
     const factor = quantity === 'stress' ? stress : null;
-    const certificate = certify(
-      quantity,
-      member,
-      series,
-      tails,
-      gaugeTime,
-      state.released,
-      rigid,
-      span,
-      factor,
-    );
+    const certificate = certify(quantity, member, series, tails, gaugeTime, state.released, span, factor);
     const values = rowsOf(sums.get(kinds[index]) as Float64Array, stations.position.length, factor);
     fields[quantity] = {
       unit: unitOf(quantity, member.kind),
@@ -115,7 +104,8 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
     peaks[quantity] = sampledPeak(values, stations, times, peakLimit(quantity, basis));
   });
 
-  const total = state.energies[0];
+  const total = state.energies[0] + state.rigidEnergy;
+  const captured = series.modes.reduce((sum, kept) => sum + kept.start.energy, 0);
   const checks = request.checks ? checkIndependently(member, series.modes, times, total) : null;
   return {
     coefficients: series.modes.map(({ mode, start }) => ({
@@ -133,18 +123,18 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
       ...(series.modesNeeded !== null && { modesNeeded: series.modesNeeded }),
       energy: {
         total,
-        captured: series.energy.captured,
+        captured,
         tail: series.tail.energies.energy,
-        capturedFraction: total > 0 ? series.energy.captured / total : 1,
+        capturedFraction: total > 0 ? captured / total : 1,
       },
       ceiling: finite(displacementCeiling(series.tail, flexibility, still)),
-      displacementBound: finite(displacementBound(series.tail, flexibility)),
+      displacementBound: finite(displacementBound(series.tail, flexibility, span)),
       balance: checks && { maxRelativeDrift: checks.drift },
       orthogonality: checks && checks.orthogonality,
       residual: checks && checks.residual,
       spectrumComplete: true,
     },
-    notices: noticesOf(request, state, series),
+    notices: noticesOf(request, member, state, series, loads, times),
   };
 }
 
@@ -163,19 +153,7 @@ function sampledTimes(times: Times): Float64Array {
 
 /** The field whose values give a quantity: stress is force times a factor. */
 function sampledKind(quantity: Quantity): FieldKind {
-  if (quantity === 'stress') return 'force';
-  return quantity === 'relativeDisplacement' ? 'displacement' : quantity;
-}
-
-/** |a₀|φ₀ and |v₀|φ₀ of the rigid-body mode; 0 where there is none. */
-function rigidPart(series: KeptSeries): RigidPart {
-  const first = series.modes[0];
-  if (first.mode.frequency.omega > 0) return { position: 0, velocity: 0 };
-  const height = first.mode.shape.ends[0];
-  return {
-    position: Math.abs(first.start.position) * height,
-    velocity: Math.abs(first.start.velocity) * height,
-  };
+  return quantity === 'stress' ? 'force' : quantity;
 }
 
 /** Rows of a table, one a time, times a factor a column. */
@@ -209,9 +187,16 @@ function sampledPeak(
   return { value, at, time, upper };
 }
 
-function noticesOf(request: ResponsesRequest, state: InitialState, series: KeptSeries): Notice[] {
+function noticesOf(
+  request: ResponsesRequest,
+  member: WaveMember,
+  state: InitialState,
+  series: KeptSeries,
+  loads: readonly AppliedLoad[],
+  times: Float64Array,
+): Notice[] {
   const notices: Notice[] = [];
-  if (state.lostEnergy > 1e-12 * state.energies[0]) {
+  if (state.lostEnergy > 1e-12 * (state.energies[0] + state.rigidEnergy)) {
     notices.push({
       code: 'massless-stretch-settled',
       detail: `Massless stretches cannot keep a shape of their own: for t > 0 they follow the places around them, and ${state.lostEnergy} J of the given shape's strain energy are left out.`,
@@ -224,6 +209,8 @@ function noticesOf(request: ResponsesRequest, state: InitialState, series: KeptS
         'Nothing holds the member, so it drifts as a whole; the ceiling and the tolerance refer to its elastic motion.',
     });
   }
+  const contact = contactNotice(member, request.initial, series, loads, times);
+  if (contact !== null) notices.push(contact);
   if ('modes' in request.series && series.modes.length < request.series.modes) {
     notices.push({
       code: 'finite-modes',

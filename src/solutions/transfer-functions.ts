@@ -34,7 +34,7 @@ const FALLBACK_MODES = 4096;
 export function solveTransferFunctions(request: TransferFunctionsRequest): TransferFunctionsAnswer {
   const { damping } = request.member;
   const lossFactor = damping?.type === 'loss-factor' ? damping.value : 0;
-  const member = readMember(request.member);
+  const member = readMember(request.member, 'steady');
   if (request.input.type === 'outcrop-motion' && member.damping.ratios.some((ratio) => ratio > 0)) {
     throw fault('outcrop-with-ratios', '/member/damping', {});
   }

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { entryMember } from '../support/entries.ts';
-import { initialState } from '../support/initial-shapes.ts';
+import { initialState, shapeFunction } from '../support/initial-shapes.ts';
 import { plainMember, randomMemberEntries, referenceEntries, referenceEntry } from '../support/reference.ts';
 import { StruckBar } from '../support/struck-bar.ts';
 import { TravellingWaves } from '../support/travelling-waves.ts';
@@ -106,6 +106,32 @@ describe('count of frequencies', () => {
         expect(held).toBeLessThanOrEqual(order);
         expect(held + free).toBeGreaterThanOrEqual(order);
       }
+    }
+  });
+});
+
+describe('static pull of the oracle', () => {
+  it('leaves forces that balance at every node', () => {
+    const member = {
+      segments: [
+        { length: 1, stiffness: 2, inertia: 1, foundation: 0 },
+        { length: 0.5, stiffness: 3, inertia: 1, foundation: 0 },
+        { length: 2, stiffness: 1, inertia: 1, foundation: 0 },
+      ],
+      masses: [0, 0, 0, 0],
+      springs: [0.7, 0, 5, 0.2],
+      nearFixed: false,
+      farFixed: false,
+    };
+    for (const at of [0.4, 1, 1.2, 2.5]) {
+      const { value, slope } = shapeFunction({ type: 'pull', at, amplitude: 0.3 }, member);
+      expect(value(at)).toBeCloseTo(0.3, 15);
+      [0, 1, 1.5, 3.5].forEach((x, node) => {
+        if (x === at) return;
+        const before = node > 0 ? member.segments[node - 1].stiffness * slope(x - 1e-9) : 0;
+        const after = node < 3 ? member.segments[node].stiffness * slope(x + 1e-9) : 0;
+        expect(after - before).toBeCloseTo(member.springs[node] * value(x), 14);
+      });
     }
   });
 });

@@ -119,4 +119,37 @@ describe('shapes and forces agree with the table to 1e-8 of their peak', () => {
       }
     }
   });
+
+  it('two lumps of unlike size on massless springs keep the small end of a shape (2 × 2 in closed form)', () => {
+    // Springs k₁, k₂, k₃ in a row, masses m₁ ≫ m₂ between them: in the fast mode φ₁ = k₂ φ₂/(k₁ + k₂ − ω² m₁).
+    const member = {
+      segments: [
+        { length: 50, stiffness: 1, inertia: 0, foundation: 0 },
+        { length: 50, stiffness: 1e-3, inertia: 0, foundation: 0 },
+        { length: 10, stiffness: 100, inertia: 0, foundation: 0 },
+      ],
+      masses: [0, 1, 0.01, 0],
+      springs: [0, 0, 0, 0],
+      nearFixed: true,
+      farFixed: true,
+    };
+    const [k1, k2, k3] = [1 / 50, 1e-3 / 50, 100 / 10];
+    const [m1, m2] = [1, 0.01];
+    const { modes } = solveModes(modesRequest(member, 5, { positions: [50, 100] }));
+    expect(modes).toHaveLength(2);
+    const trace = (k1 + k2) / m1 + (k2 + k3) / m2;
+    const determinant = ((k1 + k2) * (k2 + k3) - k2 * k2) / (m1 * m2);
+    const fast = (trace + Math.sqrt(trace * trace - 4 * determinant)) / 2;
+    const slow = determinant / fast;
+    [slow, fast].forEach((lambda, i) => {
+      expect(Math.abs(modes[i].angularFrequency / Math.sqrt(lambda) - 1)).toBeLessThan(1e-14);
+      const [near, far] = Array.from(modes[i].shape!.displacement!);
+      expect(Math.abs(m1 * near * near + m2 * far * far - 1)).toBeLessThan(1e-13);
+    });
+    const [heavy, light] = Array.from(modes[1].shape!.displacement!);
+    const smallEnd = (k2 * light) / (k1 + k2 - fast * m1);
+    expect(Math.abs(heavy / smallEnd - 1)).toBeLessThan(1e-12);
+    const [first, second] = Array.from(modes[0].shape!.displacement!);
+    expect(Math.abs(second / ((k2 * first) / (k2 + k3 - slow * m2)) - 1)).toBeLessThan(1e-12);
+  });
 });

@@ -32,6 +32,7 @@ export async function startService() {
       if (entry.level >= 40) console.error(line);
     });
   });
-  const url = await Promise.race([ready, ended.then((code) => process.exit(code || 1))]);
+  const url = await Promise.race([ready, ended.then(() => null)]);
+  if (url === null) process.exit(1);
   return { url, ended, stop };
 }

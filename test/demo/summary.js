@@ -3,36 +3,48 @@ export function summarise(title, file, modes, responses, milliseconds) {
   const { member } = modes;
   const { convergence, fields, peaks } = responses;
   const { energy } = convergence;
-  const lines = [
-    `${title} (schemas/examples/${file})`,
-    `  ${member.kind}, ${number(member.length)} m, ${number(member.totalMass)} kg; a wave takes ${number(member.travelTime)} s from end to end`,
-    `  frequencies   ${modes.modes.map(({ frequency }) => number(frequency)).join(', ')} Hz`,
+  const rows = [
+    ['member', `${member.kind}, ${digits(member.length)} m, ${digits(member.totalMass)} kg`],
+    ['frequencies', `${modes.modes.map(({ frequency }) => digits(frequency)).join(', ')} Hz, …`],
+    ...Object.entries(peaks).map(([quantity, peak]) => [quantity, peakText(peak, fields[quantity])]),
+    [
+      'energy',
+      `${scaled(energy.total, 'J')}, of which the modes used hold ${digits(100 * energy.capturedFraction, 6)} %`,
+    ],
+    [
+      'error',
+      `at most ${scaled(convergence.displacementBound, fields.displacement?.unit ?? 'm')} in any displacement, with ${convergence.modesUsed} modes`,
+    ],
+    ['verdict', `${convergence.verdict}; solved over HTTP in ${digits(milliseconds, 2)} ms`],
+    ...responses.notices.map(({ detail }) => ['note', detail]),
   ];
-  for (const [quantity, { value, at, time, upper }] of Object.entries(peaks)) {
-    const { unit, boundKind, verdict } = fields[quantity];
-    const limit =
-      upper === null
-        ? 'no certified limit'
-        : `nowhere and never above ${number(upper)} ${unit}${kindWords[boundKind] ?? ''}`;
-    lines.push(
-      `  ${quantity.padEnd(13)} peak ${number(value)} ${unit} at ${number(at)} m, ${number(time)} s; ${limit} (${verdict})`,
-    );
-  }
-  lines.push(
-    `  energy        ${number(energy.total)} J, of which the series holds ${percent(energy.capturedFraction)}`,
-    `  displacement  wrong by at most ${number(convergence.displacementBound)} ${fields.displacement?.unit ?? 'm'}, because ${convergence.modesUsed} modes were used`,
-    `  verdict       ${convergence.verdict}, solved in ${number(milliseconds, 2)} ms`,
-    ...responses.notices.map(({ detail }) => `  note          ${detail}`),
-  );
-  return lines.join('\n');
+  const width = Math.max(...rows.map(([name]) => name.length));
+  const lines = rows.map(([name, text]) => `  ${name.padEnd(width)}  ${text}`);
+  return [`${title} (schemas/examples/${file})`, ...lines].join('\n');
 }
 
-const kindWords = { 'gauge-average': ' on average over the gauge time' };
-
-function number(value, digits = 4) {
-  return Number(value.toPrecision(digits)).toString();
+function peakText({ value, at, time, upper }, { unit, boundKind, verdict }) {
+  const place = `at ${digits(at)} m, ${scaled(time, 's')}`;
+  const average = boundKind === 'gauge-average' ? ', averaged over the gauge time' : '';
+  const limit = upper === null ? 'no certified limit' : `certified below ${scaled(upper, unit)}`;
+  return `peak ${scaled(value, unit)} ${place}${average}; ${limit} (${verdict})`;
 }
 
-function percent(fraction) {
-  return `${number(100 * fraction, 6)} %`;
+const prefixes = [
+  [1e9, 'G'],
+  [1e6, 'M'],
+  [1e3, 'k'],
+  [1, ''],
+  [1e-3, 'm'],
+  [1e-6, 'µ'],
+];
+
+/** A value with the SI prefix that leaves one to three digits before the point. */
+function scaled(value, unit) {
+  const [factor, prefix] = prefixes.find(([limit]) => Math.abs(value) >= limit) ?? [1, ''];
+  return `${digits(value / factor)} ${prefix}${unit}`;
+}
+
+function digits(value, count = 4) {
+  return Number(value.toPrecision(count)).toString();
 }

@@ -26,6 +26,7 @@ describe('the import checker', () => {
       breaches({
         'modes/shape.ts': `import { x } from '../spectrum/phase.ts'; import type { Y } from './mass.ts'; export const z = x as Y;`,
         'modes/mass.ts': `export type Y = number; export const o = { Date: 1 }; o.Date = 2;`,
+        'numerics/kernel.ts': `export const m = (globalThis as unknown as { WebAssembly: object }).WebAssembly;`,
         'spectrum/phase.ts': `import { fault } from '../faults/fault.ts'; export const x = fault;`,
         'main.ts': `import { settings } from './settings.ts'; import fastify from 'fastify'; fastify(settings);`,
       }),
@@ -84,6 +85,12 @@ describe('the import checker', () => {
     ['randomness in a pure room', 'certificate/a.ts', `export const r = Math.random();`, /uses Math.random/],
     ['the process in a pure room', 'members/a.ts', `process.exit();`, /uses process in a pure room/],
     ['import.meta in a pure room', 'modes/a.ts', `export const u = import.meta.url;`, /uses import.meta/],
+    [
+      'the process by way of globalThis',
+      'motion/a.ts',
+      `(globalThis as unknown as { process: { exit(): void } }).process.exit();`,
+      /uses globalThis in a pure room/,
+    ],
     ['a shorthand use of a global', 'modes/a.ts', `export const u = { performance };`, /uses performance/],
     [
       'a framework out of its room',

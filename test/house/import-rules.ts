@@ -31,7 +31,6 @@ export const homesOfPackage: Readonly<Record<string, readonly string[]>> = {
   ajv: ['contract'],
   piscina: ['pool'],
   fastify: ['http', 'main.ts'],
-  'fastify-plugin': ['http'],
   '@fastify/accepts': ['http'],
   '@fastify/helmet': ['http'],
   pino: ['http', 'main.ts'],

@@ -54,7 +54,7 @@ export function readSourceFile(path: string, text: string): SourceFile {
     if (!inType) collectNames(node);
     const within = inType || typePositions.has(node.type);
     for (const [field, child] of Object.entries(node)) {
-      if (isPropertyName(node, field)) continue;
+      if (isPropertyName(node, field) || (field === 'object' && isWebAssembly(node))) continue;
       for (const item of Array.isArray(child) ? child : [child]) {
         if (isNode(item)) visit(item, within);
       }
@@ -81,6 +81,16 @@ function isPropertyName(node: SyntaxNode, field: string): boolean {
   if (node.computed === true) return false;
   if (field === 'property') return node.type === 'MemberExpression';
   return field === 'key' && node.shorthand !== true;
+}
+
+/** `globalThis.WebAssembly`, cast or not: computing, nothing of the machine. */
+function isWebAssembly(node: SyntaxNode): boolean {
+  if (node.type !== 'MemberExpression' || (node.property as SyntaxNode).name !== 'WebAssembly') return false;
+  let object = node.object as SyntaxNode;
+  while (object.type === 'TSAsExpression' || object.type === 'ParenthesizedExpression') {
+    object = object.expression as SyntaxNode;
+  }
+  return object.name === 'globalThis';
 }
 
 function isTypeOnly(statement: SyntaxNode): boolean {

@@ -90,7 +90,7 @@ describe('the service under load', () => {
   });
 
   it('ends a solve at the deadline with 504, waiting included', async () => {
-    const { post } = await startService({ app: { solveDeadline: 0.3 } });
+    const { post } = await startService({ app: { solveDeadline: 1.5 } });
     const started = performance.now();
     const both = await Promise.all([
       post('/v1/modes', { do: 'busy', milliseconds: 60_000 }),
@@ -98,8 +98,8 @@ describe('the service under load', () => {
     ]);
     expect(both.map((response) => response.status)).toEqual([504, 504]);
     expect(await codeOf(both[0])).toBe('deadline-exceeded');
-    expect(performance.now() - started).toBeLessThan(5000);
-    expect((await post('/v1/modes', { do: 'echo' }, { prefer: 'wait=9' })).status).toBe(200);
+    expect(performance.now() - started).toBeLessThan(8000);
+    expect((await post('/v1/modes', { do: 'echo' })).status).toBe(200);
   });
 
   it('lets Prefer: wait shorten the deadline, never lengthen it', async () => {

@@ -116,9 +116,28 @@ describe('the solver pool', () => {
     await pause(50);
     leave.abort();
     expect(await Promise.all([running, waiting])).toEqual([{ kind: 'gone' }, { kind: 'gone' }]);
-    expect([pool.running, pool.waiting]).toEqual([0, 0]);
+    expect(pool.waiting).toBe(0);
     expect((await ask(pool, 'echo')).kind).toBe('answer');
     expect((await ask(pool, 'echo', {}, { gone: AbortSignal.abort() })).kind).toBe('gone');
+  });
+
+  it('lets a worker finish what it is nearly done with, and keeps it; one at a long solve is replaced', async () => {
+    const pool = await startPool();
+    const thread = async () => answerOf(await ask(pool, 'thread')).threadId;
+    const leaveDuring = async (milliseconds: number) => {
+      const leave = new AbortController();
+      const solve = ask(pool, 'busy', { milliseconds }, { gone: leave.signal });
+      await pause(20);
+      leave.abort();
+      expect(await solve).toEqual({ kind: 'gone' });
+    };
+    const first = await thread();
+    await leaveDuring(80);
+    expect(await thread()).toBe(first);
+    const started = performance.now();
+    await leaveDuring(60_000);
+    expect(await thread()).not.toBe(first);
+    expect(performance.now() - started).toBeLessThan(5_000);
   });
 
   it('replaces a worker that exits', async () => {

@@ -45,7 +45,7 @@ function pull(member: PlainMember, at: number, amplitude: number): PlainFunction
   const springBetween = (a: number, b: number): number => {
     const middle = (a + b) / 2;
     const segment = member.segments[nodes.findIndex((x) => x > middle) - 1];
-    return segment.stiffness / (b - a);
+    return segment.stiffness / Math.abs(b - a);
   };
   // Compliance seen from `at` towards each end, one node after the other.
   const shape = Array.from({ length: positions.length }, () => 0);

@@ -1,0 +1,88 @@
+import { describe, expect, it } from 'vitest';
+import type { TailState } from '../../src/certificate/kept-modes.ts';
+import { Rounding } from '../../src/certificate/rounding.ts';
+import {
+  displacementBound,
+  displacementCeiling,
+  shortfallOf,
+} from '../../src/certificate/series-tolerance.ts';
+import type { ResponsesSeries } from '../../src/spec/types.ts';
+import { uniformTrial, waveMember } from '../spectrum/trial-members.ts';
+
+const member = waveMember(uniformTrial(1));
+
+/** A tail without rounding: √(2E ΔG) = 0.01, ceiling √(2·50·1) = 10. */
+function tail(first = Infinity, energy = 5e-3): TailState {
+  return {
+    kept: 5,
+    energies: { energy, first, second: Infinity, nextOmega: 20 },
+    member: { flexibility: 0.01, fluxInertia: 4 },
+    rounding: new Rounding(1, 1, 1),
+    rigidEnergy: 0,
+    whole: {
+      energies: { energy: 50, first, second: Infinity, nextOmega: 3 },
+      member: { flexibility: 1, fluxInertia: 9 },
+    },
+  };
+}
+
+const ratio = (wanted: ResponsesSeries, of: TailState, gaugeTime = 0): number =>
+  shortfallOf(wanted, member, 1, gaugeTime, true)(of).ratio;
+
+it('the bound is √(2E ΔG) and the ceiling √(2E G) of the elastic motion', () => {
+  expect(displacementBound(tail(), 1)).toBeCloseTo(0.01, 15);
+  expect(displacementCeiling(tail(), 1)).toBeCloseTo(10, 14);
+});
+
+describe('how far the bound is from its tolerance', () => {
+  it('relative: bound over tolerance times ceiling', () => {
+    expect(ratio({ relativeTolerance: 1e-3, maxModes: 9 }, tail())).toBeCloseTo(1, 12);
+    expect(ratio({ relativeTolerance: 1e-2, maxModes: 9 }, tail())).toBeCloseTo(0.1, 12);
+  });
+
+  it('a number of modes is judged by a relative 1e-3', () => {
+    expect(ratio({ modes: 9 }, tail())).toBeCloseTo(1, 12);
+  });
+
+  it('absolute displacement', () => {
+    expect(ratio({ tolerances: { displacement: 0.004 }, maxModes: 9 }, tail())).toBeCloseTo(2.5, 12);
+  });
+
+  it('absolute force at the instant: √(2E¹ ΔH)', () => {
+    // √(2·8·4) = 8
+    const found = ratio({ tolerances: { force: 2 }, maxModes: 9 }, tail(8));
+    expect(found).toBeCloseTo(4, 12);
+    // the larger of both
+    expect(ratio({ tolerances: { force: 2, displacement: 0.001 }, maxModes: 9 }, tail(8))).toBeCloseTo(
+      10,
+      12,
+    );
+  });
+
+  it('absolute force as an average: (2/τ)√(2E ΔH)', () => {
+    // √(2·5e-3·4) = 0.2
+    expect(ratio({ tolerances: { force: 2 }, maxModes: 9 }, tail(), 0.1)).toBeCloseTo(2, 12);
+  });
+
+  it('a force without any bound does not count; alone it leaves the usual displacement tolerance', () => {
+    expect(ratio({ tolerances: { force: 1e-9 }, maxModes: 9 }, tail())).toBeCloseTo(1, 12);
+    expect(ratio({ tolerances: { force: 1e-9, displacement: 0.02 }, maxModes: 9 }, tail())).toBeCloseTo(
+      0.5,
+      12,
+    );
+  });
+
+  it('nothing missing is enough, also where the ceiling is 0', () => {
+    const still = tail(0, 0);
+    const rest: TailState = {
+      ...still,
+      whole: { ...still.whole, energies: { ...still.whole.energies, energy: 0 } },
+    };
+    expect(ratio({ relativeTolerance: 1e-9, maxModes: 9 }, rest)).toBe(0);
+  });
+});
+
+it('the share of rounding is told apart', () => {
+  const found = shortfallOf({ relativeTolerance: 1e-3, maxModes: 9 }, member, 1, 0, true)(tail());
+  expect(found.roundingRatio).toBe(0);
+});

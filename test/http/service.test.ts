@@ -1,0 +1,152 @@
+import { spawnSync } from 'node:child_process';
+import { readdirSync, readFileSync } from 'node:fs';
+import { createServer, type AddressInfo } from 'node:net';
+import { fileURLToPath } from 'node:url';
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { validatorOf } from '../../src/contract/validators.ts';
+import { badRequests } from '../contract/bad-requests.ts';
+import { startServiceProcess, type ServiceProcess } from './service-process.ts';
+
+const examples = new URL('../../schemas/examples/', import.meta.url);
+const load = (file: string): string => readFileSync(new URL(file, examples), 'utf8');
+const files = readdirSync(examples);
+const pathOf = (file: string): string =>
+  'initial' in JSON.parse(load(file)) ? '/v1/responses' : '/v1/modes';
+const schemaOf = { '/v1/modes': 'ModesAnswer', '/v1/responses': 'ResponsesAnswer' } as Record<string, string>;
+
+function expectValid(schema: string, document: unknown): void {
+  const validate = validatorOf(schema);
+  validate.call({ kind: 'cable', originals: new Map() }, document);
+  expect(validate.errors ?? []).toEqual([]);
+}
+
+let service: ServiceProcess;
+beforeAll(async () => {
+  service = await startServiceProcess();
+});
+afterAll(async () => {
+  await service.stop();
+});
+
+describe('the service as it is started', () => {
+  it.each(files)('solves the example %s, and the answer satisfies its schema', async (file) => {
+    const path = pathOf(file);
+    const response = await service.post(path, load(file));
+    expect([response.status, response.headers.get('content-type')]).toEqual([200, 'application/json']);
+    expectValid(schemaOf[path], await response.json());
+  });
+
+  it.each(badRequests.map((row) => [row.title, row] as const))('refuses: %s', async (_title, row) => {
+    const response = await service.post(`/v1/${row.operation}`, row.body);
+    const problem = (await response.json()) as {
+      status: number;
+      code: string;
+      errors: Record<string, string>[];
+    };
+    expect([response.status, response.headers.get('content-type')]).toEqual([
+      row.status,
+      'application/problem+json',
+    ]);
+    expectValid('ProblemDocument', problem);
+    expect(problem.status).toBe(row.status);
+    expect(problem.errors.map(({ code, pointer }) => [code, pointer])).toEqual(
+      row.faults.map(({ code, pointer }) => [code, pointer]),
+    );
+    row.faults.forEach(({ wording }, i) => expect(problem.errors[i].detail).toMatch(wording));
+    expect(row.faults.map(({ code }) => code)).toContain(problem.code);
+  });
+
+  it('gives the same bytes twice, on both workers and after a restart', async () => {
+    const again = await startServiceProcess({ WORKERS: '1' });
+    try {
+      for (const file of files) {
+        const texts = [service, service, service, service, again].map(async ({ post }) =>
+          (await post(pathOf(file), load(file))).text(),
+        );
+        expect(new Set(await Promise.all(texts)).size).toBe(1);
+      }
+    } finally {
+      await again.stop();
+    }
+  });
+
+  it('gives the same bytes for a body read in the worker as for one read on the event loop', async () => {
+    const short = load('struck-pile.json');
+    const long = short.replace('{', `{${' '.repeat(300_000)}`);
+    const [a, b] = await Promise.all(
+      [short, long].map(async (body) => (await service.post('/v1/responses', body)).text()),
+    );
+    expect(a).toBe(b);
+  });
+
+  it('serves the reference document that clients are built from', async () => {
+    const document = (await (await fetch(`${service.url}/openapi.json`)).json()) as {
+      openapi: string;
+      paths: object;
+    };
+    expect(document.openapi).toMatch(/^3\.1/);
+    expect(Object.keys(document.paths).toSorted()).toEqual([
+      '/health/live',
+      '/health/ready',
+      '/openapi.json',
+      '/openapi.yaml',
+      '/v1/modes',
+      '/v1/responses',
+    ]);
+    const yaml = await fetch(`${service.url}/openapi.yaml`);
+    expect(await yaml.text()).toMatch(/^openapi: ["']?3\.1/);
+  });
+
+  it('is found live within 20 ms (median) while both workers solve for seconds', async () => {
+    const heavy = { ...JSON.parse(load('stay-cable-release.json')), series: { modes: 8000 } };
+    const solves = [1, 2].map(() => service.post('/v1/responses', heavy));
+    const solved = Promise.all(solves);
+    const state = { done: false };
+    void solved.finally(() => (state.done = true));
+    const times: number[] = [];
+    while (!state.done) {
+      const started = performance.now();
+      await (await fetch(`${service.url}/health/live`)).arrayBuffer();
+      times.push(performance.now() - started);
+    }
+    expect((await solved).map(({ status }) => status)).toEqual([200, 200]);
+    expect(times.length).toBeGreaterThan(50);
+    expect(times.toSorted((a, b) => a - b)[times.length >> 1]).toBeLessThan(20);
+  });
+});
+
+describe('starting and stopping', () => {
+  it.each(['SIGTERM', 'SIGINT'] as const)('ends with 0 on %s', async (signal) => {
+    const started = await startServiceProcess({ WORKERS: '1' });
+    expect(await started.stop(signal)).toBe(0);
+    expect(started.log.map(({ msg }) => msg)).toContain('stopping');
+  });
+
+  it('says that the port is taken', async () => {
+    const server = createServer().listen(0, '127.0.0.1');
+    await new Promise((resolve) => server.once('listening', resolve));
+    const port = String((server.address() as AddressInfo).port);
+    const { status, stderr } = runMain({ PORT: port });
+    server.close();
+    expect(status).toBe(1);
+    expect(stderr).toBe(
+      `127.0.0.1:${port} is in use. Stop what listens there, or set PORT to a free port.\n`,
+    );
+  });
+
+  it('says what is wrong with the settings', () => {
+    const { status, stderr } = runMain({ PORT: 'eighty', WORKERS: '0' });
+    expect(status).toBe(1);
+    expect(stderr).toBe(
+      'The settings are wrong:\nPORT must be integer, but is "eighty".\nWORKERS must be >= 1, but is "0".\n',
+    );
+  });
+});
+
+function runMain(environment: Record<string, string>): { status: number | null; stderr: string } {
+  const program = fileURLToPath(new URL('../../dist/main.js', import.meta.url));
+  return spawnSync(process.execPath, [program], {
+    env: { ...process.env, ...environment },
+    encoding: 'utf8',
+  });
+}
