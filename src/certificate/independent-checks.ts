@@ -1,10 +1,9 @@
 import type { WaveMember } from '../members/wave-member.ts';
 import { ENDS } from '../modes/mode-shape.ts';
 import { nodeDisplacement } from '../modes/shape-figures.ts';
-import { dampingRate } from '../motion/modal-damping.ts';
-import { freeMotion } from '../motion/modal-motion.ts';
-import { dissipatedEnergy } from '../motion/dissipation.ts';
+import type { AppliedLoad } from '../motion/applied-loads.ts';
 import type { KeptMode } from './kept-modes.ts';
+import { PowerBalance } from './power-balance.ts';
 import { QuadratureGrid } from './quadrature-grid.ts';
 
 /** What the checks found; each is relative and of the order of rounding when all is well. */
@@ -31,7 +30,7 @@ const HELD = 45;
  * integrated on a grid of Gauss panels.
  *
  * - balance: the energy of the summed fields (kept modes) at up to 64 of the sampled instants against
- *   their initial energy less what damping took;
+ *   their initial energy, the work of the loads and what damping took ({@link PowerBalance});
  * - orthogonality: neighbours (n, n+1), (n, n+2) and all pairs of up to 45 shapes spread over the
  *   spectrum;
  * - residual: momentum and compatibility of each segment, Δp + ∫(ω²ρ − s)φ and Δφ − ∫p/k, and the
@@ -43,6 +42,7 @@ const HELD = 45;
 export function checkIndependently(
   member: WaveMember,
   kept: readonly KeptMode[],
+  loads: readonly AppliedLoad[],
   times: Float64Array,
   energy: number,
 ): CheckResults | null {
@@ -50,22 +50,17 @@ export function checkIndependently(
   const grid = new QuadratureGrid(member, highest);
   const perMode = grid.size;
   if (perMode > LARGEST_GRID) return null;
-  const instants = pick(
-    times,
-    Math.max(1, Math.min(INSTANTS, Math.floor(WORK / (2 * perMode * kept.length)))),
-  );
+  const most = Math.max(1, Math.min(INSTANTS, Math.floor(WORK / (2 * perMode * kept.length))));
+  const balance = new PowerBalance(member, loads, times, Math.sqrt(highest), most);
+  const { instants } = balance;
   const balanced = perMode * kept.length <= 2 * WORK;
   const stride = Math.max(1, Math.ceil((perMode * kept.length) / WORK));
 
-  const speed = instants.map(() => new Float64Array(perMode));
-  const flux = instants.map(() => new Float64Array(perMode));
-  const place = instants.map(() => new Float64Array(perMode));
-  const nodeSpeed = instants.map(() => new Float64Array(member.segmentCount + 1));
-  const nodePlace = instants.map(() => new Float64Array(member.segmentCount + 1));
-  const lost = new Float64Array(instants.length);
-  const at = Float64Array.from(instants);
-  const q = new Float64Array(instants.length);
-  const v = new Float64Array(instants.length);
+  const speed = Array.from(instants, () => new Float64Array(perMode));
+  const flux = Array.from(instants, () => new Float64Array(perMode));
+  const place = Array.from(instants, () => new Float64Array(perMode));
+  const nodeSpeed = Array.from(instants, () => new Float64Array(member.segmentCount + 1));
+  const nodePlace = Array.from(instants, () => new Float64Array(member.segmentCount + 1));
   const bedded = member.foundation.some((s) => s > 0);
 
   const mostHeld = Math.max(2, Math.min(HELD, Math.floor(Math.sqrt((2 * WORK) / perMode))));
@@ -107,11 +102,8 @@ export function checkIndependently(
     }
     if (!balanced) continue;
     initial += start.energy;
-    const { omega, order } = mode.frequency;
-    const rate = dampingRate(member.damping, order, omega);
-    freeMotion(start.position, start.velocity, omega, rate, at, q, v);
+    const { q, v } = balance.add(kept[n]);
     for (let j = 0; j < instants.length; j++) {
-      if (rate > 0) lost[j] += dissipatedEnergy(start.position, start.velocity, omega, rate, at[j]);
       addScaled(speed[j], u, v[j]);
       addScaled(flux[j], p, q[j]);
       if (bedded) addScaled(place[j], u, q[j]);
@@ -124,10 +116,11 @@ export function checkIndependently(
   }
 
   let drift = 0;
-  if (balanced && energy > 0) {
+  const size = Math.max(energy, balance.largestWork);
+  if (balanced && size > 0) {
     for (let j = 0; j < instants.length; j++) {
       const sum = fieldEnergy(member, grid, speed[j], flux[j], place[j], nodeSpeed[j], nodePlace[j]);
-      drift = Math.max(drift, Math.abs(sum + lost[j] - initial) / energy);
+      drift = Math.max(drift, Math.abs(sum + balance.taken[j] - initial) / size);
     }
   }
   return { drift, orthogonality, residual };
@@ -249,11 +242,4 @@ function ratio(defect: number, size: number): number {
 
 function addScaled(into: Float64Array, from: Float64Array, factor: number): void {
   for (let x = 0; x < into.length; x++) into[x] += factor * from[x];
-}
-
-/** Up to `count` of the times, evenly chosen, first and last among them. */
-function pick(times: Float64Array, count: number): number[] {
-  if (times.length <= count) return Array.from(times);
-  if (count === 1) return [times[times.length - 1]];
-  return Array.from({ length: count }, (_, j) => times[Math.round((j * (times.length - 1)) / (count - 1))]);
 }

@@ -73,6 +73,7 @@ export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
   addGracefulStop(app, options);
   addSolveResource(app, '/v1/modes', 'modes', options);
   addSolveResource(app, '/v1/responses', 'responses', options);
+  addSolveResource(app, '/v1/transfer-functions', 'transfer-functions', options);
   addHealthResources(app, pool);
   addDocumentResources(app, document);
   return app;

@@ -4,7 +4,7 @@ import { participationFactor } from '../modes/participation.ts';
 import type { Load } from '../spec/types.ts';
 import { SupportMotion } from './end-motion.ts';
 import { massForm } from './field-energy.ts';
-import { ForcedMotion, type LoadMover } from './forced-motion.ts';
+import { ForcedMotion, type Kick, type LoadMover } from './forced-motion.ts';
 import { historyAt, historyIntegrals, readHistory, type TimeHistory } from './history.ts';
 import { measureParts, measureRecord, type HistoryMeasures } from './history-measures.ts';
 import { modalForce, type LoadShape } from './load-shape.ts';
@@ -28,6 +28,11 @@ export interface AppliedLoad {
   driveAt(t: number): { readonly value: number; readonly rate: number };
   /** ∫p up to each time, kicks included. */
   driveIntegrals(times: Float64Array): Float64Array;
+  /** Instants up to a time at which the drive changes its formula, at most `most` of them, and sudden changes of q′. */
+  events(until: number, most: number): readonly number[];
+  kicks(until: number): readonly Kick[];
+  /** Largest rate of the drive's waves, rad/s. */
+  readonly quickest: number;
   /** Support motion and its static shape. */
   readonly support: { readonly shape: SupportShape; readonly motion: SupportMotion } | null;
   /** Whether the load has a finite mass norm, and that norm ∫f²/ρ + Σf²/M. */
@@ -136,6 +141,9 @@ function shapedLoad(member: WaveMember, shape: LoadShape, history: TimeHistory, 
     still: loadedStatic(member, shape),
     driveAt: (t) => historyAt(history, t),
     driveIntegrals: (times) => historyIntegrals(history, times),
+    events: (until, most) => eventsOf(drive, history.parts, until, most),
+    kicks: () => [],
+    quickest: quickestOf(history.parts),
     support: null,
     smooth: shape.smooth,
     massNorm: shape.massNorm,
@@ -195,6 +203,12 @@ function supportLoad(
         const { velocity, position } = motion.at(t);
         return velocity + drag * position;
       }),
+    events: (until, most) => [
+      ...eventsOf(motion.record, motion.drive, until, most),
+      ...motion.kicks.filter((kick) => kick.time <= until).map((kick) => kick.time),
+    ],
+    kicks: (until) => kicksUntil(motion, until),
+    quickest: quickestOf(motion.drive),
     support: { shape, motion },
     smooth: true,
     massNorm: shape.inertia,
@@ -213,6 +227,9 @@ function movingLoad(member: WaveMember, force: number, speed: number, start: num
     still: null,
     driveAt: () => ({ value: 0, rate: 0 }),
     driveIntegrals: (times) => new Float64Array(times.length),
+    events: (until) => moving.passage.flatMap(({ from, to }) => [from, to]).filter((t) => t <= until),
+    kicks: () => [],
+    quickest: 0,
     support: null,
     smooth: false,
     massNorm: 0,
@@ -232,4 +249,42 @@ function totalForce(shape: LoadShape): number {
   for (const force of shape.nodes) total += Math.abs(force);
   // kinks of |f| inside a cell cost the quadrature a little
   return total * (shape.pieces.length > 0 ? 1.02 : 1);
+}
+
+function eventsOf(
+  drive: RecordDrive | null,
+  parts: TimeHistory['parts'],
+  until: number,
+  most: number,
+): number[] {
+  if (drive !== null) {
+    const count = Math.min(
+      most,
+      drive.value.length + 1,
+      Math.floor((until - drive.start) / drive.interval) + 1,
+    );
+    return Array.from({ length: Math.max(0, count) }, (_, i) => drive.start + i * drive.interval);
+  }
+  return parts.flatMap((part) => [part.from, part.to]).filter((t) => t <= until);
+}
+
+function kicksUntil(motion: SupportMotion, until: number): Kick[] {
+  const { record } = motion;
+  if (record === null || record.kick === null) return motion.kicks.filter((kick) => kick.time <= until);
+  const kicks: Kick[] = [];
+  for (let i = 0; i < record.kick.length; i++) {
+    const time = record.start + i * record.interval;
+    if (time > until) break;
+    if (record.kick[i] !== 0) kicks.push({ time, amount: record.kick[i] });
+  }
+  return kicks;
+}
+
+function quickestOf(parts: TimeHistory['parts']): number {
+  let rate = 0;
+  for (const part of parts) {
+    if (part.kind === 'wave')
+      for (const forcing of part.forcings) rate = Math.max(rate, Math.abs(forcing.rate.im));
+  }
+  return rate;
 }

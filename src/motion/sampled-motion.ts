@@ -191,8 +191,8 @@ class ModalClock {
   }
 }
 
-/** Tables of one modal coordinate at one set of times. */
-class Instant {
+/** Tables of one modal coordinate, free motion and loads, at one set of times. */
+export class Instant {
   readonly q: Float64Array;
   readonly v: Float64Array;
   private readonly free: FreeMotionTable;

@@ -1,7 +1,8 @@
 import { readRequest } from '../contract/read-request.ts';
 import { solveModes } from '../solutions/modes.ts';
 import { solveResponses } from '../solutions/responses.ts';
-import type { ModesRequest, ResponsesRequest } from '../spec/types.ts';
+import { solveTransferFunctions } from '../solutions/transfer-functions.ts';
+import type { ModesRequest, ResponsesRequest, TransferFunctionsRequest } from '../spec/types.ts';
 import type { SolverOperations } from './task.ts';
 
 /** Every operation that a worker solves: how its body is read, how its request is solved. */
@@ -13,5 +14,9 @@ export const operations: SolverOperations = {
   responses: {
     read: (body) => readRequest('responses', body),
     solve: (request) => solveResponses(request as ResponsesRequest),
+  },
+  'transfer-functions': {
+    read: (body) => readRequest('transfer-functions', body),
+    solve: (request) => solveTransferFunctions(request as TransferFunctionsRequest),
   },
 };

@@ -29,6 +29,15 @@ const requests: Readonly<Record<string, object>> = {
   responses: {
     member,
     initial: { displacement: { type: 'pull', at: 5, amplitude: 0.001 } },
+    loads: [
+      { type: 'point-force', at: 2.5, history: { type: 'harmonic', amplitude: '3 kN', frequency: 40 } },
+      {
+        type: 'end-motion',
+        end: 'near',
+        quantity: 'acceleration',
+        history: { type: 'samples', interval: 0.001, values: [0, 0.4, -0.3, 0.1] },
+      },
+    ],
     series: { modes: 24 },
     sample: {
       positions: { count: 11 },
@@ -36,6 +45,17 @@ const requests: Readonly<Record<string, object>> = {
       quantities: ['displacement', 'velocity', 'force'],
       gaugeTime: 0.001,
     },
+  },
+  'transfer-functions': {
+    member: { ...member, damping: { type: 'loss-factor', value: 0.02 } },
+    input: { type: 'end-motion', end: 'near', quantity: 'acceleration' },
+    outputs: [
+      { at: 5, quantity: 'displacement' },
+      { at: 1, quantity: 'force' },
+    ],
+    frequencies: { from: 20, to: 900, count: 60, spacing: 'logarithmic' },
+    refine: true,
+    series: { modes: 12 },
   },
 };
 

@@ -106,7 +106,7 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
 
   const total = state.energies[0] + state.rigidEnergy;
   const captured = series.modes.reduce((sum, kept) => sum + kept.start.energy, 0);
-  const checks = request.checks ? checkIndependently(member, series.modes, times, total) : null;
+  const checks = request.checks ? checkIndependently(member, series.modes, loads, times, total) : null;
   return {
     coefficients: series.modes.map(({ mode, start }) => ({
       order: mode.frequency.order,
