@@ -75,7 +75,7 @@ describe('the displacement bound on a plucked string', () => {
       if (modes >= 20) expect(bound![column] / worst).toBeLessThan(3);
     });
     expect(convergence.displacementBound).toBeGreaterThanOrEqual(worstOfAll);
-    expect(convergence.displacementBound / worstOfAll).toBeLessThan(3);
+    expect(convergence.displacementBound! / worstOfAll).toBeLessThan(3);
     // Nothing moves beyond the ceiling, nor beyond the certified upper limit of the peak.
     expect(peaks.displacement!.upper!).toBeGreaterThanOrEqual(height);
     expect(convergence.ceiling).toBeGreaterThanOrEqual(height);

@@ -11,6 +11,7 @@ export const rankOfRoom: Readonly<Record<string, number>> = {
   spectrum: 3,
   modes: 4,
   motion: 5,
+  steady: 5,
   certificate: 6,
   solutions: 7,
   contract: 8,

@@ -67,7 +67,7 @@ describe('an exchange over HTTP', () => {
     await expectProblem(await fetch(`${service.url}/v2/modes?x=1`), {
       status: 404,
       code: 'not-found',
-      detail: /\/v2\/modes\. .*\/v1\/modes, \/v1\/responses, \/health\/live/,
+      detail: /\/v2\/modes\. .*\/v1\/modes, \/v1\/responses, \/v1\/transfer-functions, \/health\/live/,
     });
     // Before the body: no media type is asked for where nothing is served.
     await expectProblem(await service.post('/nowhere', 'x', { 'content-type': 'text/xml' }), {
@@ -81,6 +81,7 @@ describe('an exchange over HTTP', () => {
     ['HEAD', '/v1/modes', 'POST, OPTIONS'],
     ['PUT', '/v1/responses', 'POST, OPTIONS'],
     ['DELETE', '/v1/modes', 'POST, OPTIONS'],
+    ['GET', '/v1/transfer-functions', 'POST, OPTIONS'],
     ['POST', '/health/live', 'GET, HEAD, OPTIONS'],
     ['PROPFIND', '/health/ready', 'GET, HEAD, OPTIONS'],
     ['PATCH', '/openapi.yaml', 'GET, HEAD, OPTIONS'],

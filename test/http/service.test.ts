@@ -10,9 +10,16 @@ import { startServiceProcess, type ServiceProcess } from './service-process.ts';
 const examples = new URL('../../schemas/examples/', import.meta.url);
 const load = (file: string): string => readFileSync(new URL(file, examples), 'utf8');
 const files = readdirSync(examples);
-const pathOf = (file: string): string =>
-  'initial' in JSON.parse(load(file)) ? '/v1/responses' : '/v1/modes';
-const schemaOf = { '/v1/modes': 'ModesAnswer', '/v1/responses': 'ResponsesAnswer' } as Record<string, string>;
+function pathOf(file: string): string {
+  const request = JSON.parse(load(file)) as object;
+  if ('input' in request) return '/v1/transfer-functions';
+  return 'sample' in request ? '/v1/responses' : '/v1/modes';
+}
+const schemaOf = {
+  '/v1/modes': 'ModesAnswer',
+  '/v1/responses': 'ResponsesAnswer',
+  '/v1/transfer-functions': 'TransferFunctionsAnswer',
+} as Record<string, string>;
 
 function expectValid(schema: string, document: unknown): void {
   const validate = validatorOf(schema);
@@ -92,6 +99,7 @@ describe('the service as it is started', () => {
       '/openapi.yaml',
       '/v1/modes',
       '/v1/responses',
+      '/v1/transfer-functions',
     ]);
     const yaml = await fetch(`${service.url}/openapi.yaml`);
     expect(await yaml.text()).toMatch(/^openapi: ["']?3\.1/);

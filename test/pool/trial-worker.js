@@ -53,6 +53,7 @@ const solvers = {
 // What a request over HTTP asks for in `do`.
 solvers.modes = (request) => solvers[request.do ?? 'echo'](request);
 solvers.responses = solvers.modes;
+solvers['transfer-functions'] = solvers.modes;
 
 const operations = Object.fromEntries(
   Object.entries(solvers).map(([name, solve]) => [name, { read, solve }]),

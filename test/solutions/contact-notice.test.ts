@@ -12,6 +12,7 @@ function struckBar(ram: number, end: number): ResponsesRequest {
       attachments: [],
     },
     initial: { massVelocities: [{ at: 0, velocity: 1 }] },
+    loads: [],
     series: { modes: 200 },
     sample: {
       positions: [0.5],

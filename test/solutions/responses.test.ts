@@ -204,7 +204,7 @@ describe('invariances', () => {
       ).toBeLessThan(1e-14);
     }
     expect(two.convergence.energy.total / one.convergence.energy.total).toBeCloseTo(4, 12);
-    expect(two.convergence.ceiling / one.convergence.ceiling).toBeCloseTo(2, 12);
+    expect(two.convergence.ceiling! / one.convergence.ceiling!).toBeCloseTo(2, 12);
   });
 
   it('undamped motion runs backwards: the state at T with its velocity turned returns after T', () => {
@@ -474,9 +474,9 @@ describe('convergence', () => {
       answer.coefficients.reduce((sum, mode) => sum + mode.energy, 0),
       14,
     );
-    expect(peak(values(answer, 'displacement'))).toBeLessThanOrEqual(ceiling + displacementBound);
+    expect(peak(values(answer, 'displacement'))).toBeLessThanOrEqual(ceiling! + displacementBound!);
     expect(peak(Array.from(answer.fields.displacement!.bound!))).toBeLessThanOrEqual(
-      displacementBound * (1 + 1e-9),
+      displacementBound! * (1 + 1e-9),
     );
   });
 
@@ -519,7 +519,7 @@ describe('convergence', () => {
     const answer = solveResponses(wanted);
     const { modesUsed, verdict, ceiling, displacementBound } = answer.convergence;
     expect(verdict).toBe('converged');
-    expect(displacementBound).toBeLessThanOrEqual(1e-2 * ceiling);
+    expect(displacementBound).toBeLessThanOrEqual(1e-2 * ceiling!);
     const longer = solve({
       initial: { displacement: pull },
       modes: 20 * modesUsed,
@@ -614,6 +614,7 @@ describe('trade members', () => {
     const { fields, peaks } = solveResponses({
       member,
       initial: { displacement: { type: 'pull', at: 2, amplitude: 0.01 } },
+      loads: [],
       series: { modes: 60 },
       sample: { positions: [0, 1], times: [0, 1e-4], quantities: ['force', 'stress'], gaugeTime: 1e-4 },
       checks: false,
