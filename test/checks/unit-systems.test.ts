@@ -129,8 +129,8 @@ describe.each(systems)('in %s', (_, units) => {
     expect(
       Math.abs(other.convergence.energy.total / energy / plain.convergence.energy.total - 1),
     ).toBeLessThan(RELATIVE);
-    expect(
-      Math.abs(other.convergence.ceiling! / units.length / plain.convergence.ceiling! - 1),
-    ).toBeLessThan(RELATIVE);
+    expect(Math.abs(other.convergence.ceiling! / units.length / plain.convergence.ceiling! - 1)).toBeLessThan(
+      RELATIVE,
+    );
   });
 });

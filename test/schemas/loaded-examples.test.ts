@@ -63,7 +63,9 @@ describe('a soil column shaken by a made-up record', () => {
     }
     const last = fields.displacement!.values[fields.times.length - 1];
     expect(last[0]).toBeCloseTo(displacement + velocity * (24 - interval * (values.length - 1)), 9);
-    expect(Math.max(...fields.relativeDisplacement!.values.map((row) => Math.abs(row[0])))).toBeLessThan(1e-12);
+    expect(Math.max(...fields.relativeDisplacement!.values.map((row) => Math.abs(row[0])))).toBeLessThan(
+      1e-12,
+    );
     expect(notices.map(({ detail }) => detail).join(' ')).toMatch(/drift/);
   });
 
