@@ -60,13 +60,22 @@ export function compareSeries(
   };
   const positions = short.fields.positions;
   const times = short.fields.times;
-  for (const quantity of ['displacement', 'velocity', 'acceleration', 'force'] as const) {
+  for (const quantity of [
+    'displacement',
+    'relativeDisplacement',
+    'velocity',
+    'acceleration',
+    'force',
+  ] as const) {
     const a = short.fields[quantity];
     const b = long.fields[quantity];
     if (a === undefined || b === undefined) continue;
     if (a.boundKind !== b.boundKind) {
       // A member of finitely many modes has exact values once all are kept, whatever its data.
       if (a.boundKind === 'rms' && b.verdict === 'complete') continue;
+      // A force faster than the waves on bedding is bounded once the kept modes lie above the cut-off.
+      if (a.boundKind === 'rms' && a.verdict === 'irregular-data' && quantity.endsWith('isplacement'))
+        continue;
       violations.push({
         claim: `${quantity} kind`,
         where: `${a.boundKind} ${b.boundKind}`,
@@ -105,7 +114,8 @@ export function compareSeries(
         }
         if (quantity === 'displacement') {
           const { displacementBound } = short.convergence;
-          demand('displacementBound', where, difference, (displacementBound + boundB[column]) * ROUNDING);
+          if (displacementBound !== null)
+            demand('displacementBound', where, difference, (displacementBound + boundB[column]) * ROUNDING);
         }
       }
     }
@@ -153,7 +163,7 @@ function compareEnergies(short: ResponsesAnswer, long: ResponsesAnswer, demand: 
   demand('tail', '', beyond, energy.tail * (1 + 1e-9) + 1e-18 * energy.total);
   const first = long.coefficients[0];
   const field = long.fields.displacement;
-  if (field !== undefined && first !== undefined && first.angularFrequency > 0) {
+  if (field !== undefined && first !== undefined && first.angularFrequency > 0 && ceiling !== null) {
     field.values.forEach((row, i) =>
       row.forEach((value, j) =>
         demand(
