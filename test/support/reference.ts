@@ -17,7 +17,7 @@ export interface ReferenceEntry {
 }
 
 export type ReferenceTable =
-  'uniform-ends' | 'piecewise-members' | 'modal-coefficients' | 'exact-fields' | 'truncation';
+  'uniform-ends' | 'piecewise-members' | 'modal-coefficients' | 'exact-fields' | 'truncation' | 'forced';
 
 function read(name: string): { entries: unknown[] } {
   return JSON.parse(readFileSync(new URL(`../reference/${name}.json`, import.meta.url), 'utf8')) as {
