@@ -15,12 +15,13 @@ function startDemo(port: string) {
 }
 
 describe('the demonstration', () => {
-  it('solves two examples over HTTP, says how to go on, serves, and stops cleanly', async () => {
+  it('solves three examples over HTTP, one of them loaded, says how to go on, serves, and stops cleanly', async () => {
     const { child, seen } = startDemo('0');
     const exited = once(child, 'exit');
     while (!seen.text.includes('Serving until')) await Promise.race([once(child.stdout, 'data'), exited]);
     expect(seen.text).toMatch(/A pile struck by a ram[^]*frequencies +25\.\d+, [^]*verdict +converged/);
     expect(seen.text).toMatch(/A stay cable, pulled and released[^]*Hz[^]*displacement +peak [^]*certified/);
+    expect(seen.text).toMatch(/A tie rod that carries a running machine[^]*loads +point-force[^]*certified/);
     const url = /curl -s (http:\S+)\/v1\/responses/.exec(seen.text)?.[1] ?? '';
     expect((await fetch(`${url}/health/ready`)).status).toBe(200);
     child.kill('SIGINT');

@@ -5,7 +5,7 @@ export async function solveExample(url, request) {
   const modes = await post(`${url}/v1/modes`, { member: request.member, series: { modes: 5 } });
   const started = performance.now();
   const responses = await post(`${url}/v1/responses`, request);
-  return { modes, responses, milliseconds: performance.now() - started };
+  return { request, modes, responses, milliseconds: performance.now() - started };
 }
 
 async function post(url, body) {

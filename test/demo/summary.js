@@ -1,19 +1,17 @@
 /** What an engineer wants to see first: frequencies, peaks with their certified limits, the verdict. */
-export function summarise(title, file, modes, responses, milliseconds) {
+export function summarise(title, file, { request, modes, responses, milliseconds }) {
   const { member } = modes;
   const { convergence, fields, peaks } = responses;
   const { energy } = convergence;
   const rows = [
     ['member', `${member.kind}, ${digits(member.length)} m, ${digits(member.totalMass)} kg`],
     ['frequencies', `${modes.modes.map(({ frequency }) => digits(frequency)).join(', ')} Hz, …`],
+    ...(request.loads ?? []).map((load) => ['loads', loadText(load)]),
     ...Object.entries(peaks).map(([quantity, peak]) => [quantity, peakText(peak, fields[quantity])]),
-    [
-      'energy',
-      `${scaled(energy.total, 'J')}, of which the modes used hold ${digits(100 * energy.capturedFraction, 6)} %`,
-    ],
+    ...startOf(energy),
     [
       'error',
-      `at most ${scaled(convergence.displacementBound, fields.displacement?.unit ?? 'm')} in any displacement, with ${convergence.modesUsed} modes`,
+      `${errorText(convergence, fields)} in any displacement, with ${counted(convergence.modesUsed, 'mode')}`,
     ],
     ['verdict', `${convergence.verdict}; solved over HTTP in ${digits(milliseconds, 2)} ms`],
     ...responses.notices.map(({ detail }) => ['note', detail]),
@@ -21,6 +19,30 @@ export function summarise(title, file, modes, responses, milliseconds) {
   const width = Math.max(...rows.map(([name]) => name.length));
   const lines = rows.map(([name, text]) => `  ${name.padEnd(width)}  ${text}`);
   return [`${title} (schemas/examples/${file})`, ...lines].join('\n');
+}
+
+/** The energy of the initial motion, where there is one. */
+function startOf({ total, capturedFraction }) {
+  if (total === 0) return [];
+  const held = `of which the modes used hold ${digits(100 * capturedFraction, 6)} %`;
+  return [['energy', `${scaled(total, 'J')}, ${held}`]];
+}
+
+function errorText({ displacementBound }, fields) {
+  if (displacementBound === null) return 'no bound';
+  return `at most ${scaled(displacementBound, fields.displacement?.unit ?? 'm')}`;
+}
+
+function counted(count, name) {
+  return `${count} ${name}${count === 1 ? '' : 's'}`;
+}
+
+/** The kind of a load and what it does in time, in the words of the request. */
+function loadText({ type, at, history }) {
+  const place = at === undefined ? '' : ` at ${at}`;
+  if (history === undefined) return `${type}${place}`;
+  const figures = ['amplitude', 'frequency', 'duration'].map((key) => history[key]);
+  return `${type}${place}: ${[history.type, ...figures.filter((figure) => figure !== undefined)].join(', ')}`;
 }
 
 function peakText({ value, at, time, upper }, { unit, boundKind, verdict }) {
@@ -37,6 +59,7 @@ const prefixes = [
   [1, ''],
   [1e-3, 'm'],
   [1e-6, 'µ'],
+  [1e-9, 'n'],
 ];
 
 /** A value with the SI prefix that leaves one to three digits before the point. */

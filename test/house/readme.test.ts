@@ -28,6 +28,21 @@ describe('the README', () => {
     expect(shown.modes).toHaveLength(2);
   });
 
+  it.each(['responses', 'transfer-functions'])(
+    'shows in four digits what its request of %s gives',
+    (operation) => {
+      const shown = new RegExp(
+        `/v1/${operation} .* -d '(\\{[^]*?\\})'\\n[^]*?\`\`\`json\\n([^]*?)\`\`\``,
+      ).exec(readme);
+      const { read, solve } = operations[operation];
+      const answer = JSON.parse(
+        new TextDecoder().decode(encodeJson(solve(read(JSON.parse(shown![1]))))),
+        (_key, value) => (typeof value === 'number' ? Number(value.toPrecision(4)) : (value as unknown)),
+      ) as unknown;
+      expect(answer).toMatchObject(JSON.parse(shown![2]) as object);
+    },
+  );
+
   it('lists every setting with its default, and no other', () => {
     const listed = [...readme.matchAll(/^\| `([A-Z_]+)` +\| (.*?) +\|/gm)].map(([, name, value]) => [
       name,
@@ -52,6 +67,14 @@ describe('the README', () => {
     );
     expect(limit('segments; attachments')).toBe(
       `${schemaOf('Cable').properties.segments.maxItems.toLocaleString('en')} each`,
+    );
+    const items = (schema: string, key: string): string =>
+      schemaOf(schema).properties[key].maxItems.toLocaleString('en');
+    expect(limit('loads of one request')).toBe(items('ResponsesRequest', 'loads'));
+    expect(limit('samples of a record')).toBe(items('SampledHistory', 'values'));
+    expect(limit('outputs of one request')).toBe(items('TransferFunctionsRequest', 'outputs'));
+    expect(limit('frequencies; refined ones included')).toBe(
+      schemaOf('FrequencyGrid').properties.count.maximum.toLocaleString('en'),
     );
   });
 
