@@ -62,7 +62,7 @@ export function randomHistory(
       const values = record(random, count, amplitude, continuous ? 0 : amplitude * random.between(-1, 1));
       return { type: 'samples', interval: duration / count, values, start };
     }
-    case 'many': {
+    default: {
       const count = random.integer(65, 300);
       const values = record(random, count, amplitude, continuous ? 0 : amplitude * random.between(-1, 1));
       return { type: 'samples', interval: (time * random.decades(-1, 1)) / count, values, start };
@@ -77,7 +77,7 @@ function profile(random: RandomStream, member: PlainMember, size: number): Shape
   const to = Math.min(length, from + random.between(0.05, 1) * length);
   switch (random.pick(['uniform', 'stretch', 'half-sine', 'polyline', 'polynomial', 'pull'])) {
     case 'uniform':
-      return { type: 'uniform', value: size };
+      return { type: 'uniform', value: size, from: 0 };
     case 'stretch':
       return { type: 'uniform', value: size, from, to };
     case 'half-sine':
@@ -89,11 +89,15 @@ function profile(random: RandomStream, member: PlainMember, size: number): Shape
         values: [size, -size, 0.5 * size],
       };
     case 'polynomial':
-      return { type: 'polynomial', coefficients: [size, -size / length, (0.3 * size) / length ** 2] };
+      return {
+        type: 'polynomial',
+        coefficients: [size, -size / length, (0.3 * size) / length ** 2],
+        from: 0,
+      };
     default:
       return isHeld(member)
         ? { type: 'pull', at: random.between(0.1, 0.9) * length, amplitude: size }
-        : { type: 'uniform', value: size };
+        : { type: 'uniform', value: size, from: 0 };
   }
 }
 
@@ -116,7 +120,7 @@ export function randomLoad(
   const length = lengthOf(member);
   const nodes = nodePositions(member);
   const { stiffness } = member.segments[segmentAt(member, 0.4 * length)];
-  const force = (0.01 * stiffness * random.decades(-0.5, 0.5)) as number;
+  const force = 0.01 * stiffness * random.decades(-0.5, 0.5);
   switch (type) {
     case 'point-force': {
       const inner = nodes.slice(member.nearFixed ? 1 : 0, member.farFixed ? -1 : undefined);
