@@ -110,7 +110,8 @@ describe('when all is well the checks are of the order of rounding', () => {
   it('the residual also at blocks of a million times the mass, which hardly move', () => {
     const blocks: TrialMember = { ...uniformTrial(3, {}, [3, 1, 1]), masses: { 1: 1e6, 2: 1e6 } };
     const { residual } = check(blocks, { velocity: { type: 'uniform', value: 1, from: 0 } }, 40);
-    expect(residual).toBeLessThan(1e-11);
+    // a block's displacement is known to 2⁻⁵² of the wave's, its force to ω M/Z ≈ 1e8 times that
+    expect(residual).toBeLessThan(1e-8);
   });
 
   it('a member at rest has no drift', () => {
