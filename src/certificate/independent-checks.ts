@@ -20,6 +20,8 @@ export interface CheckResults {
 const WORK = 4e6;
 /** Points beyond which a grid is not worth its time: the checks are then left out. */
 const LARGEST_GRID = 1_000_000;
+/** Share of a mode's largest displacement and flux below which a place counts as quiet. */
+const QUIET = 1e-3;
 /** Instants of the energy balance at most. */
 const INSTANTS = 64;
 /** Shapes held for the pairs far apart at most; 45 shapes make 990 pairs. */
@@ -42,9 +44,9 @@ const HELD = 45;
 export function checkIndependently(
   member: WaveMember,
   kept: readonly KeptMode[],
-  loads: readonly AppliedLoad[],
   times: Float64Array,
   energy: number,
+  loads: readonly AppliedLoad[] = [],
 ): CheckResults | null {
   const highest = kept[kept.length - 1].mode.shape.lambda;
   const grid = new QuadratureGrid(member, highest);
@@ -185,6 +187,17 @@ function shapeResidual(
   p: Float64Array,
 ): number {
   const { lambda, ends } = kept.mode.shape;
+  // quiet places are held against a thousandth of the mode's own size, not against their own rounding
+  let quietU = 0;
+  let quietP = 0;
+  for (let at = 0; at < ends.length; at += 2) {
+    quietU = Math.max(quietU, QUIET * Math.abs(ends[at]));
+    quietP = Math.max(quietP, QUIET * Math.abs(ends[at + 1]));
+  }
+  for (let x = 0; x < u.length; x++) {
+    quietU = Math.max(quietU, QUIET * Math.abs(u[x]));
+    quietP = Math.max(quietP, QUIET * Math.abs(p[x]));
+  }
   let worst = 0;
   for (let i = 0; i < member.segmentCount; i++) {
     const [from, to] = grid.range(i);
@@ -205,16 +218,19 @@ function shapeResidual(
     const soft = 1 / member.stiffness[i];
     worst = Math.max(
       worst,
-      ratio(pFar - pNear + density * sumU, Math.abs(pFar) + Math.abs(pNear) + Math.abs(density) * sizeU),
-      ratio(uFar - uNear - soft * sumP, Math.abs(uFar) + Math.abs(uNear) + soft * sizeP),
+      ratio(
+        pFar - pNear + density * sumU,
+        Math.abs(pFar) + Math.abs(pNear) + Math.abs(density) * sizeU + quietP,
+      ),
+      ratio(uFar - uNear - soft * sumP, Math.abs(uFar) + Math.abs(uNear) + soft * sizeP + quietU),
     );
     const impedance = density > 0 ? Math.sqrt(density * member.stiffness[i]) : 0;
     const next = i + 1 < member.segmentCount ? ends[ENDS * (i + 1) + 1] : 0;
     if (i + 1 < member.segmentCount || !member.farFixed) {
-      worst = Math.max(worst, nodeResidual(member, lambda, i + 1, uFar, pFar, next, impedance));
+      worst = Math.max(worst, nodeResidual(member, lambda, i + 1, uFar, pFar, next, impedance, quietP));
     }
     if (i === 0 && !member.nearFixed) {
-      worst = Math.max(worst, nodeResidual(member, lambda, 0, uNear, 0, pNear, impedance));
+      worst = Math.max(worst, nodeResidual(member, lambda, 0, uNear, 0, pNear, impedance, quietP));
     }
   }
   return worst;
@@ -229,10 +245,11 @@ function nodeResidual(
   before: number,
   after: number,
   impedance: number,
+  quiet: number,
 ): number {
   const spring = member.spring[node];
   const inertia = lambda * member.mass[node];
-  const size = Math.abs(after) + Math.abs(before) + (spring + inertia + impedance) * Math.abs(u);
+  const size = Math.abs(after) + Math.abs(before) + (spring + inertia + impedance) * Math.abs(u) + quiet;
   return ratio(after - before - (spring - inertia) * u, size);
 }
 

@@ -83,13 +83,13 @@ const NOTHING: TailEnergies = { energy: 0, first: 0, second: 0, nextOmega: Numbe
 export function keepModes(
   member: WaveMember,
   state: InitialState,
-  loads: readonly AppliedLoad[],
-  gaugeTime: number,
   limit: number,
   adaptive: boolean,
   span: number,
   shortfall: Shortfall,
   heldNumbers: number,
+  loads: readonly AppliedLoad[] = [],
+  gaugeTime = 0,
 ): KeptSeries {
   const series = new ModeSeries(member);
   const projection = new ModalProjection(member, state.displacement, state.velocity);

@@ -14,7 +14,7 @@ export interface PeakBasis {
   readonly series: KeptSeries;
   /** Largest G over the member, m/N. */
   readonly flexibility: number;
-  readonly loads: readonly AppliedLoad[];
+  readonly loads?: readonly AppliedLoad[];
   readonly gaugeTime: number;
   readonly released: boolean;
   /** Latest sampled time, gauge time included, s. */
@@ -27,7 +27,7 @@ export interface PeakBasis {
  * bound. Of averages where a gauge time is given. Null where no limit exists.
  */
 export function peakLimit(quantity: Quantity, basis: PeakBasis): number | null {
-  const { member, series, gaugeTime, released, span } = basis;
+  const { member, series, gaugeTime, released, span, loads = [] } = basis;
   const { rigid } = series.tail;
   const { damping } = member;
   const flux = quantity === 'force' || quantity === 'stress';
@@ -49,7 +49,7 @@ export function peakLimit(quantity: Quantity, basis: PeakBasis): number | null {
         ? product(rest.onFlexibility, Math.sqrt(tail.member.flexibility)) +
           product(rest.onFluxInertia, Math.sqrt(tail.member.fluxInertia))
         : Number.POSITIVE_INFINITY;
-  let modal = basis.loads.length > 0 ? Number.POSITIVE_INFINITY : left;
+  let modal = loads.length > 0 ? Number.POSITIVE_INFINITY : left;
   if (Number.isFinite(modal)) {
     for (const { mode, start } of series.modes) {
       const { omega } = mode.frequency;
@@ -59,7 +59,7 @@ export function peakLimit(quantity: Quantity, basis: PeakBasis): number | null {
         shape * modalAmplitude(quantity, omega, Math.sqrt(2 * start.energy), member, mode.frequency.order);
     }
   }
-  const still = stillPeak(member, basis.loads, quantity, basis.flexibility, gaugeTime, span);
+  const still = stillPeak(member, loads, quantity, basis.flexibility, gaugeTime, span);
   const elastic = Math.min(ceiling, modal) + still;
   const pushed = rigidPush(basis);
   const path = rigid.position + rigid.velocity * span + 0.5 * pushed * span * span;
@@ -81,7 +81,7 @@ function rigidPush(basis: PeakBasis): number {
   const [first] = basis.series.modes;
   if (first.mode.frequency.omega > 0) return 0;
   const height = first.mode.shape.ends[0];
-  return basis.loads.reduce((sum, load, index) => {
+  return (basis.loads ?? []).reduce((sum, load, index) => {
     const drive = load.moving
       ? Math.abs(load.moving.force) * height
       : Math.abs(first.factors[index]) * (load.measures?.largest ?? 0);

@@ -127,7 +127,7 @@ export class PowerBalance {
     this.kickInstant.run(moved, rate);
     const { v } = this.kickInstant;
     return Float64Array.from(this.kicks, ({ index, amounts }) => {
-      const change = amounts.reduce((sum, amount, load) => sum + amount * moved.factors[load], 0);
+      const change = amounts.reduce((sum, amount, load) => sum + amount * (moved.factors?.[load] ?? 0), 0);
       const before = v[index] - change;
       return 0.5 * (v[index] * v[index] - before * before);
     });

@@ -52,7 +52,7 @@ export function tailFactors(
   kept: number,
   gaugeTime: number,
   released: boolean,
-  loads: LoadTailFactors,
+  loads: LoadTailFactors = NO_LOADS,
 ): TailFactors {
   const zeta = largestRatioAbove(damping, kept);
   const beta = damping.stiffnessCoefficient;

@@ -16,7 +16,7 @@ export function displacementBound(tail: TailState, flexibility: number, span: nu
 }
 
 /** √(2E G) over the member and what loads can add: the elastic displacement never exceeds it, m. */
-export function displacementCeiling(tail: TailState, flexibility: number, still: number): number {
+export function displacementCeiling(tail: TailState, flexibility: number, still = 0): number {
   const reach = Math.sqrt(2 * tail.whole.energies.energy) + tail.whole.loads.displacement;
   return reach * Math.sqrt(flexibility) + still;
 }
@@ -37,8 +37,8 @@ export function shortfallOf(
   flexibility: number,
   gaugeTime: number,
   released: boolean,
-  still: number,
   span: number,
+  still = 0,
 ): Shortfall {
   const wanted = 'tolerances' in series ? series.tolerances : {};
   const relative = 'relativeTolerance' in series ? series.relativeTolerance : USUAL_TOLERANCE;

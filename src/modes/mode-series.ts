@@ -30,7 +30,7 @@ const INDEPENDENT_ENOUGH = 0.5;
  * give the same shape twice. The group's shapes are therefore chosen independent, from joints in
  * different segments if need be, and made orthonormal in the mass product.
  *
- * Cost: about 6 sweeps a mode, O(segments) each.
+ * Cost: 7 to 11 sweeps a mode, O(segments) each.
  */
 export class ModeSeries {
   readonly frequencies: NaturalFrequencies;

@@ -29,7 +29,7 @@ interface March {
 }
 
 /** How much a poor meeting of the marches counts against a lively node. */
-const MISMATCH_WEIGHT = 1e8;
+const MISMATCH_WEIGHT = 1e14;
 
 /** Numbers held a state: u, g, log. */
 const STATE = 3;

@@ -92,9 +92,9 @@ function readPull(
   const pointer = `${shapeAt}/at`;
   if (response === null) throw fault('pull-without-restraint', pointer, { at: shape.at });
   const { segment, distance } = place(member, shape.at);
-  if ('force' in shape) return { segment, distance, force: shape.force };
   const flexibility = response.flexibility(segment, distance);
   if (flexibility === 0) throw fault('pull-at-fixed-end', pointer, { at: shape.at });
+  if ('force' in shape) return { segment, distance, force: shape.force };
   return { segment, distance, force: shape.amplitude / flexibility };
 }
 

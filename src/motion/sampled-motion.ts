@@ -17,7 +17,7 @@ export type FieldKind = 'displacement' | 'relativeDisplacement' | 'velocity' | '
 export interface MovedMode {
   readonly mode: Mode;
   readonly start: ModalStart;
-  readonly factors: readonly number[];
+  readonly factors?: readonly number[];
 }
 
 /** Modes handled at once; also the length of a summation block. */
@@ -41,12 +41,12 @@ const TILE = 2048;
 export function sampleMotion(
   member: WaveMember,
   modes: readonly MovedMode[],
-  loads: readonly AppliedLoad[],
   stations: Stations,
   times: Float64Array,
   kinds: readonly FieldKind[],
   gaugeTime: number,
   visit: (mode: Mode, displacement: Float64Array, flux: Float64Array, first: number) => void,
+  loads: readonly AppliedLoad[] = [],
 ): Map<FieldKind, Float64Array> {
   const columns = stations.segment.length;
   const fields = new Map(kinds.map((kind) => [kind, new Float64Array(times.length * columns)]));
@@ -218,7 +218,7 @@ export class Instant {
   run(moved: MovedMode, rate: number): void {
     const { position, velocity } = moved.start;
     this.free.fill(position, velocity, moved.mode.frequency.omega, rate, this.q, this.v);
-    this.loads?.add(moved.mode, rate, moved.factors, [this.q, this.v]);
+    this.loads?.add(moved.mode, rate, moved.factors ?? [], [this.q, this.v]);
   }
 
   /** ∫P φ_n(x(t)) between the times of another set and these. */

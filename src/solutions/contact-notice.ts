@@ -36,12 +36,12 @@ export function contactNotice(
     const force = sampleMotion(
       member,
       series.modes,
-      loads,
       station,
       times,
       ['force'],
       0,
       () => undefined,
+      loads,
     ).get('force');
     if (!force) continue;
     const largest = force.reduce((most, value) => Math.max(most, Math.abs(value)), 0);

@@ -56,13 +56,13 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
   const series = keepModes(
     member,
     state,
-    loads,
-    gaugeTime,
     'modes' in request.series ? request.series.modes : request.series.maxModes,
     !('modes' in request.series),
     span,
-    shortfallOf(request.series, member, flexibility, gaugeTime, state.released, still, span),
+    shortfallOf(request.series, member, flexibility, gaugeTime, state.released, span, still),
     HELD_NUMBERS,
+    loads,
+    gaugeTime,
   );
 
   const tails = new TailFlexibility(member, stations);
@@ -70,12 +70,12 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
   const sums = sampleMotion(
     member,
     series.modes,
-    loads,
     stations,
     times,
     [...new Set(kinds)],
     gaugeTime,
     (mode, u, p, first) => tails.addSampled(mode, u, p, first),
+    loads,
   );
 
   const basis: PeakBasis = {
@@ -106,7 +106,7 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
 
   const total = state.energies[0] + state.rigidEnergy;
   const captured = series.modes.reduce((sum, kept) => sum + kept.start.energy, 0);
-  const checks = request.checks ? checkIndependently(member, series.modes, loads, times, total) : null;
+  const checks = request.checks ? checkIndependently(member, series.modes, times, total, loads) : null;
   return {
     coefficients: series.modes.map(({ mode, start }) => ({
       order: mode.frequency.order,

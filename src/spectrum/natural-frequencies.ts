@@ -30,7 +30,8 @@ const SWEEP_LIMIT = 400;
  * on with what they taught.
  *
  * Accuracy: about 2⁻⁵² ω (4 + condition), the half width of the interval.
- * Cost: about 5 sweeps a mode, O(segments) each.
+ * Cost: 5 to 9 sweeps a mode, O(segments) each, more where a barrier or a heavy lump parts the member
+ * into wells (up to some 50 for a pair closer than rounding).
  */
 export class NaturalFrequencies {
   /** Number of modes of the member: infinite unless all inertia is lumped. */

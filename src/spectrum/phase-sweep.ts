@@ -16,10 +16,11 @@ const ROUNDING = 4 * Number.EPSILON;
  *
  *   Φ(ω) = θ_near + θ_far
  *
- * is continuous and increasing in ω, and ω_n solves Φ = n π (Sturm oscillation; the count is the
+ * passes every n π once, upwards, at ω_n (Sturm oscillation; for a scale S that does not depend on ω it
+ * is continuous and increasing, and where S changes, multiples of π stay what they are). The count is the
  * one of W. H. Wittrick and F. W. Williams, "A general algorithm for computing natural frequencies
- * of elastic structures", Q. J. Mech. Appl. Math. 24, 1971). Its derivative is closed form, the
- * mass of the trial shape over its amplitude at the joint:
+ * of elastic structures", Q. J. Mech. Appl. Math. 24, 1971. Its derivative is closed form, the mass of
+ * the trial shape over its amplitude at the joint, S′ counted where the joint travels:
  *
  *   dΦ/dω = 2 ω S (m_near/A_near² + m_far/A_far²) + S′(ω) (u p/A² on both sides).
  *
@@ -35,7 +36,7 @@ export class PhaseSweep {
   sweeps = 0;
   /** Φ − n π of the last sweep, rad. */
   residual = 0;
-  /** dΦ/dω of the last sweep, s. */
+  /** dΦ/dω of the last sweep, s; in an evanescent joint that of a fixed scale. */
   slope = 0;
   /** Number of natural frequencies strictly below the last trial ω. */
   below = 0;

@@ -1,4 +1,11 @@
-export const record = { interval: 0.005, samples: 100_000, instants: 5000, stride: 20, modes: 60, stations: 5 };
+export const record = {
+  interval: 0.005,
+  samples: 100_000,
+  instants: 5000,
+  stride: 20,
+  modes: 60,
+  stations: 5,
+};
 
 /** 12 layers, softer towards the surface at x = L, on a base that shakes. */
 const member = {

@@ -2,10 +2,12 @@
 import { httpLoad } from './http-load.js';
 import { jsonTimes } from './json-times.js';
 import { poolScaling } from './pool-scaling.js';
+import { recordTimes } from './record-times.js';
 import { solveTimes } from './solve-times.js';
 
 console.log(`Node ${process.version}`);
 solveTimes();
+recordTimes();
 jsonTimes();
 await poolScaling();
 await httpLoad();

@@ -23,7 +23,8 @@ describe('the adaptive length of random members', { timeout: 60_000 }, () => {
     let converged = 0;
     for (const request of requests(60)) {
       const answer = solveWith(request, { relativeTolerance: tolerance, maxModes: 1500 });
-      const { verdict, modesUsed, modesNeeded, displacementBound, ceiling } = answer.convergence;
+      const { verdict, modesUsed, modesNeeded, displacementBound } = answer.convergence;
+      const ceiling = answer.convergence.ceiling!;
       if (verdict === 'complete') continue;
       if (verdict === 'converged') {
         converged++;
@@ -33,7 +34,7 @@ describe('the adaptive length of random members', { timeout: 60_000 }, () => {
         if (modesUsed > 1) {
           const fewer = solveWith(request, { modes: modesUsed - 1 });
           expect(fewer.convergence.displacementBound).toBeGreaterThan(
-            tolerance * fewer.convergence.ceiling * (1 - 1e-9),
+            tolerance * fewer.convergence.ceiling! * (1 - 1e-9),
           );
         }
         // The same length asked for by number gives the same answer.

@@ -86,3 +86,32 @@ describe('higher levels of smooth data', () => {
     expect(once.energy(4)).toBeCloseTo(0.5, 12);
   });
 });
+
+describe('energy that is missing tells of a wrong shape', () => {
+  it('with every mode taken: what is left beyond the floor', () => {
+    const tail = new EnergyTail([1, null, null]);
+    tail.add(0.75, 1, 0, 0);
+    expect(tail.missing(Infinity)).toBeCloseTo(0.25, 12);
+    tail.add(0.25, 4, 0, 0);
+    expect(tail.missing(Infinity)).toBeLessThan(0);
+  });
+
+  it('before that only beyond what the smoothness of the data allows, E¹_tail/ω²', () => {
+    const tail = new EnergyTail([1, 2, null]);
+    tail.add(0.5, 1, 0, 0);
+    // left 0.5 of E⁰ and 1.5 of E¹: at ω² = 4 it may be 0.375, at ω² = 3 it may be 0.5
+    expect(tail.missing(4)).toBeCloseTo(0.125, 12);
+    expect(tail.missing(2)).toBeLessThan(0);
+    const rough = new EnergyTail([1, null, null]);
+    rough.add(0.5, 1, 0, 0);
+    expect(rough.missing(1e300)).toBe(-Infinity);
+  });
+
+  it('the rounding of the data widens the floors', () => {
+    const tail = new EnergyTail([1, 2, 3], [1e-6, 1e-5, 1e-4]);
+    tail.add(1, 1, 0, 0);
+    expect(tail.energy(1e-9)).toBeCloseTo(1e-6, 12);
+    expect(tail.second()).toBeCloseTo(2 + 1e-4, 9);
+    expect(tail.excess).toBeLessThan(-1e-6);
+  });
+});

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { TailState } from '../../src/certificate/kept-modes.ts';
+import { NO_LOADS } from '../../src/certificate/load-tails.ts';
 import { Rounding } from '../../src/certificate/rounding.ts';
 import {
   displacementBound,
@@ -18,19 +19,22 @@ function tail(first = Infinity, energy = 5e-3): TailState {
     energies: { energy, first, second: Infinity, nextOmega: 20 },
     member: { flexibility: 0.01, fluxInertia: 4 },
     rounding: new Rounding(1, 1, 1),
-    rigidEnergy: 0,
+    loads: NO_LOADS,
+    rigid: { position: 0, velocity: 0 },
     whole: {
       energies: { energy: 50, first, second: Infinity, nextOmega: 3 },
       member: { flexibility: 1, fluxInertia: 9 },
+      loads: NO_LOADS,
+      silent: false,
     },
   };
 }
 
 const ratio = (wanted: ResponsesSeries, of: TailState, gaugeTime = 0): number =>
-  shortfallOf(wanted, member, 1, gaugeTime, true)(of).ratio;
+  shortfallOf(wanted, member, 1, gaugeTime, true, 1)(of).ratio;
 
 it('the bound is √(2E ΔG) and the ceiling √(2E G) of the elastic motion', () => {
-  expect(displacementBound(tail(), 1)).toBeCloseTo(0.01, 15);
+  expect(displacementBound(tail(), 1, 1)).toBeCloseTo(0.01, 15);
   expect(displacementCeiling(tail(), 1)).toBeCloseTo(10, 14);
 });
 
@@ -72,17 +76,24 @@ describe('how far the bound is from its tolerance', () => {
     );
   });
 
-  it('nothing missing is enough, also where the ceiling is 0', () => {
-    const still = tail(0, 0);
-    const rest: TailState = {
-      ...still,
-      whole: { ...still.whole, energies: { ...still.whole.energies, energy: 0 } },
-    };
-    expect(ratio({ relativeTolerance: 1e-9, maxModes: 9 }, rest)).toBe(0);
+  it('an elastic motion of rounding size meets any relative tolerance, but no absolute one by itself', () => {
+    const silent: TailState = { ...tail(), whole: { ...tail().whole, silent: true } };
+    expect(ratio({ relativeTolerance: 1e-9, maxModes: 9 }, silent)).toBe(0);
+    expect(ratio({ tolerances: { displacement: 0.004 }, maxModes: 9 }, silent)).toBeCloseTo(2.5, 12);
+  });
+
+  it('nothing missing is enough', () => {
+    expect(ratio({ relativeTolerance: 1e-9, maxModes: 9 }, tail(0, 0))).toBe(0);
   });
 });
 
+it('the path of a rigid-body motion brings its rounding', () => {
+  const drifting: TailState = { ...tail(), rigid: { position: 1, velocity: 2 } };
+  const more = displacementBound(drifting, 1, 1e12) - displacementBound(tail(), 1, 1e12);
+  expect(more / (64 * Number.EPSILON * 2e12)).toBeCloseTo(1, 9);
+});
+
 it('the share of rounding is told apart', () => {
-  const found = shortfallOf({ relativeTolerance: 1e-3, maxModes: 9 }, member, 1, 0, true)(tail());
+  const found = shortfallOf({ relativeTolerance: 1e-3, maxModes: 9 }, member, 1, 0, true, 1)(tail());
   expect(found.roundingRatio).toBe(0);
 });

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { elasticFlexibility, TailFlexibility } from '../../src/certificate/tail-flexibility.ts';
+import { TailFlexibility } from '../../src/certificate/tail-flexibility.ts';
 import type { WaveMember } from '../../src/members/wave-member.ts';
 import { ModeSeries } from '../../src/modes/mode-series.ts';
 import { placeStations } from '../../src/modes/stations.ts';
@@ -176,15 +176,28 @@ it('sampled values may be taken out in parts of the stations', () => {
   });
 });
 
-it('the flexibility of a member as one stretch is Σ l/k', () => {
-  expect(
-    elasticFlexibility(
-      waveMember({
-        segments: [
-          [1, 2, 1],
-          [3, 4, 1],
-        ],
-      }),
-    ),
-  ).toBe(1.25);
+describe('a flexibility overdrawn tells of a wrong shape', () => {
+  const member = waveMember(uniformTrial(2));
+  const tails = (): TailFlexibility => new TailFlexibility(member, placeStations(member, places));
+
+  it('never by right shapes, however many', () => {
+    const right = tails();
+    const series = new ModeSeries(member);
+    for (let n = 1; n <= 300; n++) {
+      right.add(series.next()!);
+      expect(right.overdrawn()).toBe(false);
+    }
+  });
+
+  it('by the first shape taken twice, by one that is too large', () => {
+    const [twice, large] = [tails(), tails()];
+    const first = new ModeSeries(member).next()!;
+    twice.add(first);
+    expect(twice.overdrawn()).toBe(false);
+    twice.add(first);
+    expect(twice.overdrawn()).toBe(true);
+    const ends = first.shape.ends.map((value) => 1.2 * value);
+    large.add({ ...first, shape: { ...first.shape, ends } });
+    expect(large.overdrawn()).toBe(true);
+  });
 });

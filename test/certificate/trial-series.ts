@@ -24,7 +24,7 @@ export function keep(
   const member = waveMember(trial);
   const state = readInitialState(member, initial);
   const flexibility = largestFlexibility(member);
-  const shortfall = shortfallOf(wanted, member, flexibility, gaugeTime, state.released);
+  const shortfall = shortfallOf(wanted, member, flexibility, gaugeTime, state.released, span);
   const series = keepModes(
     member,
     state,

@@ -86,6 +86,73 @@ describe('the service as it is started', () => {
     expect(a).toBe(b);
   });
 
+  it.each([
+    [
+      'an undamped resonance hit exactly, by its frequency',
+      { damping: undefined, input: { type: 'end-motion', end: 'near', quantity: 'displacement' } },
+      { code: 'resonance-hit', pointer: '/frequencies', detail: /^At 2\.5 Hz / },
+    ],
+    [
+      'an outcrop motion under damping ratios',
+      {
+        damping: { type: 'ratio', value: 0.02 },
+        input: { type: 'outcrop-motion', end: 'near', impedance: 2e6, quantity: 'displacement' },
+      },
+      { code: 'outcrop-with-ratios', pointer: '/member/damping', detail: /loss-factor/ },
+    ],
+  ])('refuses in the solver %s', async (_title, { damping, input }, { code, pointer, detail }) => {
+    // A uniform column on a fixed base is in resonance at V/(4 H) = 2.5 Hz.
+    const member = {
+      kind: 'shear-column',
+      segments: [{ length: 20, shearWaveSpeed: 200, density: 1900 }],
+      ends: { near: { type: 'fixed' }, far: { type: 'free' } },
+      damping,
+    };
+    const response = await service.post('/v1/transfer-functions', {
+      member,
+      input,
+      outputs: [{ at: 20, quantity: 'displacement' }],
+      frequencies: [1, 2.5],
+    });
+    expect([response.status, response.headers.get('content-type')]).toEqual([
+      422,
+      'application/problem+json',
+    ]);
+    const problem = (await response.json()) as { detail: string };
+    expectValid('ProblemDocument', problem);
+    expect(problem).toMatchObject({ code, errors: [{ code, pointer }] });
+    expect(problem.detail).toMatch(detail);
+  });
+
+  it('is found live within 20 ms (median) while a record of 200,000 points is read and solved', async () => {
+    const shaken = JSON.parse(load('shaken-soil-column.json')) as {
+      loads: { history: { interval: number; values: number[] } }[];
+    };
+    const { history } = shaken.loads[0];
+    const values = Array.from({ length: 200_000 }, (_, i) => history.values[i % history.values.length]);
+    const long = (more: number[]): unknown => ({
+      ...shaken,
+      loads: [{ ...shaken.loads[0], history: { ...history, values: [...values, ...more] } }],
+      series: { modes: 20 },
+    });
+    const solved = service.post('/v1/responses', long([]));
+    const state = { done: false };
+    void solved.finally(() => (state.done = true));
+    const times: number[] = [];
+    while (!state.done) {
+      const started = performance.now();
+      await (await fetch(`${service.url}/health/live`)).arrayBuffer();
+      times.push(performance.now() - started);
+    }
+    expect((await solved).status).toBe(200);
+    expect(times.toSorted((a, b) => a - b)[times.length >> 1]).toBeLessThan(20);
+    const refused = await service.post('/v1/responses', long([0]));
+    expect([refused.status, ((await refused.json()) as { code: string }).code]).toEqual([
+      400,
+      'too-many-items',
+    ]);
+  });
+
   it('serves the reference document that clients are built from', async () => {
     const document = (await (await fetch(`${service.url}/openapi.json`)).json()) as {
       openapi: string;

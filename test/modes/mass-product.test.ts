@@ -1,6 +1,7 @@
 import { expect, it } from 'vitest';
 import { massProduct } from '../../src/modes/mass-product.ts';
-import { evaluateShape, shapeAt, waveNumberSquare, type ModeShape } from '../../src/modes/mode-shape.ts';
+import { evaluateShape, waveNumberSquare, type ModeShape } from '../../src/modes/mode-shape.ts';
+import { shapeAt } from '../../src/modes/shape-at.ts';
 import type { WaveMember } from '../../src/members/wave-member.ts';
 import { uniformTrial, waveMember } from '../spectrum/trial-members.ts';
 import { integrate } from './quadrature.ts';

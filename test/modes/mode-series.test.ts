@@ -156,8 +156,8 @@ it('a member of lumps ends its series', () => {
   expect(series.next()).toBeNull();
 });
 
-it('a dense spectrum is no close group: neighbours of high order are shaped one by one', () => {
-  // relative gaps of 1/n < 1e-3 from n = 1,000 on
+it('neighbours a thousandth apart are shaped one by one, at high orders too', () => {
+  // relative gaps of 1/n
   const member = waveMember(uniformTrial(1));
   const series = new ModeSeries(member);
   let last: Mode | null = null;

@@ -1,7 +1,14 @@
 import { describe, expect, it } from 'vitest';
 import { masslessStretches } from '../../src/modes/massless-stretches.ts';
 import { StaticResponse } from '../../src/modes/static-response.ts';
-import { massForm, piecesStrainForm, strainForm, valueAt } from '../../src/motion/field-energy.ts';
+import {
+  massForm,
+  massRounding,
+  piecesStrainForm,
+  strainForm,
+  strainRounding,
+  valueAt,
+} from '../../src/motion/field-energy.ts';
 import { readDisplacement, settle } from '../../src/motion/initial-displacement.ts';
 import { readVelocity } from '../../src/motion/initial-velocity.ts';
 import { pieceSlope, pieceValue } from '../../src/motion/piecewise-field.ts';
@@ -179,4 +186,45 @@ it('a field is found at any distance, 0 beyond its cells', () => {
   expect(valueAt(pieces, 0, member.length[0])).toBeCloseTo(8 / 9, 15);
   expect(valueAt(pieces, 7, 0)).toBe(0);
   expect(piecesStrainForm(member, pieces)).toBeCloseTo(8 * (2 + 2 / 3), 13);
+});
+
+describe('the rounding of the forms', () => {
+  const member = waveMember(uniformTrial(1, {}, [1, 1, 1]));
+  const read = (shapes: Shape[]): ReturnType<typeof readDisplacement> =>
+    readDisplacement(member, shapes, new StaticResponse(member));
+
+  it('is of the order of 2⁻⁵² where nothing cancels', () => {
+    const { pieces } = read([{ type: 'half-sine', amplitude: 1, halfWaves: 1 }]);
+    expect(strainRounding(member, pieces)).toBeGreaterThan(EPS);
+    expect(strainRounding(member, pieces)).toBeLessThan(1000 * EPS);
+    expect(massRounding(member, pieces)).toBeLessThan(1000 * EPS);
+  });
+
+  it('covers what is lost where large terms cancel', () => {
+    // 1e6·x(1 − x) less itself but for a part of 1e-6: x(1 − x) remains, known to 1e6 roundings
+    const shapes: Shape[] = [
+      { type: 'polynomial', coefficients: [0, 1e6 + 1, -1e6 - 1], from: 0 },
+      { type: 'polynomial', coefficients: [0, -1e6, 1e6], from: 0 },
+    ];
+    const { pieces } = read(shapes);
+    expect(Math.abs(piecesStrainForm(member, pieces) - 1 / 3)).toBeLessThan(strainRounding(member, pieces));
+    expect(Math.abs(massForm(member, pieces, new Float64Array(2)) - 1 / 30)).toBeLessThan(
+      massRounding(member, pieces),
+    );
+    expect(strainRounding(member, pieces)).toBeGreaterThan(1e6 * EPS);
+    expect(strainRounding(member, pieces)).toBeLessThan(1e9 * EPS);
+  });
+});
+
+it('polynomials of degree 20 are integrated exactly: ∫ k f′² of x²⁰(1 − x)', () => {
+  const member = waveMember(uniformTrial(1));
+  const coefficients = Array.from({ length: 21 }, (_, d) => (d === 19 ? 1 : d === 20 ? -1 : 0));
+  const { pieces } = readDisplacement(member, { type: 'polynomial', coefficients, from: 0 }, null);
+  // f = x¹⁹ − x²⁰: 361/37 − 760/38 + 400/39
+  const expected = 361 / 37 - 760 / 38 + 400 / 39;
+  expect(roundings(piecesStrainForm(member, pieces), expected)).toBeLessThan(4000);
+  // and ∫ρ f² = 1/39 − 2/40 + 1/41
+  expect(roundings(massForm(member, pieces, new Float64Array(2)), 1 / 39 - 1 / 20 + 1 / 41)).toBeLessThan(
+    1e5,
+  );
 });

@@ -18,7 +18,8 @@ const EPS = Number.EPSILON;
 
 describe('a wave term is a sine, a line or a hyperbolic sine', () => {
   it('κ² > 0: value cos κξ + slope/κ sin κξ', () => {
-    const term: WaveTerm = { square: 9, value: 2, slope: -3, farValue: NaN };
+    const farValue = 2 * Math.cos(21) - Math.sin(21);
+    const term: WaveTerm = { square: 9, value: 2, slope: -3, farValue };
     for (const xi of [0, 0.1, 1, 7]) {
       const scale = 3 * EPS * (4 + 3 * xi);
       expect(Math.abs(waveValue(term, 7, xi) - 2 * Math.cos(3 * xi) + Math.sin(3 * xi))).toBeLessThan(scale);
@@ -65,13 +66,14 @@ const piece: Piece = {
   start: 0.5,
   length: 2,
   powers: [1, -4, 8],
+  magnitude: 20,
   waves: [{ square: 4, value: 0.5, slope: 1, farValue: 0.5 * Math.cos(4) + 0.5 * Math.sin(4) }],
 };
 
-it('a piece adds its powers of t = ξ/h and its waves; its scale is the sum of magnitudes', () => {
+it('a piece adds its powers of t = ξ/h and its waves; its scale is the magnitude of both', () => {
   const { value, scale } = pieceValue(piece, 1);
   expect(value).toBeCloseTo(1 - 2 + 2 + 0.5 * Math.cos(2) + 0.5 * Math.sin(2), 14);
-  expect(scale).toBeCloseTo(1 + 2 + 2 + Math.hypot(0.5, 0.5), 14);
+  expect(scale).toBeCloseTo(20 + Math.hypot(0.5, 0.5), 14);
 });
 
 it('a slope is per metre', () => {
@@ -106,6 +108,7 @@ it('node values are those at the ends of the segments, the near side deciding wh
     length,
     powers,
     waves: [],
+    magnitude: 10,
   });
   const values = nodeValuesOf([line(0, 0, 1, [2, 1]), line(0, 1, 1, [3]), line(1, 0, 2, [3, 5])], 2);
   expect(Array.from(values)).toEqual([2, 3, 8]);

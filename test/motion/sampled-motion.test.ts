@@ -40,14 +40,17 @@ function started(member: WaveMember, motion: InitialMotion, count: number): Star
   });
 }
 
+/** Without loads a relative displacement is the displacement. */
+type PlainKind = Exclude<FieldKind, 'relativeDisplacement'>;
+
 /** One entry of each field, and the sum of the magnitudes, by a plain sum over the modes. */
 function plainEntry(
   member: WaveMember,
   modes: readonly Started[],
   [i, d]: [number, number],
   t: number,
-): Record<FieldKind, [number, number]> {
-  const sums: Record<FieldKind, [number, number]> = {
+): Record<PlainKind, [number, number]> {
+  const sums: Record<PlainKind, [number, number]> = {
     displacement: [0, 0],
     velocity: [0, 0],
     acceleration: [0, 0],
@@ -60,7 +63,7 @@ function plainEntry(
     const rate = dampingRate(member.damping, order, omega);
     freeMotion(start.position, start.velocity, omega, rate, Float64Array.of(t), q, v);
     evaluateShape(member, mode.shape, i, d, out);
-    const terms: Record<FieldKind, number> = {
+    const terms: Record<PlainKind, number> = {
       displacement: out[0] * q[0],
       velocity: out[0] * v[0],
       acceleration: -out[0] * (omega * omega * q[0] + rate * v[0]),
@@ -69,13 +72,13 @@ function plainEntry(
     // amplitudes, since a term may pass zero where its phase is known to rounding only
     const high = Math.hypot(out[0], out[1] / (omega || 1));
     const amplitude = Math.sqrt(2 * start.energy);
-    const sizes: Record<FieldKind, number> = {
+    const sizes: Record<PlainKind, number> = {
       displacement: (high * amplitude) / (omega || 1),
       velocity: high * amplitude,
       acceleration: high * amplitude * (omega + rate),
       force: high * amplitude * 3 * (1 + member.damping.stiffnessCoefficient * omega),
     };
-    for (const kind of Object.keys(sums) as FieldKind[]) {
+    for (const kind of Object.keys(sums) as PlainKind[]) {
       sums[kind][0] += terms[kind];
       sums[kind][1] += sizes[kind];
     }
@@ -83,7 +86,7 @@ function plainEntry(
   return sums;
 }
 
-const kinds: FieldKind[] = ['displacement', 'velocity', 'acceleration', 'force'];
+const kinds: PlainKind[] = ['displacement', 'velocity', 'acceleration', 'force'];
 
 const dampings: [string, Damping | undefined][] = [
   ['undamped', undefined],

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { gauss, pieceTimesWave } from '../../src/motion/wave-integrals.ts';
+import { gauss, pieceIntegral, pieceTimesWave, waveIntegral } from '../../src/motion/wave-integrals.ts';
 import { waveValue, type Piece, type WaveTerm } from '../../src/motion/piecewise-field.ts';
 import { integrate } from '../modes/quadrature.ts';
 import { motionValues } from './motion-values.ts';
@@ -12,6 +12,7 @@ const piece = (length: number, powers: number[], waves: WaveTerm[] = []): Piece 
   length,
   powers,
   waves,
+  magnitude: 1,
 });
 
 /** Largest |y| on a cell. */
@@ -102,4 +103,21 @@ it('an empty piece gives 0', () => {
 it('Gauss panels of phase 3 integrate cos 50x to rounding', () => {
   expect(Math.abs(gauss(1, 50, (x) => Math.cos(50 * x)) - Math.sin(50) / 50)).toBeLessThan(8 * EPS);
   expect(gauss(2, 0, (x) => x * x)).toBeCloseTo(8 / 3, 15);
+});
+
+describe('plain integrals', () => {
+  it.each([0.001, 0.9, 4, 100, -0.001, -0.9, -1.1, -30])('of a wave, phase or decay %s', (a) => {
+    const wave = term(a, 0.4, a < -5 ? -0.4 * (-a / 0.8) : 3);
+    const panels = 2 + Math.ceil(Math.abs(a) / 2);
+    const expected = integrate((xi) => waveValue(wave, 0.8, xi), 0, 0.8, panels);
+    const scale = 0.8 * reach(wave) * (1 + Math.abs(a));
+    expect(Math.abs(waveIntegral(wave, 0.8) - expected)).toBeLessThan(32 * EPS * scale);
+  });
+
+  it('of a piece: powers and waves', () => {
+    const wave = term(2, 0.4, 3);
+    const sum = 0.8 * (1 - 2 / 2 + 5 / 3) + waveIntegral(wave, 0.8);
+    expect(pieceIntegral(piece(0.8, [1, -2, 5], [wave]))).toBeCloseTo(sum, 14);
+    expect(pieceIntegral(piece(0.8, []))).toBe(0);
+  });
 });

@@ -91,8 +91,8 @@ function stations(random: RandomStream, member: PlainMember): number[] {
 function modesKept(random: RandomStream): number {
   const draw = random.unit();
   if (draw < 0.75) return random.integer(1, 20);
-  if (draw < 0.98) return random.integer(20, 120);
-  if (draw < 0.998) return random.integer(120, 800);
+  if (draw < 0.99) return random.integer(20, 120);
+  if (draw < 0.9985) return random.integer(120, 800);
   return random.integer(800, 5000);
 }
 
