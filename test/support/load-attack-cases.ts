@@ -50,7 +50,8 @@ export function loadAttackCase(seed: number, index: number): AttackCase {
     'acceleration',
   ];
   const gaugeTime = random.chance(0.4) ? 0 : time * random.decades(-2, 0.5);
-  const count = random.chance(0.8) ? random.integer(1, 12) : random.integer(12, 40);
+  const count = random.chance(0.85) ? random.integer(1, 12) : random.integer(12, 40);
+  const longer = random.chance(0.1) ? Math.max(8 * count, 400) : Math.max(5 * count, 80);
   const latest = random.decades(-0.5, 1.3);
   const times = [0, ...Array.from({ length: 9 }, () => random.unit() * latest * 2 * time)].toSorted(
     (a, b) => a - b,
@@ -68,6 +69,6 @@ export function loadAttackCase(seed: number, index: number): AttackCase {
   return {
     family: `${family}, ${kinds}`,
     short: { ...responsesRequest({ ...common, modes: count, checks: random.chance(0.1) }), loads },
-    long: { ...responsesRequest({ ...common, modes: Math.max(8 * count, 400) }), loads },
+    long: { ...responsesRequest({ ...common, modes: longer }), loads },
   };
 }
