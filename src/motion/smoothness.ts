@@ -129,8 +129,8 @@ function accelerated(member: WaveMember, piece: Piece): Piece {
       farValue: factor * term.farValue,
     };
   });
-  const degree = piece.powers.length;
-  const magnitude = (piece.magnitude * ((k / h2) * degree * degree + s)) / rho;
+  const degree = piece.powers.length - 1;
+  const magnitude = (piece.magnitude * ((k / h2) * Math.max(0, degree * (degree - 1)) + s)) / rho;
   return { ...piece, powers, waves, magnitude };
 }
 
