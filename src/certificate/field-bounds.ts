@@ -1,6 +1,8 @@
 import type { WaveMember } from '../members/wave-member.ts';
+import type { AppliedLoad } from '../motion/applied-loads.ts';
 import type { Quantity, Verdict } from '../spec/types.ts';
 import type { KeptSeries, RigidPart } from './kept-modes.ts';
+import { loadRounding, type LoadedPlace } from './load-rounding.ts';
 import type { Rounding } from './rounding.ts';
 import { tailFactors, type BoundKind, type TailFactors } from './quantity-bounds.ts';
 import { largestRatioAbove } from '../motion/modal-damping.ts';
@@ -34,6 +36,8 @@ export function certify(
   released: boolean,
   span: number,
   factor: Float64Array | null,
+  loads: readonly AppliedLoad[] = [],
+  flexibility = 0,
 ): QuantityCertificate {
   const { tail, verdict } = series;
   const factors = tailFactors(
@@ -57,6 +61,8 @@ export function certify(
   const nextLambda = tail.energies.nextOmega * tail.energies.nextOmega;
   const noise = roundingFactors(quantity, member, series.rounding, tail.whole.energies.nextOmega, gaugeTime);
   const drift = rigidRounding(quantity, tail.rigid, span, gaugeTime, member.damping.massCoefficient);
+  const place = loadedPlace(member, flexibility, span, gaugeTime);
+  const outside = drift + loadRounding(quantity, loads, series.modes[0], place);
   const bound = new Float64Array(tails.stations.segment.length);
   for (let q = 0; q < bound.length; q++) {
     const g = complete ? 0 : Math.sqrt(tails.flexibilityTail(q, nextLambda));
@@ -66,7 +72,7 @@ export function certify(
       quantity === 'force' || quantity === 'stress'
         ? noise * Math.sqrt(tails.wholeFlux[q])
         : noise * Math.sqrt(tails.whole[q]);
-    bound[q] = (left + rounding + drift) * (factor?.[q] ?? 1) * (1 + 8 * EPS);
+    bound[q] = (left + rounding + outside) * (factor?.[q] ?? 1) * (1 + 8 * EPS);
   }
   const kind = complete && factors.kind === 'rms' ? 'pointwise' : factors.kind;
   return { bound, kind, rms: null, verdict };
@@ -148,4 +154,20 @@ function rmsOf(
 /** Factor times size, 0 where either is 0. */
 function weigh(factor: number, size: number): number {
   return factor === 0 || size === 0 ? 0 : factor * size;
+}
+
+/** What rounding under loads needs to know of the member. */
+export function loadedPlace(
+  member: WaveMember,
+  flexibility: number,
+  span: number,
+  gaugeTime: number,
+): LoadedPlace {
+  let softness = 0;
+  let steepest = 0;
+  for (let i = 0; i < member.segmentCount; i++) {
+    softness += member.length[i] / member.stiffness[i];
+    steepest = Math.max(steepest, 1 / member.stiffness[i]);
+  }
+  return { flexibility, softness, steepest, span, gaugeTime };
 }

@@ -7,7 +7,8 @@ import type { InitialState } from '../motion/initial-state.ts';
 import { ModalProjection, type ModalStart } from '../motion/modal-projection.ts';
 import type { Verdict } from '../spec/types.ts';
 import { EnergyTail } from './energy-tail.ts';
-import { LoadTails, NO_LOADS, type LoadTailFactors } from './load-tails.ts';
+import { NO_LOADS, type LoadTailFactors } from './load-tail-factors.ts';
+import { LoadTails } from './load-tails.ts';
 import { controlStations, memberTail, type MemberTail } from './member-tail.ts';
 import type { TailEnergies } from './quantity-bounds.ts';
 import { Rounding } from './rounding.ts';
@@ -188,7 +189,9 @@ export function keepModes(
     // the rigid-body mode must be among the kept; every series keeps at least one mode
     const { ratio, roundingRatio } = shortfall(tail);
     history.push(ratio);
-    const verdict = decide(ratio, roundingRatio, last, energy.atFloor);
+    // rounding of the initial energy counts only where that energy makes most of the bound
+    const atFloor = energy.atFloor && Math.sqrt(2 * tail.energies.energy) >= tail.loads.displacement;
+    const verdict = decide(ratio, roundingRatio, last, atFloor);
     if (verdict !== null) {
       requireConsistent(energy, flexibility, nextLambda);
       const modesNeeded = verdict === 'mode-limit' ? estimateNeeded(history, kept, ratio, adaptive) : null;

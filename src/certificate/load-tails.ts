@@ -5,40 +5,11 @@ import type { Stations } from '../modes/stations.ts';
 import type { AppliedLoad } from '../motion/applied-loads.ts';
 import { historyAmount, type HistoryMeasures } from '../motion/history-measures.ts';
 import { largestRatioAbove, smallestRatioAbove } from '../motion/modal-damping.ts';
+import { NO_LOADS, type LoadTailFactors } from './load-tail-factors.ts';
 import { MovingTail } from './moving-tail.ts';
 import { TailFlexibility } from './tail-flexibility.ts';
 
 const EPS = Number.EPSILON;
-
-/** Coefficients of what loads leave out, to be multiplied by √ΔG(x) or √ΔH(x). */
-export interface LoadTailFactors {
-  /** Displacement at the instant: times √ΔG. */
-  readonly displacement: number;
-  /** Velocity at the instant: times √ΔG; infinite where no such bound exists. */
-  readonly velocity: number;
-  /** Flux at the instant: times √ΔH; infinite where no such bound exists. */
-  readonly flux: number;
-  /** Flux averaged over τ, less its static part: times √ΔH; already divided by τ. */
-  readonly gaugeFlux: number;
-  /** Acceleration averaged over τ: times √ΔG; infinite where none. */
-  readonly gaugeAcceleration: number;
-  /** r.m.s. of displacement and velocity times √m, and of flux times √∫dx/k. */
-  readonly rmsDisplacement: number;
-  readonly rmsVelocity: number;
-  readonly rmsFlux: number;
-}
-
-/** No loads, or no mode left out. */
-export const NO_LOADS: LoadTailFactors = {
-  displacement: 0,
-  velocity: 0,
-  flux: 0,
-  gaugeFlux: 0,
-  gaugeAcceleration: 0,
-  rmsVelocity: 0,
-  rmsFlux: 0,
-  rmsDisplacement: 0,
-};
 
 /**
  * What the kept modes leave of the response to loads, after the quasi-static part is taken exactly.
@@ -117,8 +88,9 @@ export class LoadTails {
       }
       const measures = load.measures as HistoryMeasures;
       const kicks = measures.weighedKicks(0);
-      amplitude +=
-        Math.abs(factor) * (Math.min(totalVariation(measures) / omega, span * measures.largest) + kicks);
+      // F_n itself is known to the rounding of its terms only
+      const known = Math.abs(factor) + load.totalForce * peakDisplacement(this.member, mode.shape);
+      amplitude += known * (Math.min(totalVariation(measures) / omega, span * measures.largest) + kicks);
     });
     return amplitude;
   }
@@ -169,9 +141,14 @@ export class LoadTails {
     const quiet = kicks === 0 && load.smooth;
     const oscillation = Math.min(2 * measures.largest, totalVariation(measures));
     const rough = damping.stiffnessCoefficient > 0;
+    // an average over a jump of p holds the jump of the quasi-static part too
+    const averagedJump =
+      gaugeTime > 0
+        ? (Math.min(historyAmount(measures).jumps, 2 * measures.largest) * source) / gaugeTime
+        : 0;
     return {
       displacement: rest * source + kicked,
-      velocity: quiet ? (energy + measures.largestRate / nextOmega) * f : Infinity,
+      velocity: quiet ? (energy + measures.largestRate / nextOmega) * f + averagedJump : Infinity,
       flux: quiet && !rough ? rest * f : Infinity,
       gaugeFlux:
         gaugeTime > 0

@@ -1,7 +1,7 @@
 import type { WaveMember } from '../members/wave-member.ts';
 import type { Mode } from '../modes/mode-series.ts';
 import type { MovingForceMotion } from '../motion/moving-force.ts';
-import type { LoadTailFactors } from './load-tails.ts';
+import type { LoadTailFactors } from './load-tail-factors.ts';
 import { controlStations } from './member-tail.ts';
 import { TailFlexibility } from './tail-flexibility.ts';
 

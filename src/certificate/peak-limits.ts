@@ -14,6 +14,8 @@ export interface PeakBasis {
   readonly series: KeptSeries;
   /** Largest G over the member, m/N. */
   readonly flexibility: number;
+  /** The same with what massless stretches add between held ends. */
+  readonly wholeFlexibility?: number;
   readonly loads?: readonly AppliedLoad[];
   readonly gaugeTime: number;
   readonly released: boolean;
@@ -59,7 +61,14 @@ export function peakLimit(quantity: Quantity, basis: PeakBasis): number | null {
         shape * modalAmplitude(quantity, omega, Math.sqrt(2 * start.energy), member, mode.frequency.order);
     }
   }
-  const still = stillPeak(member, loads, quantity, basis.flexibility, gaugeTime, span);
+  const still = stillPeak(
+    member,
+    loads,
+    quantity,
+    basis.wholeFlexibility ?? basis.flexibility,
+    gaugeTime,
+    span,
+  );
   const elastic = Math.min(ceiling, modal) + still;
   const pushed = rigidPush(basis);
   const path = rigid.position + rigid.velocity * span + 0.5 * pushed * span * span;

@@ -1,7 +1,7 @@
 import type { ModalDamping } from '../members/wave-member.ts';
 import { largestRatioAbove } from '../motion/modal-damping.ts';
 import type { Quantity } from '../spec/types.ts';
-import { NO_LOADS, type LoadTailFactors } from './load-tails.ts';
+import { NO_LOADS, type LoadTailFactors } from './load-tail-factors.ts';
 
 /** Which kind of statement a bound makes. */
 export type BoundKind = 'pointwise' | 'gauge-average' | 'rms';

@@ -12,9 +12,10 @@ const LOOKS = 16;
  *
  * In massless segments it is largest at an end; G⊥ is convex in every segment; elsewhere the crest
  * is bracketed on 16 places and refined by golden section to rounding of its value.
+ * @param withHeld the whole G, what massless stretches add between held ends included
  * Cost: O(segments).
  */
-export function largestFlexibility(member: WaveMember): number {
+export function largestFlexibility(member: WaveMember, withHeld = false): number {
   const drifts = canDriftFreely(member);
   const source = drifts ? new InertiaRelief(member) : new StaticResponse(member);
   const stretches = masslessStretches(member);
@@ -23,11 +24,12 @@ export function largestFlexibility(member: WaveMember): number {
     const l = member.length[i];
     const stretch = stretches.find((run) => i >= run.first && i <= run.last);
     const at = (distance: number): number => {
-      const held = stretch?.held.flexibility(i - stretch.first, distance) ?? 0;
+      const held = withHeld ? 0 : (stretch?.held.flexibility(i - stretch.first, distance) ?? 0);
       return source.flexibility(i, distance) - (Number.isFinite(held) ? held : 0);
     };
     largest = Math.max(largest, at(0), at(l));
-    if (drifts || stretch) continue;
+    // without its own flexibility a massless stretch is largest at an end; G⊥ is convex
+    if (drifts || (stretch && !withHeld)) continue;
     let best = 0;
     let bestValue = at(0);
     for (let look = 1; look <= LOOKS; look++) {

@@ -40,6 +40,8 @@ export interface AppliedLoad {
   readonly massNorm: number;
   /** Largest flux that a unit drive can cause statically, N: the sum of |f|. */
   readonly totalForce: number;
+  /** Whether parts of the load may cancel each other. */
+  readonly cancels: boolean;
   /** Place of a point force, or null. */
   readonly point: LoadShape['point'];
   /** Measures of the drive up to the span; null for a moving force. */
@@ -148,6 +150,7 @@ function shapedLoad(member: WaveMember, shape: LoadShape, history: TimeHistory, 
     smooth: shape.smooth,
     massNorm: shape.massNorm,
     totalForce: totalForce(shape),
+    cancels: shape.pieces.length > 0,
     point: shape.point,
     measures: drive ? measureRecord(drive) : measureParts(history.parts, [], span),
     moving: null,
@@ -213,6 +216,7 @@ function supportLoad(
     smooth: true,
     massNorm: shape.inertia,
     totalForce: totalForce(shape.load),
+    cancels: false,
     point: null,
     measures: motion.record ? measureRecord(motion.record) : measureParts(motion.drive, motion.kicks, span),
     moving: null,
@@ -234,6 +238,7 @@ function movingLoad(member: WaveMember, force: number, speed: number, start: num
     smooth: false,
     massNorm: 0,
     totalForce: Math.abs(force),
+    cancels: false,
     point: null,
     measures: null,
     moving,

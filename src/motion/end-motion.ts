@@ -1,4 +1,14 @@
-import { complex, divide, exponential, multiply, scale, type Complex } from '../numerics/complex.ts';
+import {
+  add,
+  complex,
+  divide,
+  exponential,
+  modulus,
+  multiply,
+  scale,
+  subtract,
+  type Complex,
+} from '../numerics/complex.ts';
 import type { Kick } from './forced-motion.ts';
 import type { HistoryPart, LinearPart, TimeHistory } from './history.ts';
 import type { RecordDrive } from './record-motion.ts';
@@ -134,15 +144,10 @@ function stateIn(part: MotionPart, s: number): SupportState {
   let velocity = part.velocity + s * (part.acceleration + 0.5 * s * part.jerk);
   let acceleration = part.acceleration + s * part.jerk;
   for (const { amplitude, rate } of part.forcings) {
-    const now = multiply(amplitude, exponential({ re: rate.re * s, im: rate.im * s }));
-    // integrals from the part's beginning
-    const first = divide(now, rate);
-    const firstThere = divide(amplitude, rate);
-    const second = divide(first, rate);
-    const secondThere = divide(firstThere, rate);
-    acceleration += now.re;
-    velocity += first.re - firstThere.re;
-    position += second.re - secondThere.re - firstThere.re * s;
+    const z = scale(rate, s);
+    acceleration += multiply(amplitude, exponential(z)).re;
+    velocity += s * multiply(amplitude, remainderQuotient(z, 1)).re;
+    position += s * s * multiply(amplitude, remainderQuotient(z, 2)).re;
   }
   return { position, velocity, acceleration };
 }
@@ -152,17 +157,22 @@ function integralIn(part: MotionPart, s: number): number {
   const quadratic = part.acceleration / 6 + (s * part.jerk) / 24;
   let total = s * (part.position + s * (0.5 * part.velocity + s * quadratic));
   for (const { amplitude, rate } of part.forcings) {
-    const now = multiply(amplitude, exponential({ re: rate.re * s, im: rate.im * s }));
-    const [first, second, third] = [1, 2, 3].map((power) => divideBy(amplitude, rate, power));
-    total += divideBy(now, rate, 3).re - third.re - second.re * s - 0.5 * first.re * s * s;
+    total += s * s * s * multiply(amplitude, remainderQuotient(scale(rate, s), 3)).re;
   }
   return total;
 }
 
-function divideBy(value: Complex, rate: Complex, power: number): Complex {
-  let result = value;
-  for (let m = 0; m < power; m++) result = divide(result, rate);
-  return result;
+/** (e^z − 1)/z, (e^z − 1 − z)/z², (e^z − 1 − z − z²/2)/z³: entire, by series for small z. */
+function remainderQuotient(z: Complex, order: 1 | 2 | 3): Complex {
+  const factorial = [1, 1, 2, 6][order];
+  if (modulus(z) < 1) {
+    let sum = complex(1);
+    for (let m = 18; m >= 1; m--) sum = add(complex(1), scale(multiply(z, sum), 1 / (order + m)));
+    return scale(sum, 1 / factorial);
+  }
+  let quotient = exponential(z);
+  for (let m = 0; m < order; m++) quotient = divide(subtract(quotient, complex(1 / [1, 1, 2][m])), z);
+  return quotient;
 }
 
 /** Parts of an acceleration history, integrated from rest; silence between and after them drifts on. */

@@ -8,10 +8,8 @@ import type { AppliedLoad } from './applied-loads.ts';
 import { FreeMotionTable } from './free-motion-table.ts';
 import { LoadClock } from './load-clock.ts';
 import type { ModalStart } from './modal-projection.ts';
+import type { FieldKind } from './field-kind.ts';
 import { addStillFields } from './still-fields.ts';
-
-/** Fields that are summed over modes; stress is force times a factor. */
-export type FieldKind = 'displacement' | 'relativeDisplacement' | 'velocity' | 'acceleration' | 'force';
 
 /** A mode with its initial state and its factor of each load. */
 export interface MovedMode {

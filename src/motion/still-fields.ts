@@ -4,7 +4,7 @@ import { StaticResponse } from '../modes/static-response.ts';
 import { placeStation, type Stations } from '../modes/stations.ts';
 import { canDriftFreely } from '../spectrum/spectrum-size.ts';
 import type { AppliedLoad } from './applied-loads.ts';
-import type { FieldKind } from './sampled-motion.ts';
+import type { FieldKind } from './field-kind.ts';
 import { supportState } from './support-shape.ts';
 
 /**

@@ -73,7 +73,7 @@ export function movedFromRest(omega: number, rate: number, forcing: WaveForcing,
   const gap = subtract(a, far);
   const triple =
     modulus(gap) * t < 1e-5
-      ? scale(exponential(scale(a, t)), 0.5 * t * t)
+      ? scale(exponential(scale(add(a, add(first, second)), t / 3)), 0.5 * t * t)
       : divide(subtract(differenceOf(a, near, t), roots), gap);
   const position = multiply(forcing.amplitude, triple);
   const velocity = multiply(forcing.amplitude, add(multiply(a, triple), roots));

@@ -1,4 +1,5 @@
-import { certify } from '../certificate/field-bounds.ts';
+import { certify, loadedPlace } from '../certificate/field-bounds.ts';
+import { loadRounding } from '../certificate/load-rounding.ts';
 import { checkIndependently } from '../certificate/independent-checks.ts';
 import { keepModes, type KeptSeries } from '../certificate/kept-modes.ts';
 import { peakLimit, type PeakBasis } from '../certificate/peak-limits.ts';
@@ -14,7 +15,8 @@ import { readLoads, type AppliedLoad } from '../motion/applied-loads.ts';
 import type { StartedSupport } from '../motion/initial-displacement.ts';
 import { readInitialState, type InitialState } from '../motion/initial-state.ts';
 import { stillPeak } from '../motion/still-peaks.ts';
-import { sampleMotion, type FieldKind } from '../motion/sampled-motion.ts';
+import type { FieldKind } from '../motion/field-kind.ts';
+import { sampleMotion } from '../motion/sampled-motion.ts';
 import type {
   Field,
   Fields,
@@ -50,9 +52,10 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
   const span = times.reduce((latest, t) => Math.max(latest, t), 0) + gaugeTime;
 
   const loads = readLoads(member, request.loads, span);
-  const state = readInitialState(member, request.initial, startedSupports(loads));
+  const state = readInitialState(member, request.initial, startedSupports(loads, span));
   const flexibility = largestFlexibility(member);
-  const still = stillPeak(member, loads, 'displacement', flexibility, 0, span);
+  const wholeFlexibility = loads.length > 0 ? largestFlexibility(member, true) : flexibility;
+  const still = stillPeak(member, loads, 'displacement', wholeFlexibility, 0, span);
   const series = keepModes(
     member,
     state,
@@ -82,6 +85,7 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
     member,
     series,
     flexibility,
+    wholeFlexibility,
     loads,
     gaugeTime,
     released: state.released,
@@ -91,7 +95,18 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
   const peaks: Peaks = {};
   quantities.forEach((quantity, index) => {
     const factor = quantity === 'stress' ? stress : null;
-    const certificate = certify(quantity, member, series, tails, gaugeTime, state.released, span, factor);
+    const certificate = certify(
+      quantity,
+      member,
+      series,
+      tails,
+      gaugeTime,
+      state.released,
+      span,
+      factor,
+      loads,
+      wholeFlexibility,
+    );
     const values = rowsOf(sums.get(kinds[index]) as Float64Array, stations.position.length, factor);
     fields[quantity] = {
       unit: unitOf(quantity, member.kind),
@@ -128,7 +143,15 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
         capturedFraction: total > 0 ? captured / total : 1,
       },
       ceiling: finite(displacementCeiling(series.tail, flexibility, still)),
-      displacementBound: finite(displacementBound(series.tail, flexibility, span)),
+      displacementBound: finite(
+        displacementBound(series.tail, flexibility, span) +
+          loadRounding(
+            'displacement',
+            loads,
+            series.modes[0],
+            loadedPlace(member, wholeFlexibility, span, gaugeTime),
+          ),
+      ),
       balance: checks && { maxRelativeDrift: checks.drift },
       orthogonality: checks && checks.orthogonality,
       residual: checks && checks.residual,
@@ -202,13 +225,16 @@ function noticesOf(
       detail: `Massless stretches cannot keep a shape of their own: for t > 0 they follow the places around them, and ${state.lostEnergy} J of the given shape's strain energy are left out.`,
     });
   }
-  if (series.modes[0].mode.frequency.omega === 0 && series.modes[0].start.velocity !== 0) {
+  const [first] = series.modes;
+  const driven = (first.factors ?? []).some((factor) => factor !== 0);
+  if (first.mode.frequency.omega === 0 && (first.start.velocity !== 0 || driven)) {
     notices.push({
       code: 'rigid-body-motion',
       detail:
         'Nothing holds the member, so it drifts as a whole; the ceiling and the tolerance refer to its elastic motion.',
     });
   }
+  notices.push(...driftNotices(request, loads));
   const contact = contactNotice(member, request.initial, series, loads, times);
   if (contact !== null) notices.push(contact);
   if ('modes' in request.series && series.modes.length < request.series.modes) {
@@ -226,9 +252,30 @@ function finite(value: number): number | null {
 }
 
 /** Supports that are displaced at t = 0. */
-function startedSupports(loads: readonly AppliedLoad[]): StartedSupport[] {
+function startedSupports(loads: readonly AppliedLoad[], span: number): StartedSupport[] {
   return loads.flatMap(({ support }) => {
-    const position = support?.motion.at(0).position ?? 0;
-    return support && position !== 0 ? [{ pieces: support.shape.pieces, position }] : [];
+    if (support === null) return [];
+    const { position } = support.motion.at(0);
+    // the zero of a sine is one only to rounding
+    const started = Math.abs(position) > 256 * Number.EPSILON * support.motion.peaks(span).position;
+    return started ? [{ pieces: support.shape.pieces, position }] : [];
+  });
+}
+
+/** What an acceleration record leaves behind: it is integrated as it is. */
+function driftNotices(request: ResponsesRequest, loads: readonly AppliedLoad[]): Notice[] {
+  return request.loads.flatMap((load, index) => {
+    if (load.type !== 'end-motion' || load.quantity !== 'acceleration' || load.history.type !== 'samples')
+      return [];
+    const { start, interval, values } = load.history;
+    const end = start + (values.length - 1) * interval;
+    const state = loads[index].support?.motion.at(end);
+    if (!state) return [];
+    return [
+      {
+        code: 'record-drift',
+        detail: `The acceleration record of load ${index} is used as it is, without a baseline correction; integrated twice it has drifted by ${end} s to a displacement of ${state.position} m and a velocity of ${state.velocity} m/s.`,
+      },
+    ];
   });
 }

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { TailState } from '../../src/certificate/kept-modes.ts';
-import { NO_LOADS } from '../../src/certificate/load-tails.ts';
+import { NO_LOADS } from '../../src/certificate/load-tail-factors.ts';
 import { Rounding } from '../../src/certificate/rounding.ts';
 import {
   displacementBound,
