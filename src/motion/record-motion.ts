@@ -90,7 +90,7 @@ export class RecordMotion {
     let j = 0;
     while (j < times.length && interval[j] < 0) j++;
     const count = value.length;
-    for (let i = 0; i < count; i++) {
+    for (let i = 0; i < count && j < times.length; i++) {
       const a = value[i];
       const b = slope[i];
       const c = curve ? curve[i] : 0;

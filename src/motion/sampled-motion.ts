@@ -22,6 +22,8 @@ export interface MovedMode {
 const BLOCK = 64;
 /** Stations and times handled at once, so that tables stay small however many there are. */
 const TILE = 2048;
+/** Times handled at once under loads: a long record is run through once a mode and tile. */
+const LOADED_TILE = 16_384;
 
 /**
  * Sums the modal series at stations and times: fields[t][x] = Σ φ_n(x) q_n(t), or p_n(x) times
@@ -48,8 +50,9 @@ export function sampleMotion(
 ): Map<FieldKind, Float64Array> {
   const columns = stations.segment.length;
   const fields = new Map(kinds.map((kind) => [kind, new Float64Array(times.length * columns)]));
-  for (let firstRow = 0; firstRow < times.length; firstRow += TILE) {
-    const someTimes = times.subarray(firstRow, firstRow + TILE);
+  const rows = loads.length > 0 ? LOADED_TILE : TILE;
+  for (let firstRow = 0; firstRow < times.length; firstRow += rows) {
+    const someTimes = times.subarray(firstRow, firstRow + rows);
     const clock = new ModalClock(member, loads, someTimes, gaugeTime);
     for (let firstColumn = 0; firstColumn < columns; firstColumn += TILE) {
       const tile = stationSlice(stations, firstColumn, firstColumn + TILE);
