@@ -52,7 +52,7 @@ describe('one modal coordinate under loads, against 60-digit values', () => {
         Math.abs(position - Number(q)) / (speed * soft + Math.abs(a)),
         Math.abs(velocity - Number(u)) / speed,
       ];
-      if (Math.max(...errors) > ACCURACY) missed.push(`${[omega, rate, t, a, v, value, slope, curve]}`);
+      if (Math.max(...errors) > ACCURACY) missed.push([omega, rate, t, a, v, value, slope, curve].join());
     }
     expect(missed).toEqual([]);
     expect(lines.length).toBeGreaterThan(400);
@@ -74,7 +74,7 @@ describe('one modal coordinate under loads, against 60-digit values', () => {
         Math.abs(position - Number(q)) / (pushed * soft),
         Math.abs(velocity - Number(u)) / pushed,
       ];
-      if (Math.max(...errors) > ACCURACY) missed.push(`${[omega, rate, t, value, slope, curve]}`);
+      if (Math.max(...errors) > ACCURACY) missed.push([omega, rate, t, value, slope, curve].join());
     }
     expect(missed).toEqual([]);
   });
@@ -100,7 +100,8 @@ describe('one modal coordinate under loads, against 60-digit values', () => {
         const grown = Math.max(1, Math.abs(Number(q)) / still, Math.abs(Number(u)) / speed);
         const share = (ACCURACY + 8 * Number.EPSILON * (omega + pace) * t) * grown;
         const errors = [Math.abs(position - Number(q)) / still, Math.abs(velocity - Number(u)) / speed];
-        if (Math.max(...errors) > share) missed.push(`${[omega, rate, t, decay, pace]}: ${errors}`);
+        if (Math.max(...errors) > share)
+          missed.push(`${[omega, rate, t, decay, pace].join()}: ${errors.join()}`);
       }
       expect(missed).toEqual([]);
       expect(waves.length).toBeGreaterThan(300);
