@@ -1,10 +1,12 @@
 import type { WaveMember } from '../members/wave-member.ts';
+import { participationFactor } from '../modes/participation.ts';
+import { shapeAt } from '../modes/shape-at.ts';
 import { dampingRate } from '../motion/modal-damping.ts';
-import type { Frequencies } from '../spec/types.ts';
+import type { Frequencies, TransferInput } from '../spec/types.ts';
 import { NaturalFrequencies } from '../spectrum/natural-frequencies.ts';
 
 /** Frequencies that a refined transfer function may have. */
-const FREQUENCY_LIMIT = 100_000;
+export const FREQUENCY_LIMIT = 100_000;
 
 /**
  * Offsets from a peak in half-widths ζω. Between neighbours a resonance 1/|x − i| is missed by less
@@ -24,43 +26,73 @@ export function askedFrequencies(frequencies: Frequencies): Float64Array {
   });
 }
 
+/** A refined grid of frequencies. */
+export interface RefinedFrequencies {
+  /** Hz, ascending. */
+  readonly frequencies: Float64Array;
+  /** Resonances around which frequencies were added. */
+  readonly refined: number;
+  /** Undamped resonances within the range, whose peaks are infinite: nothing was added there. */
+  readonly infinite: number;
+  /** Natural frequency, Hz, from which on nothing was added for want of room; null when all were seen. */
+  readonly stoppedAt: number | null;
+}
+
 /**
  * The asked frequencies with more around every natural frequency between the first and the last, so
  * that a linear reading misses no peak by more than 1 %. The half-width of a resonance is taken from
- * the damping; without damping nothing is added, a peak being infinite there.
- *
- * @returns ascending frequencies in Hz, and how many resonances were refined
+ * the damping; without damping nothing is added, a peak being infinite there. A half-space of impedance
+ * Z under the end adds the rate p_n(end)²/(Z ω_n²) = Γ_n² ω_n²/Z, the power it takes from the mode.
  */
 export function refineFrequencies(
   member: WaveMember,
+  input: TransferInput,
   asked: Float64Array,
   lossFactor: number,
-): { frequencies: Float64Array; refined: number } {
+): RefinedFrequencies {
   const lowest = asked[0];
   const highest = asked[asked.length - 1];
   const series = new NaturalFrequencies(member);
   const added: number[] = [];
   let refined = 0;
+  let infinite = 0;
+  let stoppedAt: number | null = null;
   for (let mode = series.next(); mode !== null; mode = series.next()) {
     const natural = mode.omega / (2 * Math.PI);
-    if (natural > highest * 1.2 || asked.length + added.length > FREQUENCY_LIMIT - 21) break;
+    if (natural > highest * 1.2) break;
     if (mode.omega === 0) continue;
-    const ratio = dampingRate(member.damping, mode.order, mode.omega) / (2 * mode.omega) + 0.5 * lossFactor;
-    if (ratio <= 0 || ratio > 0.5) continue;
-    // the crest of a damped resonance lies at ω√(1 − 2ζ²)
-    const crest = natural * Math.sqrt(1 - 2 * ratio * ratio);
-    let inside = false;
-    for (const offset of OFFSETS) {
-      for (const side of offset === 0 ? [0] : [-offset, offset]) {
-        const frequency = crest * (1 + side * ratio);
-        if (frequency > lowest && frequency < highest) {
-          added.push(frequency);
-          inside = true;
-        }
-      }
+    const rate =
+      dampingRate(member.damping, mode.order, mode.omega) + radiationRate(member, input, mode.omega);
+    const ratio = rate / (2 * mode.omega) + 0.5 * lossFactor;
+    if (ratio <= 0) {
+      if (natural >= lowest && natural <= highest) infinite++;
+      continue;
     }
-    if (inside) refined++;
+    if (ratio > 0.5) continue;
+    const inside = around(natural, ratio).filter((frequency) => frequency > lowest && frequency < highest);
+    if (inside.length === 0) continue;
+    if (asked.length + added.length + inside.length > FREQUENCY_LIMIT) {
+      stoppedAt = natural;
+      break;
+    }
+    added.push(...inside);
+    refined++;
   }
-  const all = Float64Array.from([...asked, ...added]).sort();
-  return { frequencies: all.filter((f, j) => j === 0 || f > all[j - 1]), refined };
+  const all = Float64Array.from([...asked, ...added]).toSorted();
+  return { frequencies: all.filter((f, j) => j === 0 || f > all[j - 1]), refined, infinite, stoppedAt };
+}
+
+/** Frequencies around the crest of a damped resonance, which lies at ω√(1 − 2ζ²). */
+function around(natural: number, ratio: number): number[] {
+  const crest = natural * Math.sqrt(1 - 2 * ratio * ratio);
+  return OFFSETS.flatMap((offset) => (offset === 0 ? [0] : [-offset, offset])).map(
+    (offset) => crest * (1 + offset * ratio),
+  );
+}
+
+/** Rate at which a half-space under the moving end damps a mode, 1/s. Cost O(segments). */
+function radiationRate(member: WaveMember, input: TransferInput, omega: number): number {
+  if (input.type !== 'outcrop-motion') return 0;
+  const factor = participationFactor(member, shapeAt(member, omega), input.end);
+  return (factor * factor * omega * omega) / input.impedance;
 }

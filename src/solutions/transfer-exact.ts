@@ -1,8 +1,6 @@
-import { fault } from '../faults/fault.ts';
 import type { WaveMember } from '../members/wave-member.ts';
 import { ModeSeries } from '../modes/mode-series.ts';
 import { evaluateShape } from '../modes/mode-shape.ts';
-import { participationFactor } from '../modes/participation.ts';
 import type { Stations } from '../modes/stations.ts';
 import { add, complex, scale, subtract, type Complex } from '../numerics/complex.ts';
 import type { TransferInput } from '../spec/types.ts';
@@ -10,21 +8,24 @@ import { canDriftFreely } from '../spectrum/spectrum-size.ts';
 import { LARGEST_CLOSED_RATIO, modalReceptance, RatioDamped, undamped } from '../steady/ratio-damped.ts';
 import { steadyFactors } from '../steady/steady-member.ts';
 import { SteadyResponse, type BoundedState, type SteadyState } from '../steady/steady-response.ts';
-import { detuningUnder, placeOf, resolventOf, stateUnder, type Place } from '../steady/transfer-state.ts';
+import { resolventOf, stateUnder, type Place } from '../steady/transfer-state.ts';
+import { inputFactor, isIdle } from './transfer-input.ts';
+import { passesOver } from './transfer-resonance.ts';
 
 /** States at (output, frequency) without a modal series. */
 export interface ExactSource {
   /** Whether a bound (of a quadrature) belongs to the states. */
   readonly bounded: boolean;
+  /** Modes solved for the states; null where none was. */
+  readonly modesUsed: number | null;
   at(output: number, frequency: number): BoundedState;
 }
-
-/** Units of rounding a segment within which a resonance counts as hit. */
-const HIT = 64 * Number.EPSILON;
 
 /**
  * The exact steady states for the member's damping, or null where only a modal series remains (ratios
  * above {@link LARGEST_CLOSED_RATIO}, ratios beside drag, a list of ratios that ends in 0).
+ *
+ * @param steps from `undrivenResonances`, rad/s
  */
 export function exactSource(
   member: WaveMember,
@@ -32,10 +33,12 @@ export function exactSource(
   stations: Stations,
   omegas: Float64Array,
   lossFactor: number,
+  steps: Float64Array,
 ): ExactSource | null {
   const { ratios, massCoefficient } = member.damping;
   const places = Array.from(stations.segment, (segment, q) => ({ segment, distance: stations.distance[q] }));
-  if (!ratios.some((ratio) => ratio > 0)) return closedSource(member, input, places, omegas, lossFactor);
+  if (!ratios.some((ratio) => ratio > 0))
+    return closedSource(member, input, places, omegas, lossFactor, steps);
   const last = ratios[ratios.length - 1];
   if (!(last > 0 && last <= LARGEST_CLOSED_RATIO) || massCoefficient > 0) return null;
   return ratioSource(member, input, places, omegas, last);
@@ -47,22 +50,35 @@ function closedSource(
   places: readonly Place[],
   omegas: Float64Array,
   lossFactor: number,
+  steps: Float64Array,
 ): ExactSource {
-  const responses = Array.from(omegas, (omega) => {
-    const response = new SteadyResponse(member, steadyFactors(member, omega, lossFactor));
-    if (detuningUnder(member, input, response) < HIT * (member.segmentCount + 2)) {
-      throw fault('resonance-hit', '/frequencies', { frequency: omega / (2 * Math.PI) });
-    }
-    return response;
-  });
+  const respond = (omega: number): SteadyResponse =>
+    new SteadyResponse(member, steadyFactors(member, omega, lossFactor));
+  const responses = Array.from(omegas, (omega, j) =>
+    steps[j] === 0 ? [respond(omega)] : AROUND.map((offset) => respond(omega + offset * steps[j])),
+  );
   return {
     bounded: false,
-    at: (output, frequency) => ({
-      ...stateUnder(member, input, responses[frequency], places[output], omegas[frequency]),
-      displacementError: 0,
-      fluxError: 0,
-    }),
+    modesUsed: null,
+    at: (output, frequency) => {
+      const states = responses[frequency].map((response) =>
+        stateUnder(member, input, response, places[output], omegas[frequency]),
+      );
+      const { displacement, flux } = states.length === 1 ? states[0] : between(states);
+      return { displacement, flux, displacementError: 0, fluxError: 0 };
+    },
   };
+}
+
+/** Steps at which a state is taken that has 0/0 at the frequency itself, and their weights. */
+const AROUND = [-2, -1, 1, 2];
+const WEIGHTS = [-1 / 6, 2 / 3, 2 / 3, -1 / 6];
+
+/** The cubic through four states, read in their middle. */
+function between(states: readonly SteadyState[]): SteadyState {
+  const sum = (part: (state: SteadyState) => Complex): Complex =>
+    states.reduce((total, state, j) => add(total, scale(part(state), WEIGHTS[j])), complex(0));
+  return { displacement: sum((state) => state.displacement), flux: sum((state) => state.flux) };
 }
 
 /** Ratios: all modes with the last ratio in closed form, the first ones put right one by one. */
@@ -85,17 +101,17 @@ function ratioSource(
   });
   return {
     bounded: true,
+    modesUsed: corrections.length > 0 ? corrections.length : null,
     at: (output, frequency) => {
       const omega = omegas[frequency];
       const place = places[output];
       if (omega === 0) {
-        if (detuningUnder(member, input, still) < HIT)
-          throw fault('resonance-hit', '/frequencies', { frequency: 0 });
         return { ...stateUnder(member, input, still, place, 0), displacementError: 0, fluxError: 0 };
       }
       const sum = damped.at(omega, sources[output].state, sources[output].nodes);
       let { displacement, flux } = sum;
       for (const mode of corrections) {
+        if (mode.idle && mode.ratio === 0 && passesOver(mode.omega, omega)) continue;
         const change = subtract(
           modalReceptance(mode.omega, mode.ratio, omega),
           modalReceptance(mode.omega, last, omega),
@@ -122,6 +138,8 @@ function ratioSource(
 interface FirstMode {
   readonly omega: number;
   readonly ratio: number;
+  /** Whether the input does not drive it. */
+  readonly idle: boolean;
   /** φ_n F_n and p_n F_n at the outputs. */
   readonly displacement: Float64Array;
   readonly flux: Float64Array;
@@ -150,20 +168,8 @@ function firstModes(
       displacement[q] = factor * pair[0];
       flux[q] = factor * pair[1];
     });
-    modes.push({ omega: mode.frequency.omega, ratio: ratios[n], displacement, flux });
+    const idle = isIdle(member, input, mode.shape, mode.frequency.order, factor);
+    modes.push({ omega: mode.frequency.omega, ratio: ratios[n], idle, displacement, flux });
   }
   return modes;
-}
-
-/** F_n of the input: φ_n at the force, Γ_n of the moving ends. */
-export function inputFactor(
-  member: WaveMember,
-  input: TransferInput,
-  shape: Parameters<typeof participationFactor>[1],
-): number {
-  if (input.type !== 'point-force') return participationFactor(member, shape, input.end);
-  const pair = new Float64Array(2);
-  const place = placeOf(member, input.at);
-  evaluateShape(member, shape, place.segment, place.distance, pair);
-  return pair[0];
 }

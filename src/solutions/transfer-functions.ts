@@ -15,9 +15,18 @@ import type {
 import type { BoundedState, SteadyState } from '../steady/steady-response.ts';
 import { scaledState } from '../steady/transfer-state.ts';
 import { unitOf } from './quantity-units.ts';
-import { askedFrequencies, refineFrequencies } from './refine-frequencies.ts';
+import {
+  askedFrequencies,
+  FREQUENCY_LIMIT,
+  refineFrequencies,
+  type RefinedFrequencies,
+} from './refine-frequencies.ts';
 import { exactSource } from './transfer-exact.ts';
+import { undrivenResonances } from './transfer-resonance.ts';
 import { seriesSource, type SeriesState } from './transfer-series.ts';
+
+/** Most values of one answer, outputs × frequencies. */
+const MOST_VALUES = 1_000_000;
 
 /** Modes taken where no closed form exists (ratios above 0.7, or beside drag). */
 const FALLBACK_MODES = 4096;
@@ -39,10 +48,14 @@ export function solveTransferFunctions(request: TransferFunctionsRequest): Trans
     throw fault('outcrop-with-ratios', '/member/damping', {});
   }
   const asked = askedFrequencies(request.frequencies);
-  const grid = request.refine
-    ? refineFrequencies(member, asked, lossFactor)
-    : { frequencies: asked, refined: 0 };
-  const omegas = grid.frequencies.map((frequency) => 2 * Math.PI * frequency);
+  const grid = request.refine ? refineFrequencies(member, request.input, asked, lossFactor) : null;
+  const frequencies = grid === null ? asked : grid.frequencies;
+  const count = request.outputs.length * frequencies.length;
+  if (grid !== null && count > MOST_VALUES) {
+    const what = `${request.outputs.length} outputs × ${frequencies.length} frequencies once refined`;
+    throw fault('too-many-values', '/refine', { count, what, limit: MOST_VALUES });
+  }
+  const omegas = frequencies.map((frequency) => 2 * Math.PI * frequency);
   const stations = placeStations(
     member,
     request.outputs.map((output) => output.at),
@@ -53,7 +66,8 @@ export function solveTransferFunctions(request: TransferFunctionsRequest): Trans
       : 1,
   );
 
-  const exact = exactSource(member, request.input, stations, omegas, lossFactor);
+  const steps = undrivenResonances(member, request.input, frequencies, lossFactor);
+  const exact = exactSource(member, request.input, stations, omegas, lossFactor, steps);
   const wanted = request.series?.modes ?? (exact === null ? FALLBACK_MODES : 0);
   const series = wanted > 0 ? seriesSource(member, request.input, stations, wanted, lossFactor) : null;
 
@@ -98,20 +112,30 @@ export function solveTransferFunctions(request: TransferFunctionsRequest): Trans
     return result;
   });
 
-  const largest = outputs.reduce(
-    (worst, output) => Array.from(output.bound ?? []).reduce((most, bound) => Math.max(most, bound), worst),
-    0,
-  );
   return {
-    frequencies: grid.frequencies,
+    frequencies,
     outputs,
     convergence: {
       closedForm: exact !== null && !exact.bounded,
-      modesUsed: series === null ? null : series.modesUsed,
-      largestBound: largest,
+      modesUsed: exact === null ? (series?.modesUsed ?? null) : exact.modesUsed,
+      largestBound: outputs.reduce((worst, output) => Math.max(worst, relativeBound(output)), 0),
     },
-    notices: noticesOf(request, member, grid.refined),
+    notices: grid === null ? [] : refinementNotices(grid),
   };
+}
+
+/** Largest bound over the largest magnitude; 1 where the output is 0 and its bound is not. */
+function relativeBound(output: TransferFunction): number {
+  const bound = largestOf(output.bound ?? []);
+  const magnitude = largestOf(output.magnitude);
+  if (bound === 0) return 0;
+  return magnitude === 0 ? 1 : bound / magnitude;
+}
+
+function largestOf(values: ArrayLike<number>): number {
+  let largest = 0;
+  for (let j = 0; j < values.length; j++) largest = Math.max(largest, values[j]);
+  return largest;
 }
 
 /** An acceleration input of 1 is a displacement input of −1/Ω². */
@@ -198,23 +222,25 @@ function seriesOf(
   return { modes, truncated: parts(truncated), corrected: parts(corrected), bound: Float64Array.from(bound) };
 }
 
-function noticesOf(request: TransferFunctionsRequest, member: WaveMember, refined: number): Notice[] {
-  const notices: Notice[] = [];
-  const undampedMember =
-    request.member.damping === undefined &&
-    member.damping.massCoefficient === 0 &&
-    request.input.type !== 'outcrop-motion';
-  if (request.refine && undampedMember) {
-    notices.push({
-      code: 'undamped-not-refined',
-      detail:
-        'The member has no damping, so its peaks are infinite and cannot be resolved; no frequency was added.',
-    });
-  } else if (request.refine) {
-    notices.push({
-      code: 'refined',
-      detail: `Frequencies were added around ${refined} resonances, so that no peak is missed by more than 1 %.`,
-    });
+/** What became of the refinement asked for; all peaks are claimed only where all were refined. */
+function refinementNotices({ refined, infinite, stoppedAt }: RefinedFrequencies): Notice[] {
+  if (stoppedAt !== null) {
+    const detail =
+      `Frequencies were added around ${refined} resonances up to ${stoppedAt} Hz, where the limit of ` +
+      `${FREQUENCY_LIMIT} frequencies was reached; peaks above it may be missed. Ask for a narrower range.`;
+    return [{ code: 'refined-in-part', detail }];
   }
-  return notices;
+  if (infinite > 0 && refined === 0) {
+    const detail =
+      'The member has no damping, so its peaks are infinite and cannot be resolved; no frequency was added.';
+    return [{ code: 'undamped-not-refined', detail }];
+  }
+  if (infinite > 0) {
+    const detail =
+      `Frequencies were added around ${refined} resonances; ${infinite} undamped ones have infinite peaks ` +
+      'and cannot be resolved.';
+    return [{ code: 'refined-in-part', detail }];
+  }
+  const detail = `Frequencies were added around ${refined} resonances, so that no peak is missed by more than 1 %.`;
+  return [{ code: 'refined', detail }];
 }

@@ -110,33 +110,6 @@ export class SteadyResponse {
     return divide(base.g, base.u);
   }
 
-  /**
-   * How far the member is from resonance under a force at a place: |W| over its terms, about
-   * 2|Ω − ω_n|/ω_n near ω_n; of the order of rounding when a resonance is hit.
-   */
-  detuning(j: number, other: number): number {
-    const { left, right } = this.meet(j, other);
-    const a = multiply(right.u, left.g);
-    const b = multiply(left.u, right.g);
-    const size = modulus(a) + modulus(b);
-    return size === 0 ? 0 : modulus(add(a, b)) / size;
-  }
-
-  /** The same under motion of a fixed end: |u| at the end over what the marched wave could reach there. */
-  endDetuning(end: 'near' | 'far'): number {
-    const last = this.member.segmentCount - 1;
-    const i = end === 'near' ? 0 : last;
-    const base = this.cross(i, this.member.length[i], end === 'near' ? this.far[0] : this.near[last]);
-    const square = waveNumberSquareOf(this.member, i, this.factors);
-    const stiffness = complexStiffness(this.member, i, this.factors);
-    const impedance = Math.max(
-      modulus(squareRoot(multiply(square, stiffness))),
-      modulus(stiffness) / this.member.length[i],
-    );
-    const size = impedance * modulus(base.u) + modulus(base.g);
-    return size === 0 ? 0 : (impedance * modulus(base.u)) / size;
-  }
-
   private begin(fixed: boolean, node: number): Flow {
     if (fixed) return { u: ZERO, g: ONE, log: 0 };
     return { u: ONE, g: lumpStiffness(this.member, node, this.factors), log: 0 };

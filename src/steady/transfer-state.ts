@@ -57,23 +57,6 @@ export function stateUnder(
   }
 }
 
-/** How far from resonance the input drives the member; of the order of rounding at a resonance. */
-export function detuningUnder(member: WaveMember, input: TransferInput, response: SteadyResponse): number {
-  switch (input.type) {
-    case 'point-force': {
-      const load = placeOf(member, input.at);
-      return response.detuning(load.segment, load.distance);
-    }
-    case 'end-motion':
-      return input.end === 'both'
-        ? Math.min(response.endDetuning('near'), response.endDetuning('far'))
-        : response.endDetuning(input.end);
-    case 'outcrop-motion':
-      // the half-space takes energy away: nothing grows without limit
-      return 1;
-  }
-}
-
 /**
  * The part of the response that is a sum over modes, as a resolvent at complex λ: for a force the
  * whole response Σ φF/(ω_n² − λ), for end motion (U_λ − r)/λ = Σ φΓ/(ω_n² − λ), r the static shape.
