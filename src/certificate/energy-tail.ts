@@ -1,5 +1,8 @@
 const EPS = Number.EPSILON;
 
+/** A balance that is off by so many floors is a fault; below it is rounding, and widens the bound. */
+const MARGIN = 16;
+
 /**
  * Energy of the initial state at three levels of smoothness and what the kept modes leave of it:
  *
@@ -79,9 +82,9 @@ export class EnergyTail {
     return this.rest[0] < this.floor[0];
   }
 
-  /** Energy captured beyond the total and its floor, J; above 0 only if something is wrong. */
+  /** Energy captured far beyond the total and its floor, J; above 0 only if something is wrong. */
   get excess(): number {
-    return -this.rest[0] - this.floor[0];
+    return -this.rest[0] - MARGIN * this.floor[0];
   }
 
   /**
@@ -90,10 +93,10 @@ export class EnergyTail {
    */
   missing(nextLambda: number): number {
     const limit = nextLambda === Number.POSITIVE_INFINITY ? 0 : this.first(nextLambda) / nextLambda;
-    return this.rest[0] - this.floor[0] - limit;
+    return this.rest[0] - MARGIN * this.floor[0] - limit;
   }
 
   private plain(level: 0 | 1 | 2): number {
-    return Math.max(0, this.rest[level]) + this.floor[level];
+    return Math.abs(this.rest[level]) + this.floor[level];
   }
 }

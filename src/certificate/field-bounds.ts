@@ -70,7 +70,7 @@ export function certify(
     const left = weigh(factors.onFlexibility, g) + weigh(factors.onFluxInertia, h);
     const rounding =
       quantity === 'force' || quantity === 'stress'
-        ? noise * Math.sqrt(tails.wholeFlux[q])
+        ? noise * Math.sqrt(tails.reachFlux[q])
         : noise * Math.sqrt(tails.whole[q]);
     bound[q] = (left + rounding + outside) * (factor?.[q] ?? 1) * (1 + 8 * EPS);
   }

@@ -41,7 +41,7 @@ export class Rounding {
   add(mode: Mode, start: ModalStart, forced = 0): void {
     const { omega, lower, upper } = mode.frequency;
     const half = 0.5 * (upper - lower);
-    const shapeError = omega * this.travelTime * (half / (omega || 1) + EPS) + 8 * EPS * (this.segments + 8);
+    const shapeError = shapeRounding(mode, this.travelTime, this.segments) + 64 * EPS;
     const coefficient = shapeError * (start.positionScale + start.velocityScale);
     const phase = Math.min(2, this.span * (half + 4 * EPS * omega) + 16 * EPS);
     const amplitude = Math.sqrt(2 * start.energy);
@@ -61,4 +61,15 @@ export class Rounding {
   level(level: 0 | 1 | 2 | 3): number {
     return Math.sqrt(this.squares[level]) + (64 + this.count / 64) * EPS * Math.sqrt(this.magnitudes[level]);
   }
+}
+
+/**
+ * Relative error of the values of a shape, against its amplitude about the place: the error of ω
+ * turns the phase by ω T of it and the ratio of neighbouring node values by a few of it, and each
+ * segment marched rounds once.
+ */
+export function shapeRounding(mode: Mode, travelTime: number, segments: number): number {
+  const { omega, lower, upper } = mode.frequency;
+  const relative = (0.5 * (upper - lower)) / (omega || 1) + EPS;
+  return (omega * travelTime + 4) * relative + 4 * EPS * segments;
 }

@@ -6,9 +6,13 @@ import type { Mode } from '../modes/mode-series.ts';
 import { StaticResponse } from '../modes/static-response.ts';
 import { ShapeSampler } from '../modes/shape-sampler.ts';
 import type { Stations } from '../modes/stations.ts';
+import { shapeRounding } from './rounding.ts';
 import { canDriftFreely, totalMass, travelTime } from '../spectrum/spectrum-size.ts';
 
 const EPS = Number.EPSILON;
+
+/** An overdraft of so many floors is a wrong shape; below it is rounding, and widens the bound. */
+const MARGIN = 16;
 
 /**
  * What the modes kept so far leave of the static flexibility at a set of stations:
@@ -28,6 +32,8 @@ export class TailFlexibility {
   readonly whole: Float64Array;
   /** H of all modes (unrestrained: H⊥), kg, shape [stations]. */
   readonly wholeFlux: Float64Array;
+  /** Largest H of a station and the two nodes of its segment, kg: the flux that its rounding is of. */
+  readonly reachFlux: Float64Array;
   readonly stations: Stations;
 
   private readonly member: WaveMember;
@@ -65,6 +71,9 @@ export class TailFlexibility {
     const all = at((i, d) => source.flexibility(i, d));
     this.whole = all.map((g, q) => Math.max(0, g - held[q]));
     this.wholeFlux = at((i, d) => source.fluxInertia(i, d));
+    this.reachFlux = at((i, d) =>
+      Math.max(source.fluxInertia(i, 0), source.fluxInertia(i, d), source.fluxInertia(i, member.length[i])),
+    );
     this.rest = Float64Array.from(this.whole);
     this.restFlux = Float64Array.from(this.wholeFlux);
     this.floor = all.map((g) => 64 * EPS * g);
@@ -97,13 +106,9 @@ export class TailFlexibility {
   /** The same at the stations from `first` on, with φ and p there already known. */
   addSampled(mode: Mode, displacement: Float64Array, flux: Float64Array, first = 0): void {
     const { member, stations } = this;
-    const { omega, lower, upper } = mode.frequency;
     const { lambda } = mode.shape;
     if (lambda === 0) return;
-    // relative error of the shape: phase error over the member plus rounding of the march
-    const error =
-      omega * this.travelTime * ((0.5 * (upper - lower)) / (omega || 1) + EPS) +
-      4 * EPS * member.segmentCount;
+    const error = shapeRounding(mode, this.travelTime, member.segmentCount);
     const soft = 1 / lambda;
     const twice = 2 * error * soft;
     const reduced = lambda / (lambda + this.shift);
@@ -115,8 +120,9 @@ export class TailFlexibility {
       if (stations.segment[q] !== segment) {
         segment = stations.segment[q];
         const square = waveNumberSquare(member, segment, lambda);
-        impedance = square > 0 ? member.stiffness[segment] * Math.sqrt(square) : 0;
-        admittance = impedance > 0 ? 1 / impedance : 0;
+        // k|κ| where the shape waves and where it decays; a straight line reaches L/k
+        impedance = member.stiffness[segment] * Math.sqrt(Math.abs(square));
+        admittance = 1 / Math.max(impedance, member.stiffness[segment] / member.length[segment]);
       }
       const u = Math.abs(displacement[m]);
       const p = Math.abs(flux[m]);
@@ -139,25 +145,25 @@ export class TailFlexibility {
    * included. With σ the factor 1 + σ/ω_{N+1}² of the energy belongs to it.
    */
   flexibilityTail(q: number, nextLambda: number): number {
-    const plain = Math.max(0, this.rest[q]) + this.floor[q];
+    const plain = Math.abs(this.rest[q]) + this.floor[q];
     if (!this.shifted || !this.shiftedFloor) return plain;
     return Math.min(
       plain,
-      (1 + this.shift / nextLambda) * (Math.max(0, this.shifted[q]) + this.shiftedFloor[q]),
+      (1 + this.shift / nextLambda) * (Math.abs(this.shifted[q]) + this.shiftedFloor[q]),
     );
   }
 
-  /** Whether the modes took more of a flexibility than there is, beyond its floor: a shape must be wrong. */
+  /** Whether the modes took more of a flexibility than there is, far beyond its floor: a shape must be wrong. */
   overdrawn(): boolean {
     return (
-      this.rest.some((rest, q) => rest < -this.floor[q]) ||
-      this.restFlux.some((rest, q) => rest < -this.floorFlux[q])
+      this.rest.some((rest, q) => rest < -MARGIN * this.floor[q]) ||
+      this.restFlux.some((rest, q) => rest < -MARGIN * this.floorFlux[q])
     );
   }
 
   /** Bound on ΔH at station q, kg, floor included. */
   fluxTail(q: number): number {
-    return Math.max(0, this.restFlux[q]) + this.floorFlux[q];
+    return Math.abs(this.restFlux[q]) + this.floorFlux[q];
   }
 }
 

@@ -37,6 +37,25 @@ export function strainForm(
   return form;
 }
 
+/** Bound on the rounding of {@link strainForm}: products of pulls to 64·2⁻⁵², pieces to their terms. */
+export function strainFormRounding(
+  member: WaveMember,
+  field: InitialDisplacement,
+  response: StaticResponse | null,
+): number {
+  const rounding = strainRounding(member, field.pieces);
+  if (response === null || field.pulls.length === 0) return rounding;
+  let scale = 0;
+  for (const pull of field.pulls) {
+    const force = Math.abs(pull.force);
+    scale += 2 * force * scaleAt(field.pieces, pull.segment, pull.distance);
+    const sag = response.flexibility(pull.segment, pull.distance);
+    // |G(z, y)| ≤ √G(z, z) √G(y, y): the sum of all products is at most the square of a sum
+    scale += field.pulls.length * force * force * sag;
+  }
+  return rounding + 64 * Number.EPSILON * scale;
+}
+
 /** a(r, r) of pieces alone. */
 export function piecesStrainForm(member: WaveMember, pieces: PiecewiseField): number {
   let form = 0;
@@ -110,10 +129,19 @@ function errorOfSquare({ value, scale }: Sampled): number {
 
 /** Value of a field at a distance in a segment. */
 export function valueAt(pieces: PiecewiseField, segment: number, distance: number): number {
+  return sampleAt(pieces, segment, distance)?.value ?? 0;
+}
+
+/** Sum of the absolute terms of a field at a distance in a segment. */
+function scaleAt(pieces: PiecewiseField, segment: number, distance: number): number {
+  return sampleAt(pieces, segment, distance)?.scale ?? 0;
+}
+
+function sampleAt(pieces: PiecewiseField, segment: number, distance: number): Sampled | undefined {
   for (const piece of pieces) {
     if (piece.segment === segment && distance <= piece.start + piece.length * (1 + 1e-14)) {
-      return pieceValue(piece, Math.max(0, Math.min(piece.length, distance - piece.start))).value;
+      return pieceValue(piece, Math.max(0, Math.min(piece.length, distance - piece.start)));
     }
   }
-  return 0;
+  return undefined;
 }

@@ -155,10 +155,10 @@ export function settle(
     if (near !== 0) pulls.push({ segment: stretch.first, distance: 0, force: near });
     if (far !== 0) pulls.push({ segment: stretch.last, distance: member.length[stretch.last], force: far });
   }
-  return {
-    pieces: settlePieces(member, given.pieces, nodeValuesOf(given.pieces, member.segmentCount), stretches),
-    pulls,
-  };
+  const value = nodeValuesOf(given.pieces, member.segmentCount);
+  if (member.nearFixed) value[0] = 0;
+  if (member.farFixed) value[member.segmentCount] = 0;
+  return { pieces: settlePieces(member, given.pieces, value, stretches), pulls };
 }
 
 /** Pieces with the massless stretches replaced by the static interpolation of the given node values. */
@@ -174,11 +174,25 @@ export function settlePieces(
     const near = value[stretch.first];
     const far = value[stretch.last + 1];
     const nodes = stretch.nearShape.map((shape, j) => near * shape + far * stretch.farShape[j]);
-    for (let i = stretch.first; i <= stretch.last; i++)
-      pieces.push(interpolate(member, stretch, nodes, i).piece);
+    // the node values are known to the rounding of the terms they were summed from
+    const magnitude = reachAround(given, stretch);
+    for (let i = stretch.first; i <= stretch.last; i++) {
+      const { piece } = interpolate(member, stretch, nodes, i);
+      pieces.push({ ...piece, magnitude: piece.magnitude + magnitude });
+    }
   }
   pieces.sort((a, b) => a.segment - b.segment || a.start - b.start);
   return pieces;
+}
+
+/** Largest sum of absolute terms of the pieces on and beside a stretch. */
+function reachAround(given: PiecewiseField, stretch: MasslessStretch): number {
+  let reach = 0;
+  for (const piece of given) {
+    if (piece.segment < stretch.first - 1 || piece.segment > stretch.last + 1) continue;
+    reach = Math.max(reach, pieceValue(piece, 0).scale, pieceValue(piece, piece.length).scale);
+  }
+  return reach;
 }
 
 /** The static curve between two node values on one massless segment. */

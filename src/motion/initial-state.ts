@@ -3,7 +3,14 @@ import { masslessStretches } from '../modes/massless-stretches.ts';
 import { StaticResponse } from '../modes/static-response.ts';
 import type { InitialMotion } from '../spec/types.ts';
 import { canDriftFreely, totalMass } from '../spectrum/spectrum-size.ts';
-import { massForm, massRounding, piecesStrainForm, strainForm, strainRounding } from './field-energy.ts';
+import {
+  massForm,
+  massRounding,
+  piecesStrainForm,
+  strainForm,
+  strainFormRounding,
+  strainRounding,
+} from './field-energy.ts';
 import {
   readDisplacement,
   settle,
@@ -54,7 +61,7 @@ export function readInitialState(
   const kinetic = 0.5 * massForm(member, own.pieces, own.masses);
   const rigidEnergy = 0.5 * totalMass(member) * mean * mean;
   const roundings: [number, number, number] = [
-    strainRounding(member, displacement.pieces) + massRounding(member, own.pieces),
+    strainFormRounding(member, displacement, response) + massRounding(member, own.pieces),
     0,
     0,
   ];

@@ -1705,7 +1705,7 @@ export interface TransferConvergence {
    */
   closedForm: boolean;
   /**
-   * Number of modes summed; null in closed form.
+   * Number of modes summed; null where no mode was solved for the answer.
    */
   modesUsed: number | null;
   /**
