@@ -1,7 +1,6 @@
-const EPS = Number.EPSILON;
+import { FAULT_MARGIN } from './rounding.ts';
 
-/** A balance that is off by so many floors is a fault; below it is rounding, and widens the bound. */
-const MARGIN = 16;
+const EPS = Number.EPSILON;
 
 /**
  * Energy of the initial state at three levels of smoothness and what the kept modes leave of it:
@@ -84,7 +83,7 @@ export class EnergyTail {
 
   /** Energy captured far beyond the total and its floor, J; above 0 only if something is wrong. */
   get excess(): number {
-    return -this.rest[0] - MARGIN * this.floor[0];
+    return -this.rest[0] - FAULT_MARGIN * this.floor[0];
   }
 
   /**
@@ -93,7 +92,7 @@ export class EnergyTail {
    */
   missing(nextLambda: number): number {
     const limit = nextLambda === Number.POSITIVE_INFINITY ? 0 : this.first(nextLambda) / nextLambda;
-    return this.rest[0] - MARGIN * this.floor[0] - limit;
+    return this.rest[0] - FAULT_MARGIN * this.floor[0] - limit;
   }
 
   private plain(level: 0 | 1 | 2): number {

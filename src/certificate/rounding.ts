@@ -3,6 +3,9 @@ import type { ModalStart } from '../motion/modal-projection.ts';
 
 const EPS = Number.EPSILON;
 
+/** A balance off by so many rounding floors is a fault; below it is rounding, and widens the bound. */
+export const FAULT_MARGIN = 16;
+
 /**
  * Rounding of the computed fields, mode by mode: ω_n is known to δω_n, so its phase is off by up to
  * t δω_n after the time t; shape and coefficients are off by the phase error over the member and by

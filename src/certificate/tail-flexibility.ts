@@ -6,13 +6,10 @@ import type { Mode } from '../modes/mode-series.ts';
 import { StaticResponse } from '../modes/static-response.ts';
 import { ShapeSampler } from '../modes/shape-sampler.ts';
 import type { Stations } from '../modes/stations.ts';
-import { shapeRounding } from './rounding.ts';
+import { FAULT_MARGIN, shapeRounding } from './rounding.ts';
 import { canDriftFreely, totalMass, travelTime } from '../spectrum/spectrum-size.ts';
 
 const EPS = Number.EPSILON;
-
-/** An overdraft of so many floors is a wrong shape; below it is rounding, and widens the bound. */
-const MARGIN = 16;
 
 /**
  * What the modes kept so far leave of the static flexibility at a set of stations:
@@ -156,8 +153,8 @@ export class TailFlexibility {
   /** Whether the modes took more of a flexibility than there is, far beyond its floor: a shape must be wrong. */
   overdrawn(): boolean {
     return (
-      this.rest.some((rest, q) => rest < -MARGIN * this.floor[q]) ||
-      this.restFlux.some((rest, q) => rest < -MARGIN * this.floorFlux[q])
+      this.rest.some((rest, q) => rest < -FAULT_MARGIN * this.floor[q]) ||
+      this.restFlux.some((rest, q) => rest < -FAULT_MARGIN * this.floorFlux[q])
     );
   }
 
