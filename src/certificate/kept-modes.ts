@@ -117,11 +117,13 @@ export function keepModes(
   /** The elastic motion before any elastic mode is taken out, ω its lowest frequency. */
   const wholeMotion = (omega: number, kept: number): TailState['whole'] => {
     const [total, first, second] = state.energies;
+    const atMost = (value: number | null, rounding: number): number =>
+      value === null ? Number.POSITIVE_INFINITY : value + rounding + 64 * Number.EPSILON * value;
     return {
       energies: {
-        energy: total + state.roundings[0] + 64 * Number.EPSILON * total,
-        first: first === null ? Number.POSITIVE_INFINITY : first + state.roundings[1],
-        second: second === null ? Number.POSITIVE_INFINITY : second + state.roundings[2],
+        energy: atMost(total, state.roundings[0]),
+        first: atMost(first, state.roundings[1]),
+        second: atMost(second, state.roundings[2]),
         nextOmega: omega,
       },
       member: memberTail(member, flexibility, omega * omega),

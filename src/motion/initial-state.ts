@@ -19,7 +19,7 @@ import {
 } from './initial-displacement.ts';
 import { readVelocity, type InitialVelocity } from './initial-velocity.ts';
 import { listOf } from './shape-pieces.ts';
-import { acceleration, inEnergySpace } from './smoothness.ts';
+import { acceleration, inEnergySpace, type AccelerationField } from './smoothness.ts';
 import { pieceIntegral } from './wave-integrals.ts';
 
 /** The initial state of a member with the energies that its data allow. */
@@ -74,12 +74,20 @@ export function readInitialState(
   let second: number | null = null;
   if (speed !== null && start !== null) {
     first = 0.5 * piecesStrainForm(member, speed) + 0.5 * massForm(member, start.pieces, start.masses);
-    roundings[1] = strainRounding(member, speed) + massRounding(member, start.pieces);
+    roundings[1] =
+      strainRounding(member, speed) + massRounding(member, start.pieces) + nodeRounding(member, start);
     const startSettled = inEnergySpace(member, start, stretches);
     const jerk = acceleration(member, speed, []);
     if (startSettled !== null && jerk !== null) {
       second =
         0.5 * piecesStrainForm(member, startSettled) + 0.5 * massForm(member, jerk.pieces, jerk.masses);
+      const strained = nodeStrain(member, start.errors);
+      roundings[2] =
+        strainRounding(member, startSettled) +
+        massRounding(member, jerk.pieces) +
+        nodeRounding(member, jerk) +
+        2 * Math.sqrt(second * strained) +
+        strained;
     }
   }
   const still = velocity.masses.every((value) => value === 0) && kinetic === 0 && mean === 0;
@@ -92,6 +100,26 @@ export function readInitialState(
     lostEnergy: Math.max(0, lost),
     released: still && listOf(initial.impulses).length === 0,
   };
+}
+
+/** Rounding of the kinetic energy of the node values of an acceleration. */
+function nodeRounding(member: WaveMember, { masses, errors }: AccelerationField): number {
+  let rounding = 0;
+  for (let j = 0; j <= member.segmentCount; j++) {
+    rounding += member.mass[j] * errors[j] * (Math.abs(masses[j]) + errors[j]);
+  }
+  return rounding;
+}
+
+/** Strain energy at most of node values off by their errors. */
+function nodeStrain(member: WaveMember, errors: Float64Array): number {
+  let energy = 0;
+  for (let i = 0; i < member.segmentCount; i++) {
+    const hold = member.stiffness[i] / member.length[i] + member.foundation[i] * member.length[i];
+    energy += 0.5 * hold * (errors[i] + errors[i + 1]) ** 2;
+  }
+  for (let j = 0; j <= member.segmentCount; j++) energy += 0.5 * member.spring[j] * errors[j] ** 2;
+  return energy;
 }
 
 /** m(1, g)/m, the velocity of the whole. */

@@ -10,8 +10,15 @@ export interface MassField {
   readonly masses: Float64Array;
 }
 
+/** An acceleration with the rounding of its node values, shape [segments + 1]. */
+export interface AccelerationField extends MassField {
+  readonly errors: Float64Array;
+}
+
 /** Units of rounding, times the terms summed, within which two values count as equal. */
 const EQUAL = 1024 * Number.EPSILON;
+/** Rounding of a flux against the terms it is summed from. */
+const ROUNDING = 8 * Number.EPSILON;
 
 /**
  * The field as a member can keep it if it has finite strain energy: continuous, 0 at fixed ends, all
@@ -68,10 +75,12 @@ export function acceleration(
   member: WaveMember,
   pieces: PiecewiseField,
   pulls: readonly HeldForce[],
-): MassField | null {
+): AccelerationField | null {
   const n = member.segmentCount;
   const flux = new Float64Array(n + 1);
   const scale = new Float64Array(n + 1);
+  // a massless stretch has its flux from the difference of its node values, which may be small beside them
+  const differenced = new Float64Array(n + 1);
   const value = new Float64Array(n + 1);
   let previous: Piece | null = null;
   for (const piece of pieces) {
@@ -82,6 +91,12 @@ export function acceleration(
       flux[piece.segment] += k * near.value;
       scale[piece.segment] += k * near.scale;
       value[piece.segment] = pieceValue(piece, 0).value;
+      if (member.inertia[piece.segment] === 0) {
+        const held =
+          (k * (pieceValue(piece, 0).scale + pieceValue(piece, piece.length).scale)) / piece.length;
+        differenced[piece.segment] += held;
+        differenced[piece.segment + 1] += held;
+      }
     } else if (previous !== null) {
       const before = pieceSlope(previous, previous.length);
       if (Math.abs(before.value - near.value) > EQUAL * (before.scale + near.scale)) return null;
@@ -101,13 +116,17 @@ export function acceleration(
     scale[node] += Math.abs(pull.force);
   }
   const masses = new Float64Array(n + 1);
+  const errors = new Float64Array(n + 1);
   for (let j = 0; j <= n; j++) {
     if ((j === 0 && member.nearFixed) || (j === n && member.farFixed)) continue;
     const rest = flux[j] - member.spring[j] * value[j];
-    if (member.mass[j] > 0) masses[j] = rest / member.mass[j];
-    else if (Math.abs(rest) > EQUAL * (scale[j] + Math.abs(member.spring[j] * value[j]))) return null;
+    if (member.mass[j] > 0) {
+      masses[j] = rest / member.mass[j];
+      const terms = scale[j] + differenced[j] + Math.abs(member.spring[j] * value[j]);
+      errors[j] = (ROUNDING * terms) / member.mass[j];
+    } else if (Math.abs(rest) > EQUAL * (scale[j] + Math.abs(member.spring[j] * value[j]))) return null;
   }
-  return { pieces: pieces.map((piece) => accelerated(member, piece)), masses };
+  return { pieces: pieces.map((piece) => accelerated(member, piece)), masses, errors };
 }
 
 function accelerated(member: WaveMember, piece: Piece): Piece {
