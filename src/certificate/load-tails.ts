@@ -4,7 +4,7 @@ import { peakDisplacement } from '../modes/shape-figures.ts';
 import type { Stations } from '../modes/stations.ts';
 import type { AppliedLoad } from '../motion/applied-loads.ts';
 import { historyAmount, type HistoryMeasures } from '../motion/history-measures.ts';
-import { largestRatioAbove, smallestRatioAbove } from '../motion/modal-damping.ts';
+import { dampingRate, largestRatioAbove, smallestRatioAbove } from '../motion/modal-damping.ts';
 import { NO_LOADS, type LoadTailFactors } from './load-tail-factors.ts';
 import { MovingTail } from './moving-tail.ts';
 import { TailFlexibility } from './tail-flexibility.ts';
@@ -18,6 +18,8 @@ const EPS = Number.EPSILON;
  *
  *   V;   Σ√(Δp² + Δp′²/ω²) + TV(p′)/ω + (c/ω) TV(p);
  *   the same two with e^{−γ(t−s)} in the integrals, over √(1 − ζ²), γ = inf c/2, ζ < 1;
+ *   (c/ω) sup|p′|/ω + Σ|Δp| + ∫e^{−γ(t−s)}|dp′|/(ω√(1 − ζ²)), ζ < 1: r + c F p′/ω⁴ moves freely between
+ *   the kinks of p, and each kink gives it the motion after a unit impulse;
  *   A (1 + √(r⁴ + (cr/ω)²))/(1 − r²), r = Ω/ω, for a lasting harmonic;
  *
  * each times √(ΔC ΔG), ΔC = C − ΣF²/ω²; and impulses of a support Σ|Δy′| √((m(r,r) − ΣΓ²) ΔG).
@@ -33,7 +35,9 @@ export class LoadTails {
   private readonly points: TailFlexibility | null;
   private readonly pointOf: Int32Array;
   private readonly moving: (MovingTail | null)[];
-  private readonly cache = new Map<number, { reach: number; K: Reach }>();
+  /** Reaches found for the modes left out and for those kept, by load. */
+  private readonly reaches = new Map<number, KnownReach>();
+  private readonly keptReaches = new Map<number, KnownReach>();
 
   constructor(member: WaveMember, loads: readonly AppliedLoad[]) {
     this.member = member;
@@ -90,7 +94,13 @@ export class LoadTails {
       const kicks = measures.weighedKicks(0);
       // F_n itself is known to the rounding of its terms only
       const known = Math.abs(factor) + load.totalForce * peakDisplacement(this.member, mode.shape);
-      amplitude += known * (Math.min(totalVariation(measures) / omega, span * measures.largest) + kicks);
+      const { energy } = this.reachOf(this.keptReaches, index, omega, mode.frequency.order - 1);
+      const reach = Math.min(
+        measures.largest + energy,
+        harmonicReach(measures, this.member, mode),
+        omega * span * measures.largest,
+      );
+      amplitude += known * (reach / omega + kicks);
     });
     return amplitude;
   }
@@ -129,7 +139,7 @@ export class LoadTails {
     const c = Math.sqrt(this.complianceTail(index, nextOmega));
     const f = load.smooth ? Math.sqrt(Math.max(0, this.norm[index]) + 64 * EPS * load.massNorm) : Infinity;
     const source = Math.min(c, f / nextOmega);
-    const { rest, energy } = this.reachOf(index, measures, nextOmega, kept);
+    const { rest, energy } = this.reachOf(this.reaches, index, nextOmega, kept);
     const gamma = decayRate(this.member, nextOmega, kept);
     const zeta = 0.5 * ratio;
     const fading = zeta < 1 && damping.stiffnessCoefficient === 0;
@@ -168,14 +178,20 @@ export class LoadTails {
     return Math.max(0, this.compliance[index]) + 64 * EPS * whole;
   }
 
-  /** The reach of a history, found anew only when ω has grown by an eighth: it falls with ω and N. */
-  private reachOf(index: number, measures: HistoryMeasures, nextOmega: number, kept: number): Reach {
-    const known = this.cache.get(index);
-    if (known && nextOmega < 1.125 * known.reach && nextOmega >= known.reach && kept > 8) return known.K;
-    const K = reachOfHistory(measures, this.member, nextOmega, kept);
-    this.cache.set(index, { reach: nextOmega, K });
-    return K;
+  /** The reach of a load's history, found anew only when ω has grown by an eighth: it falls with ω and N. */
+  private reachOf(known: Map<number, KnownReach>, index: number, omega: number, kept: number): Reach {
+    const last = known.get(index);
+    if (last && omega < 1.125 * last.omega && omega >= last.omega && kept > 8) return last.reach;
+    const measures = this.loads[index].measures as HistoryMeasures;
+    const reach = reachOfHistory(measures, this.member, omega, kept);
+    known.set(index, { omega, reach });
+    return reach;
   }
+}
+
+interface KnownReach {
+  readonly omega: number;
+  readonly reach: Reach;
 }
 
 /** ω²|r|/F and the energy norm ω²|(r, q′/ω)|/F of any later mode, at most. */
@@ -215,6 +231,12 @@ function reachOfHistory(measures: HistoryMeasures, member: WaveMember, omega: nu
       const fine = measures.weighed(gamma, ratio, 1 / omega) + Math.max(0, jumped);
       take(fine * shrink, fine * norm + measures.largestRate / omega);
     }
+    if (zeta < 1) {
+      const sudden = measures.jumps.reduce((sum, jump) => sum + jump.value, 0);
+      const kinks = (sudden + measures.weighed(gamma, 0, 1 / omega)) / Math.sqrt(1 - zeta * zeta);
+      const slow = measures.largestRate / omega;
+      take(ratio * slow + kinks, (1 + ratio) * slow + kinks * (1 + zeta) * Math.hypot(1, ratio));
+    }
   }
   const { harmonic } = measures;
   if (harmonic !== null && harmonic.omega < omega) {
@@ -225,6 +247,14 @@ function reachOfHistory(measures: HistoryMeasures, member: WaveMember, omega: nu
     take(reach, reach + gain * r);
   }
   return { rest, energy };
+}
+
+/** ω²|(q, q′/ω)|/F of one mode under a lasting harmonic from rest, at most: twice its steady amplitude. */
+function harmonicReach({ harmonic }: HistoryMeasures, member: WaveMember, { frequency }: Mode): number {
+  if (harmonic === null) return Number.POSITIVE_INFINITY;
+  const r = harmonic.omega / frequency.omega;
+  const rate = dampingRate(member.damping, frequency.order, frequency.omega) / frequency.omega;
+  return (2 * harmonic.amplitude * Math.max(1, r)) / Math.hypot(1 - r * r, rate * r);
 }
 
 function totalVariation(measures: HistoryMeasures): number {
