@@ -20,6 +20,8 @@ export interface KeptMode {
   readonly start: ModalStart;
   /** F_n of each load per unit drive, shape [loads]. */
   readonly factors: readonly number[];
+  /** Largest ω|(q, q′/ω)| that the loads can give it, √J. */
+  readonly forced: number;
 }
 
 /** The rigid-body part of the motion: |a₀|φ₀ and |v₀|φ₀, m and m/s. */
@@ -143,8 +145,9 @@ export function keepModes(
     const shared = couplingOf(member, mode, previous);
     coupling = Math.max(coupling, shared);
     const factors = loadTails.add(mode);
-    modes.push({ mode, start, factors });
-    rounding.add(mode, start, loads.length > 0 ? loadTails.amplitudes(mode, factors, span) : 0);
+    const forced = loads.length > 0 ? loadTails.amplitudes(mode, factors, span) : 0;
+    modes.push({ mode, start, factors, forced });
+    rounding.add(mode, start, forced);
     if (elastic) energy.add(start.energy, mode.shape.lambda, rounding.slack, shared);
     flexibility.add(mode);
     upcoming = series.next();

@@ -2,6 +2,8 @@
 export interface LoadTailFactors {
   /** Displacement at the instant: times √ΔG. */
   readonly displacement: number;
+  /** Quasi-static displacement of the modes left out: times √ΔG. */
+  readonly still: number;
   /** Velocity at the instant: times √ΔG; infinite where no such bound exists. */
   readonly velocity: number;
   /** Flux at the instant: times √ΔH; infinite where no such bound exists. */
@@ -19,6 +21,7 @@ export interface LoadTailFactors {
 /** No loads, or no mode left out. */
 export const NO_LOADS: LoadTailFactors = {
   displacement: 0,
+  still: 0,
   velocity: 0,
   flux: 0,
   gaugeFlux: 0,

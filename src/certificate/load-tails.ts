@@ -111,6 +111,7 @@ export class LoadTails {
       const one = this.factorsOfLoad(index, nextOmega, kept, gaugeTime, span);
       return {
         displacement: sum.displacement + one.displacement,
+        still: sum.still + one.still,
         velocity: sum.velocity + one.velocity,
         flux: sum.flux + one.flux,
         gaugeFlux: sum.gaugeFlux + one.gaugeFlux,
@@ -158,6 +159,7 @@ export class LoadTails {
         : 0;
     return {
       displacement: rest * source + kicked,
+      still: measures.largest * source,
       velocity: quiet ? (energy + measures.largestRate / nextOmega) * f + averagedJump : Infinity,
       flux: quiet && !rough ? rest * f : Infinity,
       gaugeFlux:

@@ -46,6 +46,7 @@ export class MovingTail {
     const gain = new Float64Array(n);
     const mach = new Float64Array(n);
     let within = 0;
+    let largest = 0;
     let restWithin = 0;
     let roughest = 0;
     for (let i = 0; i < n; i++) {
@@ -58,6 +59,7 @@ export class MovingTail {
       const [g, h] = this.joined(i, lambda);
       const wave =
         travelling > 0 ? Math.sqrt(g + h / (k * rho * travelling)) : rho === 0 ? Math.sqrt(g) : Infinity;
+      largest = Math.max(largest, wave);
       within = Math.max(within, gain[i] * wave);
       // a quasi-static part P G(x, vt) is taken out: D − 1 remains where it is smaller
       restWithin = Math.max(restWithin, this.restGain(i, gain[i], mach[i], ratio) * wave);
@@ -75,6 +77,7 @@ export class MovingTail {
     const still = motion.force === 0 ? 0 : (Math.abs(motion.force) / v) * (fluxes + 2 * roughest);
     return {
       displacement,
+      still: motion.force === 0 ? 0 : Math.abs(motion.force) * largest,
       velocity: Infinity,
       flux: Infinity,
       gaugeFlux: gaugeTime > 0 ? (2 * drag * energy + still) / gaugeTime : Infinity,

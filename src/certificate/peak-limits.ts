@@ -1,12 +1,15 @@
 import type { WaveMember } from '../members/wave-member.ts';
-import { ENDS, waveNumberSquare, type ModeShape } from '../modes/mode-shape.ts';
-import { peakDisplacement } from '../modes/shape-figures.ts';
+import { peakDisplacement, peakFlux } from '../modes/shape-figures.ts';
 import type { AppliedLoad } from '../motion/applied-loads.ts';
 import { largestRatioAbove } from '../motion/modal-damping.ts';
-import { stillPeak } from '../motion/still-peaks.ts';
+import { stillPeak, supportRise } from '../motion/still-peaks.ts';
 import type { Quantity } from '../spec/types.ts';
+import { loadedPlace, rigidRounding, roundingFactors } from './field-bounds.ts';
 import type { KeptSeries } from './kept-modes.ts';
+import { loadRounding } from './load-rounding.ts';
+import { peakOfMode, type ModeReach } from './loaded-reach.ts';
 import { tailFactors } from './quantity-bounds.ts';
+import { riseBetween, type SampledGrid } from './sampled-limit.ts';
 
 /** What the peak limits of all quantities need. */
 export interface PeakBasis {
@@ -17,6 +20,9 @@ export interface PeakBasis {
   /** The same with what massless stretches add between held ends. */
   readonly wholeFlexibility?: number;
   readonly loads?: readonly AppliedLoad[];
+  /** How far each kept mode goes, and the grid that was sampled. */
+  readonly reaches: readonly ModeReach[];
+  readonly grid: SampledGrid;
   readonly gaugeTime: number;
   readonly released: boolean;
   /** Latest sampled time, gauge time included, s. */
@@ -26,9 +32,13 @@ export interface PeakBasis {
 /**
  * An upper limit on |quantity| over the whole member and all times up to the span: the smaller of
  * the ceiling known from the energies alone and the sum of the kept modes' amplitudes plus the tail
- * bound. Of averages where a gauge time is given. Null where no limit exists.
+ * bound. Under loads the amplitudes are those seen at the samples and what the loads can add from one to
+ * the next, and the limit of a displacement may come from the samples themselves; the times are those from
+ * the first sample on. Of averages where a gauge time is given. Null where no limit exists.
+ *
+ * @param sampled largest |value| + bound on the sampled grid
  */
-export function peakLimit(quantity: Quantity, basis: PeakBasis): number | null {
+export function peakLimit(quantity: Quantity, basis: PeakBasis, sampled: number): number | null {
   const { member, series, gaugeTime, released, span, loads = [] } = basis;
   const { rigid } = series.tail;
   const { damping } = member;
@@ -51,16 +61,7 @@ export function peakLimit(quantity: Quantity, basis: PeakBasis): number | null {
         ? product(rest.onFlexibility, Math.sqrt(tail.member.flexibility)) +
           product(rest.onFluxInertia, Math.sqrt(tail.member.fluxInertia))
         : Number.POSITIVE_INFINITY;
-  let modal = loads.length > 0 ? Number.POSITIVE_INFINITY : left;
-  if (Number.isFinite(modal)) {
-    for (const { mode, start } of series.modes) {
-      const { omega } = mode.frequency;
-      if (omega === 0) continue;
-      const shape = flux ? peakFlux(member, mode.shape) : peakDisplacement(member, mode.shape);
-      modal +=
-        shape * modalAmplitude(quantity, omega, Math.sqrt(2 * start.energy), member, mode.frequency.order);
-    }
-  }
+  const modal = left + (loads.length > 0 ? loadedSum(quantity, basis) : freeSum(quantity, basis));
   const still = stillPeak(
     member,
     loads,
@@ -69,7 +70,6 @@ export function peakLimit(quantity: Quantity, basis: PeakBasis): number | null {
     gaugeTime,
     span,
   );
-  const elastic = Math.min(ceiling, modal) + still;
   const pushed = rigidPush(basis);
   const path = rigid.position + rigid.velocity * span + 0.5 * pushed * span * span;
   const speed = rigid.velocity + pushed * span;
@@ -81,8 +81,58 @@ export function peakLimit(quantity: Quantity, basis: PeakBasis): number | null {
     force: 0,
     stress: 0,
   }[quantity];
-  const limit = (elastic + drift) * scale * (1 + 1e-12);
+  const rounding =
+    roundingFactors(quantity, member, series.rounding, whole.energies.nextOmega, gaugeTime) *
+      Math.sqrt(flux ? whole.member.fluxInertia : basis.flexibility) +
+    rigidRounding(quantity, rigid, span, gaugeTime, damping.massCoefficient) +
+    loadRounding(
+      quantity,
+      loads,
+      series.modes[0],
+      loadedPlace(member, basis.wholeFlexibility ?? basis.flexibility, span, gaugeTime),
+    );
+  // the modes under loads hold the rigid-body mode already
+  const moving = loads.length > 0 ? Math.min(ceiling + drift, modal) : Math.min(ceiling, modal) + drift;
+  const known = Math.min((moving + still + rounding) * scale, sampledLimit(quantity, basis, sampled, left));
+  const limit = known * (1 + 1e-12);
   return Number.isFinite(limit) ? limit : null;
+}
+
+/** Amplitudes of the kept modes of free motion, added up. */
+function freeSum(quantity: Quantity, { member, series }: PeakBasis): number {
+  const flux = quantity === 'force' || quantity === 'stress';
+  let sum = 0;
+  for (const { mode, start } of series.modes) {
+    const { omega, order } = mode.frequency;
+    if (omega === 0) continue;
+    const shape = flux ? peakFlux(member, mode.shape) : peakDisplacement(member, mode.shape);
+    sum += shape * modalAmplitude(quantity, omega, Math.sqrt(2 * start.energy), member, order);
+  }
+  return sum;
+}
+
+/** The same under loads, from how far the modes were seen to go. */
+function loadedSum(quantity: Quantity, { member, series, reaches, gaugeTime }: PeakBasis): number {
+  return series.modes.reduce(
+    (sum, kept, n) => sum + peakOfMode(quantity, member, kept, reaches[n], gaugeTime),
+    0,
+  );
+}
+
+/**
+ * Limit of a displacement from its samples: the largest with its bound, what the kept modes and the supports
+ * rise between the samples, and twice what the modes left out have, their quasi-static part included.
+ */
+function sampledLimit(quantity: Quantity, basis: PeakBasis, sampled: number, left: number): number {
+  const { member, series, reaches, grid, loads = [], span } = basis;
+  if (quantity !== 'displacement' && quantity !== 'relativeDisplacement') return Number.POSITIVE_INFINITY;
+  // a massless stretch has a quasi-static part of its own beside the modes
+  if (loads.length > 0 && member.inertia.some((rho) => rho === 0)) return Number.POSITIVE_INFINITY;
+  const { tail } = series;
+  const still = product(tail.loads.still, Math.sqrt(tail.member.flexibility));
+  const distance = Math.max(0.5 * grid.spacing, grid.edge);
+  const supported = quantity === 'displacement' ? supportRise(member, loads, grid.step, distance, span) : 0;
+  return sampled + riseBetween(member, series.modes, reaches, grid) + supported + 2 * (left + still);
 }
 
 /** Largest acceleration of the rigid-body mode under the loads, m/s². */
@@ -121,24 +171,6 @@ function modalAmplitude(
     case 'stress':
       return (amplitude / omega) * Math.hypot(1, beta * omega);
   }
-}
-
-/** Largest |p| of a shape over the member. Cost O(segments). */
-function peakFlux(member: WaveMember, shape: ModeShape): number {
-  let peak = 0;
-  for (let i = 0; i < member.segmentCount; i++) {
-    const u = shape.ends[ENDS * i];
-    const p = shape.ends[ENDS * i + 1];
-    peak = Math.max(peak, Math.abs(p), Math.abs(shape.ends[ENDS * i + 3]));
-    const k2 = waveNumberSquare(member, i, shape.lambda);
-    if (k2 > 0) {
-      const impedance = member.stiffness[i] * Math.sqrt(k2);
-      if (u * shape.ends[ENDS * i + 2] <= 0 || Math.sqrt(k2) * member.length[i] > Math.PI) {
-        peak = Math.max(peak, Math.hypot(impedance * u, p));
-      }
-    }
-  }
-  return peak;
 }
 
 function product(factor: number, size: number): number {

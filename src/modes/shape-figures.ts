@@ -60,3 +60,30 @@ export function peakDisplacement(member: WaveMember, shape: ModeShape): number {
   }
   return peak;
 }
+
+/** Largest |p| of a segment's flux, N. */
+export function segmentPeakFlux(member: WaveMember, shape: ModeShape, i: number): number {
+  const u = shape.ends[ENDS * i];
+  const p = shape.ends[ENDS * i + 1];
+  const peak = Math.max(Math.abs(p), Math.abs(shape.ends[ENDS * i + 3]));
+  const k2 = waveNumberSquare(member, i, shape.lambda);
+  const crosses = u * shape.ends[ENDS * i + 2] <= 0 || Math.sqrt(k2) * member.length[i] > Math.PI;
+  if (k2 <= 0 || !crosses) return peak;
+  return Math.max(peak, Math.hypot(member.stiffness[i] * Math.sqrt(k2) * u, p));
+}
+
+/** Largest |p| of a shape over the member. Cost O(segments). */
+export function peakFlux(member: WaveMember, shape: ModeShape): number {
+  let peak = 0;
+  for (let i = 0; i < member.segmentCount; i++) peak = Math.max(peak, segmentPeakFlux(member, shape, i));
+  return peak;
+}
+
+/** Largest |φ′| of a shape over the member. Cost O(segments). */
+export function peakSlope(member: WaveMember, shape: ModeShape): number {
+  let peak = 0;
+  for (let i = 0; i < member.segmentCount; i++) {
+    peak = Math.max(peak, segmentPeakFlux(member, shape, i) / member.stiffness[i]);
+  }
+  return peak;
+}

@@ -245,3 +245,23 @@ export function historyAmount(measures: HistoryMeasures): { readonly jumps: numb
   const jumps = measures.jumps.reduce((sum, jump) => sum + jump.value, 0);
   return { jumps, whole: jumps + measures.variation };
 }
+
+/**
+ * Variation of p, and sum of the kicks of q′, within any window of a given length at most: from the rate,
+ * or from e ∫e^{−(t−s)/window}, whichever is less.
+ */
+export function changeWithin(
+  measures: HistoryMeasures,
+  window: number,
+): { readonly variation: number; readonly kicks: number } {
+  if (window === 0) return { variation: 0, kicks: 0 };
+  const { jumps, whole } = historyAmount(measures);
+  return {
+    variation: Math.min(
+      whole,
+      measures.largestRate * window + jumps,
+      Math.E * measures.weighed(1 / window, 1, 0),
+    ),
+    kicks: Math.min(measures.weighedKicks(0), Math.E * measures.weighedKicks(1 / window)),
+  };
+}

@@ -18,6 +18,14 @@ export interface MovedMode {
   readonly factors?: readonly number[];
 }
 
+/** How far a mode goes at the sampled instants (with a gauge time, where its windows begin). */
+export interface SampledReach {
+  /** Largest |(q − ΣF p/ω², q′/ω)| of an elastic mode, largest |q| of the rigid-body mode. */
+  readonly position: number;
+  /** ω times that; largest |q′| of the rigid-body mode. */
+  readonly velocity: number;
+}
+
 /** Modes handled at once; also the length of a summation block. */
 const BLOCK = 64;
 /** Stations and times handled at once, so that tables stay small however many there are. */
@@ -37,6 +45,7 @@ const LOADED_TILE = 16_384;
  * multiplications a mode and station or time.
  *
  * @param visit called once a mode and tile of stations, with φ and p there and the tile's first station
+ * @param reaches under loads, filled with how far each mode goes
  */
 export function sampleMotion(
   member: WaveMember,
@@ -47,6 +56,7 @@ export function sampleMotion(
   gaugeTime: number,
   visit: (mode: Mode, displacement: Float64Array, flux: Float64Array, first: number) => void,
   loads: readonly AppliedLoad[] = [],
+  reaches: SampledReach[] = [],
 ): Map<FieldKind, Float64Array> {
   const columns = stations.segment.length;
   const fields = new Map(kinds.map((kind) => [kind, new Float64Array(times.length * columns)]));
@@ -57,8 +67,14 @@ export function sampleMotion(
     for (let firstColumn = 0; firstColumn < columns; firstColumn += TILE) {
       const tile = stationSlice(stations, firstColumn, firstColumn + TILE);
       const look = firstRow === 0 ? visit : null;
-      const sums = sumTile(member, modes, tile, clock, kinds, (mode, u, p) =>
-        look?.(mode, u, p, firstColumn),
+      const sums = sumTile(
+        member,
+        modes,
+        tile,
+        clock,
+        kinds,
+        (mode, u, p) => look?.(mode, u, p, firstColumn),
+        loads.length > 0 && firstColumn === 0 ? reaches : null,
       );
       for (const kind of kinds) {
         const from = sums.get(kind) as Float64Array;
@@ -82,6 +98,7 @@ function sumTile(
   clock: ModalClock,
   kinds: readonly FieldKind[],
   visit: (mode: Mode, displacement: Float64Array, flux: Float64Array) => void,
+  reaches: SampledReach[] | null,
 ): Map<FieldKind, Float64Array> {
   const columns = stations.segment.length;
   const rows = clock.count;
@@ -100,6 +117,7 @@ function sumTile(
       sampler.sample(mode.shape, u, p);
       visit(mode, u, p);
       clock.run(modes[from + m]);
+      if (reaches !== null) reaches[from + m] = farther(reaches[from + m], clock.reach(mode.frequency.omega));
       for (const [kind, table] of tables) clock.fill(kind, table.subarray(m * rows, (m + 1) * rows));
     }
     for (const [kind, table] of tables) {
@@ -107,6 +125,14 @@ function sumTile(
     }
   }
   return new Map(kinds.map((kind) => [kind, (products.get(kind) as ProductSum).values()]));
+}
+
+function farther(one: SampledReach | undefined, other: SampledReach): SampledReach {
+  if (one === undefined) return other;
+  return {
+    position: Math.max(one.position, other.position),
+    velocity: Math.max(one.velocity, other.velocity),
+  };
 }
 
 /** One modal coordinate at all times, at the instants or at both sides of the gauge window. */
@@ -146,6 +172,22 @@ class ModalClock {
     this.lambda = moved.mode.shape.lambda;
     this.rate = dampingRate(this.member.damping, order, omega);
     for (const instant of [this.now, this.first, this.second]) instant?.run(moved, this.rate);
+  }
+
+  /** How far the mode run last goes. */
+  reach(omega: number): SampledReach {
+    const { q, v, driven } = this.first ?? this.now;
+    const soft = omega > 0 ? 1 / this.lambda : 0;
+    const slow = omega > 0 ? 1 / omega : 0;
+    let position = 0;
+    let velocity = 0;
+    for (let j = 0; j < q.length; j++) {
+      const rest = q[j] - soft * driven[j];
+      position = Math.max(position, rest * rest + (slow * v[j]) ** 2);
+      velocity = Math.max(velocity, Math.abs(v[j]));
+    }
+    position = Math.sqrt(position);
+    return { position, velocity: omega > 0 ? omega * position : velocity };
   }
 
   /** q less its quasi-static part F p/ω² (or its rate, acceleration, flux coordinate), or its average. */

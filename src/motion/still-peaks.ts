@@ -87,3 +87,37 @@ function largestSupport(member: WaveMember, load: AppliedLoad, flux: boolean): n
   }
   return largest;
 }
+
+/**
+ * What y(t) r(x) of the supports rises between the samples of a grid: |r| min(|y′| h/2, |y″| h²/8) and
+ * |y r′| times the distance to a station, m.
+ *
+ * @param step longest time between samples, s
+ * @param distance from any place to the nearest station at most, m
+ */
+export function supportRise(
+  member: WaveMember,
+  loads: readonly AppliedLoad[],
+  step: number,
+  distance: number,
+  span: number,
+): number {
+  return loads.reduce((sum, load) => {
+    if (load.support === null) return sum;
+    const { position, velocity } = load.support.motion.peaks(span);
+    const measures = load.measures;
+    const smooth = measures !== null && measures.weighedKicks(0) === 0;
+    const acceleration = smooth
+      ? measures.largest + member.damping.massCoefficient * velocity
+      : Number.POSITIVE_INFINITY;
+    const inTime = Math.min(0.5 * velocity * step, smooth ? 0.125 * acceleration * step * step : Infinity);
+    let slope = 0;
+    for (let i = 0; i < member.segmentCount; i++) {
+      for (const at of [0, member.length[i]]) {
+        const { flux } = supportState(member, load.support.shape, i, at);
+        slope = Math.max(slope, Math.abs(flux) / member.stiffness[i]);
+      }
+    }
+    return sum + largestSupport(member, load, false) * inTime + position * slope * distance;
+  }, 0);
+}

@@ -1,8 +1,10 @@
 import { certify, loadedPlace } from '../certificate/field-bounds.ts';
 import { loadRounding } from '../certificate/load-rounding.ts';
+import { measureBetween, reachOfMode } from '../certificate/loaded-reach.ts';
 import { checkIndependently } from '../certificate/independent-checks.ts';
-import { keepModes, type KeptSeries } from '../certificate/kept-modes.ts';
+import { keepModes } from '../certificate/kept-modes.ts';
 import { peakLimit, type PeakBasis } from '../certificate/peak-limits.ts';
+import { measureGrid } from '../certificate/sampled-limit.ts';
 import { displacementBound, displacementCeiling, shortfallOf } from '../certificate/series-tolerance.ts';
 import { TailFlexibility } from '../certificate/tail-flexibility.ts';
 import { worstVerdict } from '../certificate/verdict.ts';
@@ -13,14 +15,13 @@ import { evenPositions, placeStations, type Stations } from '../modes/stations.t
 import { stressFactors } from '../modes/stress-factors.ts';
 import { readLoads, type AppliedLoad } from '../motion/applied-loads.ts';
 import type { StartedSupport } from '../motion/initial-displacement.ts';
-import { readInitialState, type InitialState } from '../motion/initial-state.ts';
+import { readInitialState } from '../motion/initial-state.ts';
 import { stillPeak } from '../motion/still-peaks.ts';
 import type { FieldKind } from '../motion/field-kind.ts';
-import { sampleMotion } from '../motion/sampled-motion.ts';
+import { sampleMotion, type SampledReach } from '../motion/sampled-motion.ts';
 import type {
   Field,
   Fields,
-  Notice,
   Peak,
   Peaks,
   Quantity,
@@ -28,9 +29,9 @@ import type {
   ResponsesRequest,
   Times,
 } from '../spec/types.ts';
-import { contactNotice } from './contact-notice.ts';
 import { HELD_NUMBERS } from './limits.ts';
 import { unitOf } from './quantity-units.ts';
+import { noticesOf } from './response-notices.ts';
 
 /**
  * Free motion of a member after its initial displacement, velocity and impulses, with a certified
@@ -70,6 +71,7 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
 
   const tails = new TailFlexibility(member, stations);
   const kinds = quantities.map(sampledKind);
+  const sampledReaches: SampledReach[] = [];
   const sums = sampleMotion(
     member,
     series.modes,
@@ -79,7 +81,9 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
     gaugeTime,
     (mode, u, p, first) => tails.addSampled(mode, u, p, first),
     loads,
+    sampledReaches,
   );
+  const between = measureBetween(loads, times, gaugeTime);
 
   const basis: PeakBasis = {
     member,
@@ -87,6 +91,8 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
     flexibility,
     wholeFlexibility,
     loads,
+    reaches: series.modes.map((kept, n) => reachOfMode(member, kept, sampledReaches[n], loads, between)),
+    grid: measureGrid(member, stations, times),
     gaugeTime,
     released: state.released,
     span,
@@ -116,7 +122,8 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
       ...(certificate.rms !== null && { rms: certificate.rms }),
       verdict: certificate.verdict,
     };
-    peaks[quantity] = sampledPeak(values, stations, times, peakLimit(quantity, basis));
+    const sampled = largestWithBound(values, certificate.bound);
+    peaks[quantity] = sampledPeak(values, stations, times, peakLimit(quantity, basis, sampled));
   });
 
   const total = state.energies[0] + state.rigidEnergy;
@@ -189,6 +196,15 @@ function rowsOf(data: Float64Array, columns: number, factor: Float64Array | null
   return rows;
 }
 
+/** Largest |value| + bound of the samples; infinite without a bound. */
+function largestWithBound(values: Float64Array[], bound: Float64Array | null): number {
+  if (bound === null) return Number.POSITIVE_INFINITY;
+  let largest = 0;
+  for (const row of values)
+    row.forEach((value, q) => (largest = Math.max(largest, Math.abs(value) + bound[q])));
+  return largest;
+}
+
 function sampledPeak(
   values: Float64Array[],
   stations: Stations,
@@ -210,42 +226,6 @@ function sampledPeak(
   return { value, at, time, upper };
 }
 
-function noticesOf(
-  request: ResponsesRequest,
-  member: WaveMember,
-  state: InitialState,
-  series: KeptSeries,
-  loads: readonly AppliedLoad[],
-  times: Float64Array,
-): Notice[] {
-  const notices: Notice[] = [];
-  if (state.lostEnergy > 1e-12 * (state.energies[0] + state.rigidEnergy)) {
-    notices.push({
-      code: 'massless-stretch-settled',
-      detail: `Massless stretches cannot keep a shape of their own: for t > 0 they follow the places around them, and ${state.lostEnergy} J of the given shape's strain energy are left out.`,
-    });
-  }
-  const [first] = series.modes;
-  const driven = (first.factors ?? []).some((factor) => factor !== 0);
-  if (first.mode.frequency.omega === 0 && (first.start.velocity !== 0 || driven)) {
-    notices.push({
-      code: 'rigid-body-motion',
-      detail:
-        'Nothing holds the member, so it drifts as a whole; the ceiling and the tolerance refer to its elastic motion.',
-    });
-  }
-  notices.push(...driftNotices(request, loads));
-  const contact = contactNotice(member, request.initial, series, loads, times);
-  if (contact !== null) notices.push(contact);
-  if ('modes' in request.series && series.modes.length < request.series.modes) {
-    notices.push({
-      code: 'finite-modes',
-      detail: `All inertia is lumped, so the member has ${series.modes.length} modes; all of them are used.`,
-    });
-  }
-  return notices;
-}
-
 /** A number, or null where none exists. */
 function finite(value: number): number | null {
   return Number.isFinite(value) ? value : null;
@@ -259,23 +239,5 @@ function startedSupports(loads: readonly AppliedLoad[], span: number): StartedSu
     // the zero of a sine is one only to rounding
     const started = Math.abs(position) > 256 * Number.EPSILON * support.motion.peaks(span).position;
     return started ? [{ pieces: support.shape.pieces, position }] : [];
-  });
-}
-
-/** What an acceleration record leaves behind: it is integrated as it is. */
-function driftNotices(request: ResponsesRequest, loads: readonly AppliedLoad[]): Notice[] {
-  return request.loads.flatMap((load, index) => {
-    if (load.type !== 'end-motion' || load.quantity !== 'acceleration' || load.history.type !== 'samples')
-      return [];
-    const { start, interval, values } = load.history;
-    const end = start + (values.length - 1) * interval;
-    const state = loads[index].support?.motion.at(end);
-    if (!state) return [];
-    return [
-      {
-        code: 'record-drift',
-        detail: `The acceleration record of load ${index} is used as it is, without a baseline correction; integrated twice it has drifted by ${end} s to a displacement of ${state.position} m and a velocity of ${state.velocity} m/s.`,
-      },
-    ];
   });
 }

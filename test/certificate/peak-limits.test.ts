@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { measureBetween, reachOfMode } from '../../src/certificate/loaded-reach.ts';
 import { peakLimit, type PeakBasis } from '../../src/certificate/peak-limits.ts';
 import type { InitialMotion, Quantity } from '../../src/spec/types.ts';
 import { uniformTrial, type TrialMember } from '../spectrum/trial-members.ts';
@@ -13,15 +14,21 @@ function limit(
 ): number | null {
   const gaugeTime = extra.gaugeTime ?? 0;
   const { member, series, flexibility, state } = keep(trial, initial, { modes }, { gaugeTime });
-  return peakLimit(quantity, {
+  const times = new Float64Array([0, extra.span ?? 1]);
+  const between = measureBetween([], times, gaugeTime);
+  const basis: PeakBasis = {
     member,
     series,
     flexibility,
+    reaches: series.modes.map((kept) => reachOfMode(member, kept, undefined, [], between)),
+    grid: { step: 1, spacing: 1, edge: 0, kinked: true },
     gaugeTime,
     released: state.released,
     span: 1,
     ...extra,
-  });
+  };
+  // nothing sampled: what the energies and the modes alone say
+  return peakLimit(quantity, basis, Number.POSITIVE_INFINITY);
 }
 
 const string = uniformTrial(1);

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { readRequest } from '../../src/contract/read-request.ts';
 import { solveResponses } from '../../src/solutions/responses.ts';
-import type { ResponsesAnswer, ResponsesRequest } from '../../src/spec/types.ts';
+import type { ResponsesAnswer } from '../../src/spec/types.ts';
 import { record, recordRequest } from '../bench/record-request.js';
 
 /** The worst error of a displacement over all places and times, and the bound at its place. */
@@ -20,7 +20,7 @@ function worstError(short: ResponsesAnswer, long: ResponsesAnswer): { error: num
 }
 
 function solve(body: object, modes: number): ResponsesAnswer {
-  return solveResponses(readRequest('responses', { ...body, series: { modes } }) as ResponsesRequest);
+  return solveResponses(readRequest('responses', { ...body, series: { modes } }));
 }
 
 function expectSharp(body: object, longModes: number): void {
