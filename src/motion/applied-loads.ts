@@ -168,7 +168,10 @@ function recordDrive(record: NonNullable<TimeHistory['record']>): RecordDrive {
 function moverOf(drive: RecordDrive | null, parts: TimeHistory['parts'], times: Float64Array): LoadMover {
   if (drive !== null) {
     const record = new RecordMotion(drive, times);
-    return { add: (mode, rate, factor, q, v) => record.add(mode.frequency.omega, rate, factor, q, v) };
+    return {
+      expect: (modes) => record.expect(modes),
+      add: (mode, rate, factor, q, v) => record.add(mode.frequency.omega, rate, factor, q, v),
+    };
   }
   const forced = new ForcedMotion(parts, [], times);
   return { add: (mode, rate, factor, q, v) => forced.add(mode.frequency.omega, rate, factor, q, v) };

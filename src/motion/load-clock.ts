@@ -3,7 +3,7 @@ import { evaluateShape } from '../modes/mode-shape.ts';
 import type { Mode } from '../modes/mode-series.ts';
 import { placeStation } from '../modes/stations.ts';
 import type { AppliedLoad } from './applied-loads.ts';
-import type { LoadMover } from './forced-motion.ts';
+import type { LoadMover, ModalCoordinate } from './forced-motion.ts';
 
 /** Motion tables of one modal coordinate at one set of times. */
 export type MotionTable = readonly [Float64Array, Float64Array];
@@ -52,6 +52,11 @@ export class LoadClock {
     this.driven = new Float64Array(times.length);
     this.drivenRate = new Float64Array(times.length);
     this.movingIntegrals = new Float64Array(times.length);
+  }
+
+  /** Names the modes added next, at most as many as run through a record at once. */
+  expect(modes: readonly ModalCoordinate[]): void {
+    for (const mover of this.movers) mover.expect?.(modes);
   }
 
   /** Adds the motion of a mode under all loads to its tables. */

@@ -6,9 +6,11 @@ import type { Mode } from '../modes/mode-series.ts';
 import { dampingRate } from './modal-damping.ts';
 import type { AppliedLoad } from './applied-loads.ts';
 import { FreeMotionTable } from './free-motion-table.ts';
+import type { ModalCoordinate } from './forced-motion.ts';
 import { LoadClock } from './load-clock.ts';
 import type { ModalStart } from './modal-projection.ts';
 import type { FieldKind } from './field-kind.ts';
+import { RECORD_LANES } from './record-motion.ts';
 import { addStillFields } from './still-fields.ts';
 
 /** A mode with its initial state and its factor of each load. */
@@ -99,6 +101,7 @@ function sumTile(
       const p = flux.subarray(m * columns, (m + 1) * columns);
       sampler.sample(mode.shape, u, p);
       visit(mode, u, p);
+      if (m % RECORD_LANES === 0) clock.expect(modes.slice(from + m, from + m + RECORD_LANES));
       clock.run(modes[from + m]);
       for (const [kind, table] of tables) clock.fill(kind, table.subarray(m * rows, (m + 1) * rows));
     }
@@ -141,11 +144,20 @@ class ModalClock {
     this.moves = loads.some((load) => load.moving !== null);
   }
 
+  /** Names the modes run next. */
+  expect(modes: readonly MovedMode[]): void {
+    const coordinates = modes.map(({ mode }) => ({ omega: mode.frequency.omega, rate: this.rateOf(mode) }));
+    for (const instant of [this.now, this.first, this.second]) instant?.expect(coordinates);
+  }
+
   run(moved: MovedMode): void {
-    const { omega, order } = moved.mode.frequency;
     this.lambda = moved.mode.shape.lambda;
-    this.rate = dampingRate(this.member.damping, order, omega);
+    this.rate = this.rateOf(moved.mode);
     for (const instant of [this.now, this.first, this.second]) instant?.run(moved, this.rate);
+  }
+
+  private rateOf(mode: Mode): number {
+    return dampingRate(this.member.damping, mode.frequency.order, mode.frequency.omega);
   }
 
   /** q less its quasi-static part F p/ω² (or its rate, acceleration, flux coordinate), or its average. */
@@ -216,9 +228,18 @@ export class Instant {
     return this.loads?.drivenRate ?? this.none;
   }
 
+  expect(modes: readonly ModalCoordinate[]): void {
+    this.loads?.expect(modes);
+  }
+
   run(moved: MovedMode, rate: number): void {
     const { position, velocity } = moved.start;
-    this.free.fill(position, velocity, moved.mode.frequency.omega, rate, this.q, this.v);
+    if (position === 0 && velocity === 0) {
+      this.q.fill(0);
+      this.v.fill(0);
+    } else {
+      this.free.fill(position, velocity, moved.mode.frequency.omega, rate, this.q, this.v);
+    }
     this.loads?.add(moved.mode, rate, moved.factors ?? [], [this.q, this.v]);
   }
 
