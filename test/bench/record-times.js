@@ -36,7 +36,9 @@ export function recordTimes() {
 /**
  * q″ + 2ζω q′ + ω² q = −factor × acceleration, by the step that is exact for a record of straight
  * pieces, mode by mode, summed over the shapes at the stations. Frequencies, shapes, factors and the
- * eight numbers of every step are at hand.
+ * eight numbers of every step are at hand, and the record is an array of doubles: nothing is timed but
+ * slopes, steps and sums. What the record gives is added first, so that a step waits for three
+ * operations only: of the orders in which the sum can be written the fastest here.
  */
 function bareRecurrences() {
   const { samples, interval, instants, stride, stations } = record;
@@ -46,27 +48,29 @@ function bareRecurrences() {
     linearStep(angularFrequency, 2 * dampingRatio * angularFrequency, interval),
   );
   return () => {
+    const slope = new Float64Array(samples - 1);
+    for (let i = 0; i < slope.length; i++) slope[i] = (acceleration[i + 1] - acceleration[i]) / interval;
     const sums = new Float64Array(instants * stations);
+    const coordinate = new Float64Array(instants);
     modes.forEach(({ participation, shape }, n) => {
       const { positionOfPosition: pp, positionOfVelocity: pv, positionOfLoad: pl } = steps[n];
       const { velocityOfPosition: vp, velocityOfVelocity: vv, velocityOfLoad: vl } = steps[n];
       const { positionOfRate: pr, velocityOfRate: vr } = steps[n];
-      const coordinate = new Float64Array(instants);
       let [position, velocity] = [0, 0];
-      for (let i = 0, due = 0, row = 0; i < samples - 1; i++) {
-        if (i === due) {
-          coordinate[row++] = position;
-          due += stride;
+      for (let row = 0, i = 0; row < instants; row++) {
+        for (; i < row * stride; i++) {
+          const a = acceleration[i];
+          const b = slope[i];
+          const next = pl * a + pr * b + (pp * position + pv * velocity);
+          velocity = vl * a + vr * b + (vp * position + vv * velocity);
+          position = next;
         }
-        const a = acceleration[i];
-        const b = (acceleration[i + 1] - a) / interval;
-        const next = pp * position + pv * velocity + pl * a + pr * b;
-        velocity = vp * position + vv * velocity + vl * a + vr * b;
-        position = next;
+        coordinate[row] = position;
       }
-      for (let q = 0; q < stations; q++) {
-        const weight = -participation.factor * shape.displacement[q];
-        for (let row = 0; row < instants; row++) sums[row * stations + q] += weight * coordinate[row];
+      const weights = shape.displacement.map((height) => -participation.factor * height);
+      for (let row = 0, at = 0; row < instants; row++) {
+        const q = coordinate[row];
+        for (let station = 0; station < stations; station++, at++) sums[at] += weights[station] * q;
       }
     });
     return sums;
