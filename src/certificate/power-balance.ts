@@ -101,6 +101,7 @@ export class PowerBalance {
     }
     this.nodes.run(moved, rate);
     const { v, driven } = this.nodes;
+    const { weights } = this;
     let taken = 0;
     let worked = 0;
     let node = 0;
@@ -108,8 +109,8 @@ export class PowerBalance {
     for (let j = 0; j < this.instants.length; j++) {
       for (; node < this.until[j]; node++) {
         const work = driven[node] * v[node];
-        taken += this.weights[node] * (rate * v[node] * v[node] - work);
-        worked += this.weights[node] * work;
+        taken += weights[node] * (rate * v[node] * v[node] - work);
+        worked += weights[node] * work;
       }
       let sudden = 0;
       for (let k = 0; k < this.kickTimes.length && this.kickTimes[k] <= this.instants[j]; k++)

@@ -61,9 +61,10 @@ export class LoadClock {
 
   /** Adds the motion of a mode under all loads to its tables. */
   add(mode: Mode, rate: number, factors: readonly number[], table: MotionTable): void {
-    this.driven.fill(0);
-    this.drivenRate.fill(0);
-    this.movingIntegrals.fill(0);
+    const { driven, drivenRate } = this;
+    driven.fill(0);
+    drivenRate.fill(0);
+    if (this.integrates) this.movingIntegrals.fill(0);
     this.loads.forEach((load, index) => {
       const factor = factors[index];
       this.movers[index].add(mode, rate, factor, table[0], table[1]);
@@ -76,8 +77,8 @@ export class LoadClock {
       }
       const { value, rate: slope } = this.drives[index];
       for (let j = 0; j < value.length; j++) {
-        this.driven[j] += factor * value[j];
-        this.drivenRate[j] += factor * slope[j];
+        driven[j] += factor * value[j];
+        drivenRate[j] += factor * slope[j];
       }
     });
   }

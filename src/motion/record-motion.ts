@@ -80,10 +80,10 @@ export class RecordMotion {
   add(omega: number, rate: number, factor: number, q: Float64Array, v: Float64Array): void {
     const same = (lane: Lane): boolean => lane.omega === omega && lane.rate === rate;
     if (!this.lanes.some(same)) this.expect([{ omega, rate }]);
-    const unit = this.lanes.find(same) as Lane;
+    const { q: place, v: speed } = this.lanes.find(same) as Lane;
     for (let j = this.at.first; j < q.length; j++) {
-      q[j] += factor * unit.q[j];
-      v[j] += factor * unit.v[j];
+      q[j] += factor * place[j];
+      v[j] += factor * speed[j];
     }
   }
 

@@ -163,6 +163,7 @@ class ModalClock {
   /** q less its quasi-static part F p/ω² (or its rate, acceleration, flux coordinate), or its average. */
   fill(kind: FieldKind, into: Float64Array): void {
     const { q, v, driven, drivenRate } = this.now;
+    const { lambda, rate } = this;
     const soft = this.lambda > 0 ? 1 / this.lambda : 0;
     if (kind === 'displacement' || kind === 'relativeDisplacement') {
       for (let j = 0; j < into.length; j++) into[j] = q[j] - soft * driven[j];
@@ -171,7 +172,7 @@ class ModalClock {
     } else if (kind === 'velocity') {
       for (let j = 0; j < into.length; j++) into[j] = v[j] - soft * drivenRate[j];
     } else if (kind === 'acceleration') {
-      for (let j = 0; j < into.length; j++) into[j] = driven[j] - this.lambda * q[j] - this.rate * v[j];
+      for (let j = 0; j < into.length; j++) into[j] = driven[j] - lambda * q[j] - rate * v[j];
     } else {
       const beta = this.member.damping.stiffnessCoefficient;
       for (let j = 0; j < into.length; j++) into[j] = q[j] + beta * v[j] - soft * driven[j];
