@@ -142,6 +142,13 @@ export class RecordMotion {
           p2 = q2;
         }
       }
+      if (!last && at.offset[j] === 0) {
+        one.q[j] = p1;
+        one.v[j] = v1;
+        two.q[j] = p2;
+        two.v[j] = v2;
+        continue;
+      }
       one.position = p1;
       one.velocity = v1;
       two.position = p2;
