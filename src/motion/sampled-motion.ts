@@ -67,6 +67,10 @@ export function sampleMotion(
         const into = fields.get(kind) as Float64Array;
         const width = tile.segment.length;
         if (loads.length > 0) addStillFields(member, loads, tile, someTimes, kind, gaugeTime, from);
+        if (width === columns) {
+          into.set(from, firstRow * columns);
+          continue;
+        }
         for (let row = 0; row < someTimes.length; row++) {
           const at = (firstRow + row) * columns + firstColumn;
           into.set(from.subarray(row * width, (row + 1) * width), at);
