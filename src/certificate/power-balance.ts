@@ -2,7 +2,7 @@ import type { WaveMember } from '../members/wave-member.ts';
 import type { AppliedLoad } from '../motion/applied-loads.ts';
 import { dissipatedEnergy } from '../motion/dissipation.ts';
 import { dampingRate } from '../motion/modal-damping.ts';
-import { Instant, type MovedMode } from '../motion/sampled-motion.ts';
+import { Instant, type MovedMode } from '../motion/instant.ts';
 import { GAUSS_20 } from '../numerics/gauss-legendre.ts';
 
 /** Phase of the quickest mode over one panel of time. */
