@@ -33,8 +33,8 @@ export class Instant {
     return this.loads?.driven ?? this.none;
   }
 
-  get drivenRate(): Float64Array {
-    return this.loads?.drivenRate ?? this.none;
+  drivenRate(): Float64Array {
+    return this.loads?.drivenRate() ?? this.none;
   }
 
   expect(modes: readonly ModalCoordinate[]): void {

@@ -26,9 +26,10 @@ export class LoadClock {
   private readonly times: Float64Array;
   private readonly pair = new Float64Array(2);
   private readonly integrates: boolean;
-  /** Σ F p, Σ F p′ of the mode added last, at the times. */
+  /** Σ F p of the mode added last, at the times. */
   readonly driven: Float64Array;
-  readonly drivenRate: Float64Array;
+  private readonly rates: Float64Array;
+  private last: { readonly mode: Mode; readonly factors: readonly number[] } | null = null;
   /** ∫P φ_n(x(t)) of all moving forces up to the times, of the mode added last. */
   readonly movingIntegrals: Float64Array;
 
@@ -50,7 +51,7 @@ export class LoadClock {
       return { value, rate };
     });
     this.driven = new Float64Array(times.length);
-    this.drivenRate = new Float64Array(times.length);
+    this.rates = new Float64Array(times.length);
     this.movingIntegrals = new Float64Array(times.length);
   }
 
@@ -61,37 +62,59 @@ export class LoadClock {
 
   /** Adds the motion of a mode under all loads to its tables. */
   add(mode: Mode, rate: number, factors: readonly number[], table: MotionTable): void {
-    const { driven, drivenRate } = this;
+    const { driven } = this;
+    this.last = { mode, factors };
     driven.fill(0);
-    drivenRate.fill(0);
     if (this.integrates) this.movingIntegrals.fill(0);
     this.loads.forEach((load, index) => {
       const factor = factors[index];
       this.movers[index].add(mode, rate, factor, table[0], table[1]);
       if (load.moving !== null) {
-        this.addMovingDrive(mode, load.moving);
+        this.addMoving(mode, load.moving, driven, null);
         if (!this.integrates) return;
         const integrals = load.moving.integrals(mode, this.times);
         for (let j = 0; j < integrals.length; j++) this.movingIntegrals[j] += integrals[j];
         return;
       }
-      const { value, rate: slope } = this.drives[index];
+      const { value } = this.drives[index];
       for (let j = 0; j < value.length; j++) {
         driven[j] += factor * value[j];
-        drivenRate[j] += factor * slope[j];
       }
     });
   }
 
-  private addMovingDrive(mode: Mode, moving: NonNullable<AppliedLoad['moving']>): void {
+  /** Σ F p′ of the mode added last, at the times; summed when asked for, which only velocities do. */
+  drivenRate(): Float64Array {
+    const { rates, last } = this;
+    rates.fill(0);
+    this.loads.forEach((load, index) => {
+      if (last === null) return;
+      if (load.moving !== null) {
+        this.addMoving(last.mode, load.moving, null, rates);
+        return;
+      }
+      const factor = last.factors[index];
+      const { rate } = this.drives[index];
+      for (let j = 0; j < rate.length; j++) rates[j] += factor * rate[j];
+    });
+    return rates;
+  }
+
+  /** Adds P φ_n of a moving force's place, or its rate P v φ_n′. */
+  private addMoving(
+    mode: Mode,
+    moving: NonNullable<AppliedLoad['moving']>,
+    values: Float64Array | null,
+    rates: Float64Array | null,
+  ): void {
     const { member, pair } = this;
     this.times.forEach((t, j) => {
       const x = moving.placeAt(t);
       if (x === null) return;
       const { i, d } = placeStation(member, x);
       evaluateShape(member, mode.shape, i, d, pair);
-      this.driven[j] += moving.force * pair[0];
-      this.drivenRate[j] += (moving.force * moving.velocity * pair[1]) / member.stiffness[i];
+      if (values) values[j] += moving.force * pair[0];
+      if (rates) rates[j] += (moving.force * moving.velocity * pair[1]) / member.stiffness[i];
     });
   }
 }

@@ -156,7 +156,7 @@ class ModalClock {
 
   /** q less its quasi-static part F p/ω² (or its rate, acceleration, flux coordinate), or its average. */
   fill(kind: FieldKind, into: Float64Array): void {
-    const { q, v, driven, drivenRate } = this.now;
+    const { q, v, driven } = this.now;
     const { lambda, rate } = this;
     const soft = this.lambda > 0 ? 1 / this.lambda : 0;
     if (kind === 'displacement' || kind === 'relativeDisplacement') {
@@ -164,6 +164,7 @@ class ModalClock {
     } else if (this.first !== null && this.second !== null) {
       this.fillAverage(kind, this.first, this.second, into);
     } else if (kind === 'velocity') {
+      const drivenRate = this.now.drivenRate();
       for (let j = 0; j < into.length; j++) into[j] = v[j] - soft * drivenRate[j];
     } else if (kind === 'acceleration') {
       for (let j = 0; j < into.length; j++) into[j] = driven[j] - lambda * q[j] - rate * v[j];
