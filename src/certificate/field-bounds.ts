@@ -169,5 +169,5 @@ export function loadedPlace(
     softness += member.length[i] / member.stiffness[i];
     steepest = Math.max(steepest, 1 / member.stiffness[i]);
   }
-  return { flexibility, softness, steepest, span, gaugeTime };
+  return { flexibility, softness, steepest, span, gaugeTime, length: member.position[member.segmentCount] };
 }

@@ -11,6 +11,8 @@ export interface LoadedPlace {
   readonly flexibility: number;
   /** Σ l/k, m/N. */
   readonly softness: number;
+  /** Length of the member, m. */
+  readonly length: number;
   /** Largest 1/k, 1/N. */
   readonly steepest: number;
   /** Latest time, s. */
@@ -67,8 +69,13 @@ function stillTerms(quantity: Quantity, load: AppliedLoad, place: LoadedPlace): 
       return gaugeTime > 0 ? support.velocity / gaugeTime : 0;
     case 'force':
     case 'stress':
-      return largest * force + support.position / (softness || 1);
+      return largest * force * passed(load, place) + support.position / (softness || 1);
   }
+}
+
+/** Of a moving force the average flux is the difference of two integrals along the member. */
+function passed(load: AppliedLoad, { length, gaugeTime }: LoadedPlace): number {
+  return load.moving !== null && gaugeTime > 0 ? 1 + (2 * length) / (load.moving.pace * gaugeTime) : 1;
 }
 
 /** The rigid-body mode under a push of constant size: ½ a t², a t, a. */

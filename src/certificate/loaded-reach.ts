@@ -3,7 +3,7 @@ import { peakDisplacement, peakFlux, peakSlope } from '../modes/shape-figures.ts
 import type { AppliedLoad } from '../motion/applied-loads.ts';
 import { changeWithin, historyAmount } from '../motion/history-measures.ts';
 import { dampingRate } from '../motion/modal-damping.ts';
-import type { SampledReach } from '../motion/sampled-motion.ts';
+import type { SampledReach } from '../motion/instant.ts';
 import type { Quantity } from '../spec/types.ts';
 import type { KeptMode } from './kept-modes.ts';
 
@@ -60,8 +60,7 @@ export interface ModeReach {
   readonly push: number;
   readonly rate: number;
   readonly gauged: number;
-  /** The share of `push` that moving forces have, and Σ|kicks of q′| in a gap. */
-  readonly carried: number;
+  /** Σ|kicks of q′| in a gap. */
   readonly kicked: number;
 }
 
@@ -85,7 +84,6 @@ export function reachOfMode(
   let kicked = 0;
   let rate = 0;
   let gauged = 0;
-  let carried = 0;
   loads.forEach((load, index) => {
     if (load.moving !== null) {
       const force = Math.abs(load.moving.force);
@@ -95,7 +93,6 @@ export function reachOfMode(
       moved += force * (change * gap + 2 * height);
       rate += force * change;
       gauged += force * Math.min(change * gaugeTime + 2 * height, 2 * height);
-      carried += force * height;
       push += force * height;
       return;
     }
@@ -107,7 +104,7 @@ export function reachOfMode(
     gauged += factor * Math.min(change.gauged, 2 * change.largest);
     push += factor * change.largest;
   });
-  const shared = { omega, push, rate, gauged, carried, kicked };
+  const shared = { omega, push, rate, gauged, kicked };
   if (omega === 0) {
     const velocity = (sampled?.velocity ?? Math.abs(start.velocity)) + push * gap + kicked;
     const position =
@@ -133,7 +130,7 @@ export function peakOfMode(
   gaugeTime: number,
 ): number {
   const { mode } = kept;
-  const { omega, position, velocity, push, rate, gauged, carried, kicked } = reach;
+  const { omega, position, velocity, push, rate, gauged, kicked } = reach;
   const height = peakDisplacement(member, mode.shape);
   const flux = quantity === 'force' || quantity === 'stress';
   const gauge = gaugeTime > 0 ? 1 / gaugeTime : 0;
@@ -159,7 +156,7 @@ export function peakOfMode(
     }
     case 'force':
     case 'stress': {
-      const average = gaugeTime > 0 ? (kicked * gauge + carried) * soft : 0;
+      const average = kicked * gauge * soft;
       const total = Math.hypot(1, member.damping.stiffnessCoefficient * omega);
       return peakFlux(member, mode.shape) * (position * total + average);
     }

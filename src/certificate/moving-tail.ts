@@ -48,7 +48,6 @@ export class MovingTail {
     let within = 0;
     let largest = 0;
     let restWithin = 0;
-    let roughest = 0;
     for (let i = 0; i < n; i++) {
       const k = member.stiffness[i];
       const rho = member.inertia[i];
@@ -63,24 +62,20 @@ export class MovingTail {
       within = Math.max(within, gain[i] * wave);
       // a quasi-static part P G(x, vt) is taken out: D − 1 remains where it is smaller
       restWithin = Math.max(restWithin, this.restGain(i, gain[i], mach[i], ratio) * wave);
-      roughest = Math.max(roughest, travelling > 0 ? Math.sqrt(h) / (rho * travelling) : 0);
     }
     let events = 0;
-    let fluxes = 0;
     for (let j = 0; j <= n; j++) {
       if (this.passTime(j) > span) continue;
       events += this.event(j, gain, mach, lambda);
-      fluxes += this.fluxEvent(j, lambda);
     }
     const displacement = motion.force === 0 ? 0 : Math.abs(motion.force) * (restWithin + events);
     const energy = motion.force === 0 ? 0 : Math.abs(motion.force) * (within + events);
-    const still = motion.force === 0 ? 0 : (Math.abs(motion.force) / v) * (fluxes + 2 * roughest);
     return {
       displacement,
       still: motion.force === 0 ? 0 : Math.abs(motion.force) * largest,
       velocity: Infinity,
       flux: Infinity,
-      gaugeFlux: gaugeTime > 0 ? (2 * drag * energy + still) / gaugeTime : Infinity,
+      gaugeFlux: gaugeTime > 0 ? (2 * drag * energy) / gaugeTime : Infinity,
       gaugeAcceleration: Infinity,
       rmsVelocity: Infinity,
       rmsFlux: Infinity,
@@ -190,22 +185,6 @@ export class MovingTail {
           ? Math.sqrt(g * g + this.tails.fluxTail(q) / (member.stiffness[i] * member.inertia[i] * travelling))
           : Infinity;
       sum += gain[i] * (1 + mach[i]) * wave;
-    }
-    return sum;
-  }
-
-  /** |p|/(ω² ρ) of both sides of a node: what ∫φ dz leaves at the ends of a segment. */
-  private fluxEvent(j: number, lambda: number): number {
-    const { member } = this;
-    const per = BETWEEN + 2;
-    let sum = 0;
-    for (const [i, q] of [
-      [j - 1, per * j - 1],
-      [j, per * j],
-    ]) {
-      if (i < 0 || i >= member.segmentCount) continue;
-      const travelling = member.inertia[i] > 0 ? 1 - member.foundation[i] / (member.inertia[i] * lambda) : 0;
-      sum += travelling > 0 ? Math.sqrt(this.tails.fluxTail(q)) / (member.inertia[i] * travelling) : Infinity;
     }
     return sum;
   }

@@ -2,7 +2,7 @@ import type { WaveMember } from '../members/wave-member.ts';
 import type { AppliedLoad } from '../motion/applied-loads.ts';
 import { dissipatedEnergy } from '../motion/dissipation.ts';
 import { dampingRate } from '../motion/modal-damping.ts';
-import { Instant, type MovedMode } from '../motion/sampled-motion.ts';
+import { Instant, type MovedMode } from '../motion/instant.ts';
 import { GAUSS_20 } from '../numerics/gauss-legendre.ts';
 
 /** Phase of the quickest mode over one panel of time. */
@@ -51,7 +51,7 @@ export class PowerBalance {
     this.instants = Float64Array.from(inside.length > 0 ? pick(inside, most) : [end]);
     this.taken = new Float64Array(this.instants.length);
     this.worked = new Float64Array(this.instants.length);
-    this.at = new Instant(member, loads, this.instants, false);
+    this.at = new Instant(member, loads, this.instants);
 
     const cuts = [...new Set([...panels, ...(loaded ? this.instants : [])])]
       .filter((t) => t >= 0)
@@ -66,7 +66,7 @@ export class PowerBalance {
       });
     }
     this.weights = Float64Array.from(weights);
-    this.nodes = loaded ? new Instant(member, loads, Float64Array.from(nodes), false) : null;
+    this.nodes = loaded ? new Instant(member, loads, Float64Array.from(nodes)) : null;
     this.until = Int32Array.from(this.instants, (t) => nodes.filter((node) => node < t).length);
 
     const last = this.instants[this.instants.length - 1];
@@ -82,7 +82,7 @@ export class PowerBalance {
     this.kickTimes.forEach((time, index) =>
       this.kicks.push({ index, amounts: sudden.get(time) as number[] }),
     );
-    this.kickInstant = this.kickTimes.length > 0 ? new Instant(member, loads, this.kickTimes, false) : null;
+    this.kickInstant = this.kickTimes.length > 0 ? new Instant(member, loads, this.kickTimes) : null;
   }
 
   /** Adds a mode; its q and q′ at the instants. */
@@ -101,6 +101,7 @@ export class PowerBalance {
     }
     this.nodes.run(moved, rate);
     const { v, driven } = this.nodes;
+    const { weights } = this;
     let taken = 0;
     let worked = 0;
     let node = 0;
@@ -108,8 +109,8 @@ export class PowerBalance {
     for (let j = 0; j < this.instants.length; j++) {
       for (; node < this.until[j]; node++) {
         const work = driven[node] * v[node];
-        taken += this.weights[node] * (rate * v[node] * v[node] - work);
-        worked += this.weights[node] * work;
+        taken += weights[node] * (rate * v[node] * v[node] - work);
+        worked += weights[node] * work;
       }
       let sudden = 0;
       for (let k = 0; k < this.kickTimes.length && this.kickTimes[k] <= this.instants[j]; k++)

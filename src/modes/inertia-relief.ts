@@ -91,6 +91,17 @@ export class InertiaRelief {
       : -(this.after[i] + density * (this.member.length[i] - distance));
   }
 
+  /** Flux at (i, distance) under a unit force a metre from the near end up to (j, other), ∫₀ᶻ I_x(y) dy. */
+  influenceIntegral(i: number, distance: number, j: number, other: number): number {
+    const { member } = this;
+    const density = member.inertia[i] / this.mass;
+    const mu = this.before[i] + density * distance;
+    const nu = this.after[i] + density * (member.length[i] - distance);
+    const x = member.position[i] + distance;
+    const z = member.position[j] + other;
+    return z <= x ? -nu * z : mu * (z - x) - nu * x;
+  }
+
   private flexibilityParts(i: number, distance: number): { before: number; after: number } {
     const { member } = this;
     const rest = member.length[i] - distance;

@@ -1,10 +1,11 @@
 import type { WaveMember } from '../members/wave-member.ts';
 import { cosine, meanSquare, meanSquareBetween, sinc } from '../numerics/wave-functions.ts';
 
-/** Numbers kept a node side: displacement, flux and ∫ρu² + ΣMu² gathered, with a common log factor. */
+/** Numbers kept a node side: displacement, flux, ∫u and ∫ρu² + ΣMu² gathered, with a common log factor. */
 interface Branch {
   readonly u: Float64Array;
   readonly g: Float64Array;
+  readonly area: Float64Array;
   readonly mass: Float64Array;
   /** True displacement is e^{log} u; mass gathered goes with e^{2 log}. */
   readonly log: Float64Array;
@@ -38,7 +39,7 @@ export class StaticResponse {
     const n = member.segmentCount;
     this.near = branch(n);
     this.far = branch(n);
-    const flow = { u: 0, g: 0, mass: 0, log: 0 };
+    const flow = { u: 0, g: 0, area: 0, mass: 0, log: 0 };
     begin(flow, member.nearFixed, this.lump(0), member.mass[0]);
     for (let i = 0; i < n; i++) {
       store(this.near, i, flow);
@@ -88,6 +89,21 @@ export class StaticResponse {
     return before
       ? (load.right.u / wronskian) * here.left.g * Math.exp(here.left.log - load.left.log)
       : -(load.left.u / wronskian) * here.right.g * Math.exp(here.right.log - load.right.log);
+  }
+
+  /**
+   * Flux at a station (segment i, distance) under a unit force a metre from the near end up to (j, other),
+   * ∫₀ᶻ I_x(y) dy = −g_R(x) ∫₀ᶻ u_L/W before the station, + g_L(x) ∫ₓᶻ u_R/W beyond it.
+   */
+  influenceIntegral(i: number, distance: number, j: number, other: number): number {
+    const here = this.meet(i, distance);
+    const load = this.meet(j, other);
+    const wronskian = here.right.u * here.left.g + here.left.u * here.right.g;
+    const before = j < i || (j === i && other <= distance);
+    const left = before ? load.left.area * Math.exp(load.left.log - here.left.log) : here.left.area;
+    if (before) return (-here.right.g / wronskian) * left;
+    const right = here.right.area - load.right.area * Math.exp(load.right.log - here.right.log);
+    return (here.left.g * right - here.right.g * left) / wronskian;
   }
 
   /**
@@ -170,6 +186,8 @@ export class StaticResponse {
       const e2 = Math.exp(-2 * a);
       const u = flow.u * 0.5 * (1 + e2) + (e / a) * 0.5 * (1 - e2);
       const g = flow.g * 0.5 * (1 + e2) + impedance * flow.u * 0.5 * (1 - e2);
+      // ∫u = (u₀ + u₁) tanh(a/2)/a
+      flow.area = flow.area * Math.exp(-a) + stretch * (flow.u * Math.exp(-a) + u) * (Math.tanh(0.5 * a) / a);
       flow.mass = flow.mass * e2 + rho * stretch * meanSquareBetween(flow.u * Math.exp(-a), u, a);
       flow.u = u;
       flow.g = g;
@@ -179,13 +197,17 @@ export class StaticResponse {
       const s = sinc(-square);
       flow.mass += rho * stretch * meanSquare(flow.u, e, -square, c, s);
       const g = flow.g * c + bedding * stretch * s * flow.u;
-      flow.u = flow.u * c + e * s;
+      const u = flow.u * c + e * s;
+      const half = 0.5 * Math.sqrt(square);
+      flow.area += 0.5 * stretch * (flow.u + u) * (half > 0 ? Math.tanh(half) / half : 1);
+      flow.u = u;
       flow.g = g;
     }
     const size = flow.u * (k / member.length[i]) + flow.g;
     if (size > 1e70 || size < 1e-70) {
       flow.u /= size;
       flow.g /= size;
+      flow.area /= size;
       flow.mass /= size * size;
       flow.log += Math.log(size);
     }
@@ -195,6 +217,7 @@ export class StaticResponse {
 interface Flow {
   u: number;
   g: number;
+  area: number;
   mass: number;
   log: number;
 }
@@ -202,6 +225,7 @@ interface Flow {
 function begin(flow: Flow, fixed: boolean, flux: number, mass: number): void {
   flow.u = fixed ? 0 : 1;
   flow.g = fixed ? 1 : flux;
+  flow.area = 0;
   flow.mass = fixed ? 0 : mass;
   flow.log = 0;
 }
@@ -210,6 +234,7 @@ function branch(n: number): Branch {
   return {
     u: new Float64Array(n),
     g: new Float64Array(n),
+    area: new Float64Array(n),
     mass: new Float64Array(n),
     log: new Float64Array(n),
   };
@@ -218,10 +243,11 @@ function branch(n: number): Branch {
 function store(into: Branch, i: number, flow: Flow): void {
   into.u[i] = flow.u;
   into.g[i] = flow.g;
+  into.area[i] = flow.area;
   into.mass[i] = flow.mass;
   into.log[i] = flow.log;
 }
 
 function recall(from: Branch, i: number): Flow {
-  return { u: from.u[i], g: from.g[i], mass: from.mass[i], log: from.log[i] };
+  return { u: from.u[i], g: from.g[i], area: from.area[i], mass: from.mass[i], log: from.log[i] };
 }

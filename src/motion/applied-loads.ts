@@ -6,10 +6,11 @@ import { SupportMotion } from './end-motion.ts';
 import { massForm } from './field-energy.ts';
 import { ForcedMotion, type Kick, type LoadMover } from './forced-motion.ts';
 import { historyAt, historyIntegrals, readHistory, type TimeHistory } from './history.ts';
-import { measureParts, measureRecord, type HistoryMeasures } from './history-measures.ts';
+import { measureParts, type HistoryMeasures } from './history-measures.ts';
 import { modalForce, type LoadShape } from './load-shape.ts';
 import { loadedStatic, type LoadedStatic } from './loaded-static.ts';
 import { MovingForceMotion } from './moving-force.ts';
+import { measureRecord } from './record-measures.ts';
 import { RecordMotion, type RecordDrive } from './record-motion.ts';
 import { piecePhase, pieceValue } from './piecewise-field.ts';
 import { place, shapePieces, type GivenShape } from './shape-pieces.ts';
@@ -168,7 +169,10 @@ function recordDrive(record: NonNullable<TimeHistory['record']>): RecordDrive {
 function moverOf(drive: RecordDrive | null, parts: TimeHistory['parts'], times: Float64Array): LoadMover {
   if (drive !== null) {
     const record = new RecordMotion(drive, times);
-    return { add: (mode, rate, factor, q, v) => record.add(mode.frequency.omega, rate, factor, q, v) };
+    return {
+      expect: (modes) => record.expect(modes),
+      add: (mode, rate, factor, q, v) => record.add(mode.frequency.omega, rate, factor, q, v),
+    };
   }
   const forced = new ForcedMotion(parts, [], times);
   return { add: (mode, rate, factor, q, v) => forced.add(mode.frequency.omega, rate, factor, q, v) };

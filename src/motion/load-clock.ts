@@ -3,7 +3,7 @@ import { evaluateShape } from '../modes/mode-shape.ts';
 import type { Mode } from '../modes/mode-series.ts';
 import { placeStation } from '../modes/stations.ts';
 import type { AppliedLoad } from './applied-loads.ts';
-import type { LoadMover } from './forced-motion.ts';
+import type { LoadMover, ModalCoordinate } from './forced-motion.ts';
 
 /** Motion tables of one modal coordinate at one set of times. */
 export type MotionTable = readonly [Float64Array, Float64Array];
@@ -25,17 +25,13 @@ export class LoadClock {
   private readonly drives: Drives[];
   private readonly times: Float64Array;
   private readonly pair = new Float64Array(2);
-  private readonly integrates: boolean;
-  /** Σ F p, Σ F p′ of the mode added last, at the times. */
+  /** Σ F p of the mode added last, at the times. */
   readonly driven: Float64Array;
-  readonly drivenRate: Float64Array;
-  /** ∫P φ_n(x(t)) of all moving forces up to the times, of the mode added last. */
-  readonly movingIntegrals: Float64Array;
+  private readonly rates: Float64Array;
+  private last: { readonly mode: Mode; readonly factors: readonly number[] } | null = null;
 
-  /** @param integrates whether the integrals of moving forces are wanted */
-  constructor(member: WaveMember, loads: readonly AppliedLoad[], times: Float64Array, integrates: boolean) {
+  constructor(member: WaveMember, loads: readonly AppliedLoad[], times: Float64Array) {
     this.member = member;
-    this.integrates = integrates;
     this.loads = loads;
     this.times = times;
     this.movers = loads.map((load) => load.moverAt(times));
@@ -50,42 +46,65 @@ export class LoadClock {
       return { value, rate };
     });
     this.driven = new Float64Array(times.length);
-    this.drivenRate = new Float64Array(times.length);
-    this.movingIntegrals = new Float64Array(times.length);
+    this.rates = new Float64Array(times.length);
+  }
+
+  /** Names the modes added next, at most as many as run through a record at once. */
+  expect(modes: readonly ModalCoordinate[]): void {
+    for (const mover of this.movers) mover.expect?.(modes);
   }
 
   /** Adds the motion of a mode under all loads to its tables. */
   add(mode: Mode, rate: number, factors: readonly number[], table: MotionTable): void {
-    this.driven.fill(0);
-    this.drivenRate.fill(0);
-    this.movingIntegrals.fill(0);
+    const { driven } = this;
+    this.last = { mode, factors };
+    driven.fill(0);
     this.loads.forEach((load, index) => {
       const factor = factors[index];
       this.movers[index].add(mode, rate, factor, table[0], table[1]);
       if (load.moving !== null) {
-        this.addMovingDrive(mode, load.moving);
-        if (!this.integrates) return;
-        const integrals = load.moving.integrals(mode, this.times);
-        for (let j = 0; j < integrals.length; j++) this.movingIntegrals[j] += integrals[j];
+        this.addMoving(mode, load.moving, driven, null);
         return;
       }
-      const { value, rate: slope } = this.drives[index];
+      const { value } = this.drives[index];
       for (let j = 0; j < value.length; j++) {
-        this.driven[j] += factor * value[j];
-        this.drivenRate[j] += factor * slope[j];
+        driven[j] += factor * value[j];
       }
     });
   }
 
-  private addMovingDrive(mode: Mode, moving: NonNullable<AppliedLoad['moving']>): void {
+  /** Σ F p′ of the mode added last, at the times; summed when asked for, which only velocities do. */
+  drivenRate(): Float64Array {
+    const { rates, last } = this;
+    rates.fill(0);
+    this.loads.forEach((load, index) => {
+      if (last === null) return;
+      if (load.moving !== null) {
+        this.addMoving(last.mode, load.moving, null, rates);
+        return;
+      }
+      const factor = last.factors[index];
+      const { rate } = this.drives[index];
+      for (let j = 0; j < rate.length; j++) rates[j] += factor * rate[j];
+    });
+    return rates;
+  }
+
+  /** Adds P φ_n of a moving force's place, or its rate P v φ_n′. */
+  private addMoving(
+    mode: Mode,
+    moving: NonNullable<AppliedLoad['moving']>,
+    values: Float64Array | null,
+    rates: Float64Array | null,
+  ): void {
     const { member, pair } = this;
     this.times.forEach((t, j) => {
       const x = moving.placeAt(t);
       if (x === null) return;
       const { i, d } = placeStation(member, x);
       evaluateShape(member, mode.shape, i, d, pair);
-      this.driven[j] += moving.force * pair[0];
-      this.drivenRate[j] += (moving.force * moving.velocity * pair[1]) / member.stiffness[i];
+      if (values) values[j] += moving.force * pair[0];
+      if (rates) rates[j] += (moving.force * moving.velocity * pair[1]) / member.stiffness[i];
     });
   }
 }

@@ -1,7 +1,7 @@
 import type { WaveMember } from '../members/wave-member.ts';
 import type { Mode } from '../modes/mode-series.ts';
 import { evaluateShape, waveNumberSquare } from '../modes/mode-shape.ts';
-import { historyIntegrals, type HistoryPart } from './history.ts';
+import type { HistoryPart } from './history.ts';
 import { ForcedMotion, type LoadMover } from './forced-motion.ts';
 
 /** One stretch of the passage: distances from the near end of its segment, m, and times, s. */
@@ -83,9 +83,11 @@ export class MovingForceMotion {
     };
   }
 
-  /** ∫P φ_n(x(t)) up to each time. */
-  integrals(mode: Mode, times: Float64Array): Float64Array {
-    return historyIntegrals({ parts: this.partsOf(mode), record: null }, times);
+  /** Place at a time, m, held at the ends before and after the passage. */
+  heldPlaceAt(t: number): number {
+    const total = this.member.position[this.member.segmentCount];
+    const path = Math.min(Math.max(this.pace * (t - this.start), 0), total);
+    return this.backwards ? total - path : path;
   }
 
   /** P φ_n(x(t)) of a mode, one part a segment. */

@@ -1,6 +1,12 @@
 import { sampleBefore, type SampledRecord } from './history.ts';
 import type { RecordDrive } from './record-motion.ts';
 
+/** Limits of |y| and |y′|, m and m/s. */
+interface SupportPeaks {
+  readonly position: number;
+  readonly velocity: number;
+}
+
 /**
  * A support motion given by a long record: accelerations straight between samples, integrated exactly
  * (piecewise cubic displacement), or displacements straight between samples (velocity jumps at each).
@@ -13,6 +19,8 @@ export class RecordedMotion {
   private readonly position: Float64Array;
   private readonly velocity: Float64Array;
   private readonly acceleration: Float64Array | null;
+  /** The peaks asked for last: every limit asks for those of the same span. */
+  private known: { readonly span: number; readonly peaks: SupportPeaks } | null = null;
 
   constructor(record: SampledRecord, quantity: 'displacement' | 'acceleration') {
     const { start, interval: h, values } = record;
@@ -61,7 +69,12 @@ export class RecordedMotion {
   }
 
   /** Limits of |y| and |y′| up to a time. */
-  peaks(span: number): { readonly position: number; readonly velocity: number } {
+  peaks(span: number): SupportPeaks {
+    if (this.known?.span !== span) this.known = { span, peaks: this.findPeaks(span) };
+    return this.known.peaks;
+  }
+
+  private findPeaks(span: number): SupportPeaks {
     const { position, velocity, acceleration, interval: h } = this;
     let placed = 0;
     let moved = 0;

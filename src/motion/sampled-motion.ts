@@ -5,26 +5,10 @@ import { ProductSum } from '../numerics/product-sum.ts';
 import type { Mode } from '../modes/mode-series.ts';
 import { dampingRate } from './modal-damping.ts';
 import type { AppliedLoad } from './applied-loads.ts';
-import { FreeMotionTable } from './free-motion-table.ts';
-import { LoadClock } from './load-clock.ts';
-import type { ModalStart } from './modal-projection.ts';
 import type { FieldKind } from './field-kind.ts';
+import { Instant, type MovedMode, type SampledReach } from './instant.ts';
+import { RECORD_LANES } from './record-motion.ts';
 import { addStillFields } from './still-fields.ts';
-
-/** A mode with its initial state and its factor of each load. */
-export interface MovedMode {
-  readonly mode: Mode;
-  readonly start: ModalStart;
-  readonly factors?: readonly number[];
-}
-
-/** How far a mode goes at the sampled instants (with a gauge time, where its windows begin). */
-export interface SampledReach {
-  /** Largest |(q − ΣF p/ω², q′/ω)| of an elastic mode, largest |q| of the rigid-body mode. */
-  readonly position: number;
-  /** ω times that; largest |q′| of the rigid-body mode. */
-  readonly velocity: number;
-}
 
 /** Modes handled at once; also the length of a summation block. */
 const BLOCK = 64;
@@ -81,6 +65,10 @@ export function sampleMotion(
         const into = fields.get(kind) as Float64Array;
         const width = tile.segment.length;
         if (loads.length > 0) addStillFields(member, loads, tile, someTimes, kind, gaugeTime, from);
+        if (width === columns) {
+          into.set(from, firstRow * columns);
+          continue;
+        }
         for (let row = 0; row < someTimes.length; row++) {
           const at = (firstRow + row) * columns + firstColumn;
           into.set(from.subarray(row * width, (row + 1) * width), at);
@@ -116,8 +104,9 @@ function sumTile(
       const p = flux.subarray(m * columns, (m + 1) * columns);
       sampler.sample(mode.shape, u, p);
       visit(mode, u, p);
+      if (m % RECORD_LANES === 0) clock.expect(modes.slice(from + m, from + m + RECORD_LANES));
       clock.run(modes[from + m]);
-      if (reaches !== null) reaches[from + m] = farther(reaches[from + m], clock.reach(mode.frequency.omega));
+      if (reaches !== null) reaches[from + m] = farther(reaches[from + m], clock.reach());
       for (const [kind, table] of tables) clock.fill(kind, table.subarray(m * rows, (m + 1) * rows));
     }
     for (const [kind, table] of tables) {
@@ -144,7 +133,6 @@ class ModalClock {
   private readonly now: Instant;
   private readonly first: Instant | null;
   private readonly second: Instant | null;
-  private readonly moves: boolean;
   private lambda = 0;
   private rate = 0;
 
@@ -152,56 +140,48 @@ class ModalClock {
     this.member = member;
     this.count = times.length;
     this.gaugeTime = gaugeTime;
-    this.now = new Instant(member, loads, times, false);
+    this.now = new Instant(member, loads, times);
     const begin = times.map((t) => Math.max(0, t - 0.5 * gaugeTime));
-    this.first = gaugeTime > 0 ? new Instant(member, loads, begin, true) : null;
-    this.second =
-      gaugeTime > 0
-        ? new Instant(
-            member,
-            loads,
-            begin.map((t) => t + gaugeTime),
-            true,
-          )
-        : null;
-    this.moves = loads.some((load) => load.moving !== null);
+    const end = begin.map((t) => t + gaugeTime);
+    this.first = gaugeTime > 0 ? new Instant(member, loads, begin) : null;
+    this.second = gaugeTime > 0 ? new Instant(member, loads, end) : null;
+  }
+
+  /** Names the modes run next. */
+  expect(modes: readonly MovedMode[]): void {
+    const coordinates = modes.map(({ mode }) => ({ omega: mode.frequency.omega, rate: this.rateOf(mode) }));
+    for (const instant of [this.now, this.first, this.second]) instant?.expect(coordinates);
   }
 
   run(moved: MovedMode): void {
-    const { omega, order } = moved.mode.frequency;
     this.lambda = moved.mode.shape.lambda;
-    this.rate = dampingRate(this.member.damping, order, omega);
+    this.rate = this.rateOf(moved.mode);
     for (const instant of [this.now, this.first, this.second]) instant?.run(moved, this.rate);
   }
 
   /** How far the mode run last goes. */
-  reach(omega: number): SampledReach {
-    const { q, v, driven } = this.first ?? this.now;
-    const soft = omega > 0 ? 1 / this.lambda : 0;
-    const slow = omega > 0 ? 1 / omega : 0;
-    let position = 0;
-    let velocity = 0;
-    for (let j = 0; j < q.length; j++) {
-      const rest = q[j] - soft * driven[j];
-      position = Math.max(position, rest * rest + (slow * v[j]) ** 2);
-      velocity = Math.max(velocity, Math.abs(v[j]));
-    }
-    position = Math.sqrt(position);
-    return { position, velocity: omega > 0 ? omega * position : velocity };
+  reach(): SampledReach {
+    return (this.first ?? this.now).reach(this.lambda);
+  }
+
+  private rateOf(mode: Mode): number {
+    return dampingRate(this.member.damping, mode.frequency.order, mode.frequency.omega);
   }
 
   /** q less its quasi-static part F p/ω² (or its rate, acceleration, flux coordinate), or its average. */
   fill(kind: FieldKind, into: Float64Array): void {
-    const { q, v, driven, drivenRate } = this.now;
+    const { q, v, driven } = this.now;
+    const { lambda, rate } = this;
     const soft = this.lambda > 0 ? 1 / this.lambda : 0;
     if (kind === 'displacement' || kind === 'relativeDisplacement') {
       for (let j = 0; j < into.length; j++) into[j] = q[j] - soft * driven[j];
     } else if (this.first !== null && this.second !== null) {
       this.fillAverage(kind, this.first, this.second, into);
     } else if (kind === 'velocity') {
+      const drivenRate = this.now.drivenRate();
       for (let j = 0; j < into.length; j++) into[j] = v[j] - soft * drivenRate[j];
     } else if (kind === 'acceleration') {
-      for (let j = 0; j < into.length; j++) into[j] = driven[j] - this.lambda * q[j] - this.rate * v[j];
+      for (let j = 0; j < into.length; j++) into[j] = driven[j] - lambda * q[j] - rate * v[j];
     } else {
       const beta = this.member.damping.stiffnessCoefficient;
       for (let j = 0; j < into.length; j++) into[j] = q[j] + beta * v[j] - soft * driven[j];
@@ -225,49 +205,6 @@ class ModalClock {
       for (let j = 0; j < into.length; j++) {
         into[j] = factor * (second.v[j] - first.v[j] + drag * (second.q[j] - first.q[j]));
       }
-      if (this.moves) {
-        // a moving force has no static part outside: its own mean drive stays with the mode
-        const mean = second.movingIntegral(first);
-        for (let j = 0; j < into.length; j++) into[j] += (soft / tau) * mean[j];
-      }
     }
-  }
-}
-
-/** Tables of one modal coordinate, free motion and loads, at one set of times. */
-export class Instant {
-  readonly q: Float64Array;
-  readonly v: Float64Array;
-  private readonly free: FreeMotionTable;
-  private readonly loads: LoadClock | null;
-  private readonly none: Float64Array;
-
-  constructor(member: WaveMember, loads: readonly AppliedLoad[], times: Float64Array, integrates: boolean) {
-    this.q = new Float64Array(times.length);
-    this.v = new Float64Array(times.length);
-    this.none = new Float64Array(times.length);
-    this.free = new FreeMotionTable(times);
-    this.loads = loads.length > 0 ? new LoadClock(member, loads, times, integrates) : null;
-  }
-
-  get driven(): Float64Array {
-    return this.loads?.driven ?? this.none;
-  }
-
-  get drivenRate(): Float64Array {
-    return this.loads?.drivenRate ?? this.none;
-  }
-
-  run(moved: MovedMode, rate: number): void {
-    const { position, velocity } = moved.start;
-    this.free.fill(position, velocity, moved.mode.frequency.omega, rate, this.q, this.v);
-    this.loads?.add(moved.mode, rate, moved.factors ?? [], [this.q, this.v]);
-  }
-
-  /** ∫P φ_n(x(t)) between the times of another set and these. */
-  movingIntegral(from: Instant): Float64Array {
-    const here = this.loads?.movingIntegrals ?? this.none;
-    const there = from.loads?.movingIntegrals ?? this.none;
-    return here.map((value, j) => value - there[j]);
   }
 }

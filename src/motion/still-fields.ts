@@ -12,8 +12,8 @@ import { supportState } from './support-shape.ts';
  * y(t) r(x) of each support, P G(x, vt) of each moving force, and their rates; with a gauge time their
  * averages over it.
  *
- * The acceleration takes only the support's y″ r: modes carry the rest. The force of a moving force is
- * averaged by its modes alone.
+ * The acceleration takes only the support's y″ r: modes carry the rest. The average of a moving force's flux
+ * is (P/(v τ)) ∫ I_x(z) dz over the stretch it passes, I_x the influence line.
  * Cost: O(times · stations) a load.
  */
 export function addStillFields(
@@ -143,9 +143,14 @@ function addMoving(
   average: boolean,
   field: Float64Array,
 ): void {
-  if (kind === 'acceleration' || (kind === 'force' && average)) return;
+  if (kind === 'acceleration') return;
   const source = canDriftFreely(member) ? new InertiaRelief(member) : new StaticResponse(member);
   const columns = stations.segment.length;
+  const travelled = (t: number): ((q: number) => number) => {
+    const { i: j, d: z } = placeStation(member, moving.heldPlaceAt(t));
+    const factor = moving.force / moving.velocity;
+    return (q) => factor * source.influenceIntegral(stations.segment[q], stations.distance[q], j, z);
+  };
   const at = (t: number): ((q: number) => number) => {
     const x = moving.placeAt(t);
     if (x === null) return () => 0;
@@ -163,8 +168,9 @@ function addMoving(
   };
   for (let row = 0; row < times.length; row++) {
     if (average) {
-      const from = at(begin[row]);
-      const to = at(end[row]);
+      const change = kind === 'force' ? travelled : at;
+      const from = change(begin[row]);
+      const to = change(end[row]);
       for (let q = 0; q < columns; q++)
         field[row * columns + q] += (to(q) - from(q)) / (end[row] - begin[row]);
     } else {

@@ -36,8 +36,8 @@ function peakOf(
     const force = Math.abs(load.moving.force);
     if (quantity === 'displacement' || quantity === 'relativeDisplacement') return force * flexibility;
     if (quantity === 'velocity' && gaugeTime > 0) return (2 * force * flexibility) / gaugeTime;
-    // a moving force's flux is averaged by its modes, its acceleration is theirs too
-    return flux && gaugeTime > 0 ? 0 : Infinity;
+    // no influence line exceeds 1; the acceleration is that of the modes
+    return flux && gaugeTime > 0 ? force : Infinity;
   }
   const { measures, still } = load;
   if (measures === null || still === null) return Infinity;

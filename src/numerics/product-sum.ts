@@ -4,6 +4,8 @@ import { PRODUCT_KERNEL } from './product-kernel.ts';
 const PAGE = 65536;
 /** Rows and columns are handled in panels of four. */
 const PANEL = 4;
+/** Panels of rows packed at once, so that they stay in the cache and are not fetched anew for every sum. */
+const PACKED_PANELS = 128;
 /** Fewer rows than this are summed one by one: panels would be mostly padding. */
 const FEW_ROWS = 3;
 
@@ -50,7 +52,7 @@ export class ProductSum {
       return;
     }
     this.kernel = instantiate();
-    const sizeA = depth * PANEL * this.rowPanels;
+    const sizeA = depth * PANEL * Math.min(PACKED_PANELS, this.rowPanels);
     const sizeB = depth * PANEL * this.columnPanels;
     const sizeC = PANEL * PANEL * this.rowPanels * this.columnPanels;
     const { memory } = this.kernel;
@@ -67,16 +69,20 @@ export class ProductSum {
       this.addFew(n, a, b);
       return;
     }
-    pack(a, this.rows, n, this.packedA);
-    pack(b, this.columns, n, this.packedB);
-    this.kernel.addProduct(
-      n,
-      this.packedA.byteOffset,
-      this.rowPanels,
-      this.packedB.byteOffset,
-      this.columnPanels,
-      this.packedC.byteOffset,
-    );
+    const { kernel, rows, columns, rowPanels, columnPanels, packedA, packedB, packedC } = this;
+    pack(b, columns, n, 0, columns, packedB);
+    for (let panel = 0; panel < rowPanels; panel += PACKED_PANELS) {
+      const panels = Math.min(PACKED_PANELS, rowPanels - panel);
+      pack(a, rows, n, PANEL * panel, Math.min(rows, PANEL * (panel + panels)), packedA);
+      kernel.addProduct(
+        n,
+        packedA.byteOffset,
+        panels,
+        packedB.byteOffset,
+        columnPanels,
+        packedC.byteOffset + 8 * PANEL * PANEL * columnPanels * panel,
+      );
+    }
   }
 
   /** The same sums in the same order, row by row. */
@@ -107,10 +113,17 @@ export class ProductSum {
   }
 }
 
-/** [m][width] to [panel][m][4], the last panel filled up with zeros. */
-function pack(table: Float64Array, width: number, n: number, into: Float64Array): void {
-  for (let first = 0, at = 0; first < width; first += PANEL) {
-    if (first + PANEL <= width) {
+/** Columns [begin, end) of [m][width] to [panel][m][4], the last panel filled up with zeros. */
+function pack(
+  table: Float64Array,
+  width: number,
+  n: number,
+  begin: number,
+  end: number,
+  into: Float64Array,
+): void {
+  for (let first = begin, at = 0; first < end; first += PANEL) {
+    if (first + PANEL <= end) {
       for (let m = 0, from = first; m < n; m++, from += width, at += PANEL) {
         into[at] = table[from];
         into[at + 1] = table[from + 1];
@@ -120,7 +133,7 @@ function pack(table: Float64Array, width: number, n: number, into: Float64Array)
     } else {
       for (let m = 0; m < n; m++) {
         for (let lane = 0; lane < PANEL; lane++, at++) {
-          into[at] = first + lane < width ? table[m * width + first + lane] : 0;
+          into[at] = first + lane < end ? table[m * width + first + lane] : 0;
         }
       }
     }

@@ -18,7 +18,8 @@ import type { StartedSupport } from '../motion/initial-displacement.ts';
 import { readInitialState } from '../motion/initial-state.ts';
 import { stillPeak } from '../motion/still-peaks.ts';
 import type { FieldKind } from '../motion/field-kind.ts';
-import { sampleMotion, type SampledReach } from '../motion/sampled-motion.ts';
+import type { SampledReach } from '../motion/instant.ts';
+import { sampleMotion } from '../motion/sampled-motion.ts';
 import type {
   Field,
   Fields,

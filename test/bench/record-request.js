@@ -51,7 +51,7 @@ export function recordModesRequest() {
   return {
     member,
     series: { modes },
-    shapes: { positions: { count: stations }, quantities: ['displacement'] },
+    shapes: { positions: { count: stations }, quantities: ['displacement', 'force'] },
     participation: { ends: 'near' },
   };
 }

@@ -5,10 +5,10 @@ export function median(values) {
   return sorted[sorted.length >> 1];
 }
 
-/** Median time in ms of each side, measured in turn so that a busy machine slows all alike. */
-export function alternate(sides, rounds) {
+/** Times in ms of each side, measured in turn so that a busy machine slows all alike. */
+function runInTurn(sides, rounds, warm) {
   const times = Object.fromEntries(Object.keys(sides).map((name) => [name, []]));
-  for (const run of Object.values(sides)) run();
+  for (let round = 0; round < warm; round++) for (const run of Object.values(sides)) run();
   for (let round = 0; round < rounds; round++) {
     for (const [name, run] of Object.entries(sides)) {
       const started = performance.now();
@@ -16,7 +16,24 @@ export function alternate(sides, rounds) {
       times[name].push(performance.now() - started);
     }
   }
-  return Object.fromEntries(Object.entries(times).map(([name, list]) => [name, median(list)]));
+  return times;
+}
+
+const medians = (times) =>
+  Object.fromEntries(Object.entries(times).map(([name, list]) => [name, median(list)]));
+
+/** Median time in ms of each side, run in turn. */
+export function alternate(sides, rounds) {
+  return medians(runInTurn(sides, rounds, 1));
+}
+
+/** The same with `over(a, b)`, the median of the rounds' own ratios: a busy minute counts once, not twice. */
+export function alternateRatios(sides, rounds, warm) {
+  const times = runInTurn(sides, rounds, warm);
+  return {
+    times: medians(times),
+    over: (a, b) => median(times[a].map((time, round) => time / times[b][round])),
+  };
 }
 
 /** Prints rows under a title, columns padded to their widest cell. */

@@ -42,6 +42,22 @@ describe('a free bar under a unit force balanced by its inertia', () => {
   });
 });
 
+it('the influence of a free uniform bar integrates to −(1 − ξ) z, then + ξ (z − x)', () => {
+  const relief = new InertiaRelief(
+    waveMember({
+      near: 'free',
+      far: 'free',
+      segments: [
+        [1, 5, 2],
+        [3, 5, 2],
+      ],
+    }),
+  );
+  // L = 4: a force at z < x has the influence −(1 − ξ) on the flux at x, at z > x the influence ξ
+  expect(relief.influenceIntegral(1, 1, 0, 0.6)).toBeCloseTo(-0.5 * 0.6, 14);
+  expect(relief.influenceIntegral(1, 1, 1, 2.5)).toBeCloseTo(-0.5 * 2 + 0.5 * 1.5, 14);
+});
+
 it('G⊥ and H⊥ are the sums of φ²/ω² and p²/ω⁴ over the elastic modes, to their last term', () => {
   const random = new RandomStream(8);
   const member = waveMember({

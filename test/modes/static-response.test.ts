@@ -102,6 +102,32 @@ describe('a string on bedding: hyperbolic functions of κ = √(s/T)', () => {
     expect(roundings(response.flexibility(0, 1.5), 1 / (2 * 8 * 1000))).toBeLessThan(8);
   });
 
+  it('the integral of the influence line up to a place, in weak and strong bedding', () => {
+    // (∞, ∞): a force at z has the influence ∓e^{−κ|x − z|}/2 on the flux at x
+    for (const s of [3, 8e4]) {
+      const member = string([0.3, 0.7], { near: 'free', far: 'free', springs: { 1: 6 } }, s);
+      const response = new StaticResponse(member);
+      for (const x of [0.2, 0.9, 2]) {
+        const [i, d] = seat(member, x);
+        for (const z of [0, 0.1, 0.2, 0.5, 0.9, 1.4, 2, 3]) {
+          const cut = [0, 0.9, x, z].filter((y) => y <= z).toSorted((a, b) => a - b);
+          let expected = 0;
+          for (let c = 1; c < cut.length; c++) {
+            const over = (y: number): number => response.influence(i, d, ...seat(member, y));
+            if (cut[c] > cut[c - 1]) expected += integrate(over, cut[c - 1], cut[c], s > 10 ? 200 : 4);
+          }
+          const found = response.influenceIntegral(i, d, ...seat(member, z));
+          expect(Math.abs(found - expected), `s = ${s}, x = ${x}, z = ${z}`).toBeLessThan(1e-12);
+        }
+      }
+      if (s > 10) {
+        const kappa = Math.sqrt(s / 8);
+        const whole = response.influenceIntegral(...seat(member, 2), ...seat(member, 2));
+        expect(whole).toBeCloseTo(-0.5 / kappa, 12);
+      }
+    }
+  });
+
   it('H is the inertia integral of the influence line, node masses on their side', () => {
     const member = waveMember({
       segments: [

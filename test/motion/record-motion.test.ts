@@ -2,7 +2,8 @@ import { describe, expect, it } from 'vitest';
 import { SupportMotion } from '../../src/motion/end-motion.ts';
 import { ForcedMotion } from '../../src/motion/forced-motion.ts';
 import { historyAt, historyIntegrals, recordParts, readHistory } from '../../src/motion/history.ts';
-import { measureParts, measureRecord } from '../../src/motion/history-measures.ts';
+import { measureParts } from '../../src/motion/history-measures.ts';
+import { measureRecord } from '../../src/motion/record-measures.ts';
 import { RecordMotion } from '../../src/motion/record-motion.ts';
 import type { History } from '../../src/spec/types.ts';
 import { RandomStream } from '../support/random.ts';
@@ -57,6 +58,37 @@ describe('a record, as a recurrence and as parts', () => {
       expect(historyAt(long, t).value).toBeCloseTo(historyAt(short, t).value, 12);
       expect(sums[0][j]).toBeCloseTo(sums[1][j], 13);
     });
+  });
+
+  it('modes in company move as each alone, to the last bit', () => {
+    const modes = [
+      { omega: 9, rate: 0.2 },
+      { omega: 2000, rate: 5 },
+    ];
+    const drag = drive.slope.map((slope) => 0.3 * slope);
+    const kick = Float64Array.from({ length: drag.length + 1 }, () => random.between(-1, 1));
+    for (const one of [drive, { ...drive, curve: drag, after: 0.2 }, { ...drive, curve: drag, kick }]) {
+      const together = new RecordMotion(one, times);
+      together.expect(modes);
+      for (const { omega, rate } of modes) {
+        const [q, v, p, w] = [0, 1, 2, 3].map(() => new Float64Array(times.length));
+        together.add(omega, rate, 0.7, q, v);
+        new RecordMotion(one, times).add(omega, rate, 0.7, p, w);
+        expect([q, v]).toEqual([p, w]);
+        expect(q.some((x) => x !== 0)).toBe(true);
+      }
+    }
+  });
+
+  it('the largest value of a record is its largest sample, the last one too', () => {
+    const of = (values: number[]): number =>
+      measureRecord({
+        ...drive,
+        value: Float64Array.from(values.slice(0, -1)),
+        slope: Float64Array.from(values.slice(1), (value, i) => (value - values[i]) / drive.interval),
+      }).largest;
+    expect(of([0, 1, -1, 0.5])).toBeCloseTo(1, 14);
+    expect(of([0, 1, -1, -3])).toBeCloseTo(3, 14);
   });
 
   it('measures of the record hold those of its parts, and brute-force sums', () => {
