@@ -47,6 +47,7 @@ export class MovingTail {
     const mach = new Float64Array(n);
     let within = 0;
     let largest = 0;
+    let steepest = 0;
     let restWithin = 0;
     for (let i = 0; i < n; i++) {
       const k = member.stiffness[i];
@@ -59,6 +60,7 @@ export class MovingTail {
       const wave =
         travelling > 0 ? Math.sqrt(g + h / (k * rho * travelling)) : rho === 0 ? Math.sqrt(g) : Infinity;
       largest = Math.max(largest, wave);
+      steepest = Math.max(steepest, Math.sqrt(h) / k);
       within = Math.max(within, gain[i] * wave);
       // a quasi-static part P G(x, vt) is taken out: D − 1 remains where it is smaller
       restWithin = Math.max(restWithin, this.restGain(i, gain[i], mach[i], ratio) * wave);
@@ -77,8 +79,9 @@ export class MovingTail {
       flux: Infinity,
       gaugeFlux: gaugeTime > 0 ? (2 * drag * energy) / gaugeTime : Infinity,
       gaugeAcceleration: Infinity,
-      rmsVelocity: Infinity,
-      rmsFlux: Infinity,
+      // the factors of √ΔG are √Σω²r²: what the r.m.s. over the member is made of
+      rmsVelocity: energy + Math.abs(motion.force) * v * steepest,
+      rmsFlux: member.damping.stiffnessCoefficient > 0 ? Infinity : displacement,
       rmsDisplacement: this.sonicMean(nextOmega, span),
     };
   }

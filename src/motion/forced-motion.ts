@@ -1,4 +1,3 @@
-import type { Mode } from '../modes/mode-series.ts';
 import { FreeMotionTable } from './free-motion-table.ts';
 import type { HistoryPart } from './history.ts';
 import { linearStep } from './linear-step.ts';
@@ -10,19 +9,6 @@ import { exponential, multiply, type Complex } from '../numerics/complex.ts';
 export interface Kick {
   readonly time: number;
   readonly amount: number;
-}
-
-/** ω and damping rate of q″ + c q′ + ω² q = p. */
-export interface ModalCoordinate {
-  readonly omega: number;
-  readonly rate: number;
-}
-
-/** Adds a mode's motion from rest under one load to tables of q and q′. */
-export interface LoadMover {
-  /** Names the modes added next, so that a long record is run through once for them together. */
-  expect?(modes: readonly ModalCoordinate[]): void;
-  add(mode: Mode, rate: number, factor: number, q: Float64Array, v: Float64Array): void;
 }
 
 /** A stretch between two events with the sampled times in it. */

@@ -1,7 +1,7 @@
 import type { WaveMember } from '../members/wave-member.ts';
 import type { Mode } from '../modes/mode-series.ts';
 import type { AppliedLoad } from './applied-loads.ts';
-import type { ModalCoordinate } from './forced-motion.ts';
+import type { ModalCoordinate } from './load-mover.ts';
 import { FreeMotionTable } from './free-motion-table.ts';
 import { LoadClock } from './load-clock.ts';
 import type { ModalStart } from './modal-projection.ts';

@@ -3,7 +3,7 @@ import { evaluateShape } from '../modes/mode-shape.ts';
 import type { Mode } from '../modes/mode-series.ts';
 import { placeStation } from '../modes/stations.ts';
 import type { AppliedLoad } from './applied-loads.ts';
-import type { LoadMover, ModalCoordinate } from './forced-motion.ts';
+import type { LoadMover, ModalCoordinate } from './load-mover.ts';
 
 /** Motion tables of one modal coordinate at one set of times. */
 export type MotionTable = readonly [Float64Array, Float64Array];

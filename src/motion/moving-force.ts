@@ -2,7 +2,8 @@ import type { WaveMember } from '../members/wave-member.ts';
 import type { Mode } from '../modes/mode-series.ts';
 import { evaluateShape, waveNumberSquare } from '../modes/mode-shape.ts';
 import type { HistoryPart } from './history.ts';
-import { ForcedMotion, type LoadMover } from './forced-motion.ts';
+import { ForcedMotion } from './forced-motion.ts';
+import type { LoadMover } from './load-mover.ts';
 
 /** One stretch of the passage: distances from the near end of its segment, m, and times, s. */
 export interface Passage {

@@ -1,4 +1,4 @@
-import type { ModalCoordinate } from './forced-motion.ts';
+import type { ModalCoordinate } from './load-mover.ts';
 import { FreeMotionTable } from './free-motion-table.ts';
 import { linearStep, type LinearStep } from './linear-step.ts';
 import { RecordTimes } from './record-times.ts';
