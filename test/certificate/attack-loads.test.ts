@@ -22,11 +22,11 @@ it(
     const ratios = new Map<string, number[]>();
     const families = new Map<string, number>();
     for (let index = 0; index < CASES; index++) {
-      const { family, short, long } = loadAttackCase(SEED, index);
+      const { family, short, long, weights } = loadAttackCase(SEED, index);
       const [kind] = family.split(', ');
       families.set(kind, (families.get(kind) ?? 0) + 1);
       try {
-        const comparison = compareSeries(solveResponses(short), solveResponses(long));
+        const comparison = compareSeries(solveResponses(short), solveResponses(long), weights);
         for (const { claim, where, found, allowed } of comparison.violations.slice(0, 3)) {
           failures.push(`case ${index} (${family}), ${claim} at ${where}: ${found} > ${allowed}`);
         }

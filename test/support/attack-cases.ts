@@ -45,7 +45,7 @@ function ownTime(member: PlainMember): number {
 }
 
 /** Midpoints of a fine grid and what they stand for: mass, and compliance. Node masses are added. */
-function fineGrid(member: PlainMember, cells: number): { positions: number[]; weights: RmsWeights } {
+export function fineGrid(member: PlainMember, cells: number): { positions: number[]; weights: RmsWeights } {
   const nodes = nodePositions(member);
   const positions: number[] = [];
   const velocity: number[] = [];

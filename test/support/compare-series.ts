@@ -29,7 +29,7 @@ function numbersIn(value: unknown, path: string, visit: (x: number, path: string
   }
 }
 
-/** Weights of the sampled positions for an r.m.s. over the member: mass for velocity, compliance for force. */
+/** Weights of the sampled positions for an r.m.s. over the member: mass for displacement and velocity, compliance for force. */
 export interface RmsWeights {
   readonly velocity: readonly number[];
   readonly force: readonly number[];
@@ -85,8 +85,9 @@ export function compareSeries(
       continue;
     }
     if (a.boundKind === 'rms') {
-      if (weights !== undefined && (quantity === 'velocity' || quantity === 'force')) {
-        compareRms(quantity, a, b, weights[quantity], demand, raise, times);
+      if (weights !== undefined && quantity !== 'acceleration') {
+        const weight = quantity === 'force' ? weights.force : weights.velocity;
+        compareRms(quantity, a, b, weight, demand, raise, times);
       }
       continue;
     }

@@ -1,5 +1,5 @@
 import type { Quantity } from '../../src/spec/types.ts';
-import type { AttackCase } from './attack-cases.ts';
+import { fineGrid, type AttackCase } from './attack-cases.ts';
 import { lengthOf, nodePositions, totalMass, travelTime, type PlainMember } from './plain-member.ts';
 import { randomLoads } from './random-loads.ts';
 import { randomDamping, randomMember, type MemberFamily } from './random-members.ts';
@@ -49,18 +49,24 @@ export function loadAttackCase(seed: number, index: number): AttackCase {
     'force',
     'acceleration',
   ];
-  const gaugeTime = random.chance(0.4) ? 0 : time * random.decades(-2, 0.5);
+  const fine = random.chance(0.06);
+  const gaugeTime = fine || random.chance(0.4) ? 0 : time * random.decades(-2, 0.5);
   const count = random.chance(0.85) ? random.integer(1, 12) : random.integer(12, 40);
-  const longer = random.chance(0.1) ? Math.max(8 * count, 400) : Math.max(5 * count, 80);
+  const longer = fine
+    ? Math.max(160, 4 * count)
+    : random.chance(0.1)
+      ? Math.max(8 * count, 400)
+      : Math.max(5 * count, 80);
   const latest = random.decades(-0.5, 1.3);
   const times = [0, ...Array.from({ length: 9 }, () => random.unit() * latest * 2 * time)].toSorted(
     (a, b) => a - b,
   );
+  const grid = fine ? fineGrid(member, 3 * longer) : undefined;
   const common = {
     member,
     ...(damping && { damping }),
     initial,
-    positions: stations(random, member),
+    positions: grid?.positions ?? stations(random, member),
     times,
     quantities,
     gaugeTime,
@@ -70,5 +76,6 @@ export function loadAttackCase(seed: number, index: number): AttackCase {
     family: `${family}, ${kinds}`,
     short: { ...responsesRequest({ ...common, modes: count, checks: random.chance(0.1) }), loads },
     long: { ...responsesRequest({ ...common, modes: longer }), loads },
+    ...(grid && { weights: grid.weights }),
   };
 }
