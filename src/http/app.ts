@@ -9,19 +9,30 @@ import {
   type FastifyRequest,
 } from 'fastify';
 import { fault, faultRecord } from '../faults/fault.ts';
+import type { SolverPool } from '../pool/solver-pool.ts';
 import { readBody } from './body.ts';
 import { clientErrorHandler } from './client-errors.ts';
 import { addDocumentResources, type ReferenceDocument } from './document-resources.ts';
 import { addHealthResources } from './health-resources.ts';
 import { addProblemReplies, pathOf, sendProblem } from './problem-replies.ts';
 import { requestId } from './request-id.ts';
-import { knowAllMethods } from './resource.ts';
+import { Answers } from '../jobs/answers.ts';
+import type { ResultStore } from '../jobs/result-store.ts';
+import { addAnswerPreferences } from './answer-preferences.ts';
+import { pinRequests, type OwnRequest } from './pinned-results.ts';
+import { knowAllMethods, templateOf } from './resource.ts';
+import { addResultResource } from './result-resource.ts';
 import { addSolveResource, type SolveOptions } from './solve-resource.ts';
 
 /** Time that a request may take to arrive, s. */
 const requestTimeout = 60;
 
-export interface AppOptions extends SolveOptions {
+export interface AppOptions extends Omit<SolveOptions, 'answers'> {
+  readonly pool: SolverPool;
+  /** Where results are kept under their digests. */
+  readonly results: ResultStore;
+  /** Requests of the service's own pages; their results are never forgotten. */
+  readonly ownRequests?: readonly OwnRequest[];
   /** Largest body in bytes. */
   readonly bodyLimit: number;
   /** Seconds that work under way may take once the service is being stopped. */
@@ -66,14 +77,25 @@ export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
 
   const paths = new Set<string>();
   app.addHook('onRoute', (route) => {
-    paths.add(route.url);
+    paths.add(templateOf(route.url));
   });
   addRequestLog(app);
   addProblemReplies(app, pool, () => [...paths]);
   addGracefulStop(app, options);
-  addSolveResource(app, '/v1/modes', 'modes', options);
-  addSolveResource(app, '/v1/responses', 'responses', options);
-  addSolveResource(app, '/v1/transfer-functions', 'transfer-functions', options);
+  await pinRequests(options.results, options.ownRequests ?? [], options);
+  const answers = new Answers({
+    pool,
+    store: options.results,
+    version: options.version,
+    longest: options.solveDeadline,
+    onStoreError: (error) => app.log.error({ err: error }, 'result store failed'),
+  });
+  const solving = { ...options, answers };
+  addAnswerPreferences(app);
+  addSolveResource(app, '/v1/modes', 'modes', solving);
+  addSolveResource(app, '/v1/responses', 'responses', solving);
+  addSolveResource(app, '/v1/transfer-functions', 'transfer-functions', solving);
+  addResultResource(app, solving);
   addHealthResources(app, pool);
   addDocumentResources(app, document);
   return app;
