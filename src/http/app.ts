@@ -11,9 +11,11 @@ import {
 import { fault, faultRecord } from '../faults/fault.ts';
 import { readBody } from './body.ts';
 import { clientErrorHandler } from './client-errors.ts';
-import { addDocumentResources, type ReferenceDocument } from './document-resources.ts';
+import { addDocumentResources } from './document-resources.ts';
 import { addHealthResources } from './health-resources.ts';
+import { addPageResources, type PageOptions } from './page-resources.ts';
 import { addProblemReplies, pathOf, sendProblem } from './problem-replies.ts';
+import { addReferencePage, isPagePart } from './reference-page.ts';
 import { requestId } from './request-id.ts';
 import { knowAllMethods } from './resource.ts';
 import { addSolveResource, type SolveOptions } from './solve-resource.ts';
@@ -21,12 +23,9 @@ import { addSolveResource, type SolveOptions } from './solve-resource.ts';
 /** Time that a request may take to arrive, s. */
 const requestTimeout = 60;
 
-export interface AppOptions extends SolveOptions {
-  /** Largest body in bytes. */
-  readonly bodyLimit: number;
+export interface AppOptions extends SolveOptions, PageOptions {
   /** Seconds that work under way may take once the service is being stopped. */
   readonly stopGrace: number;
-  readonly document: ReferenceDocument;
   readonly logger?: FastifyBaseLogger;
 }
 
@@ -66,7 +65,7 @@ export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
 
   const paths = new Set<string>();
   app.addHook('onRoute', (route) => {
-    paths.add(route.url);
+    if (!isPagePart(route.url)) paths.add(route.url);
   });
   addRequestLog(app);
   addProblemReplies(app, pool, () => [...paths]);
@@ -76,6 +75,8 @@ export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
   addSolveResource(app, '/v1/transfer-functions', 'transfer-functions', options);
   addHealthResources(app, pool);
   addDocumentResources(app, document);
+  addPageResources(app, options);
+  await addReferencePage(app, document);
   return app;
 }
 

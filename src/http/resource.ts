@@ -2,6 +2,7 @@ import { METHODS } from 'node:http';
 import type { FastifyInstance, RouteHandlerMethod } from 'fastify';
 import { fault } from '../faults/fault.ts';
 import { requireAcceptable, requireJsonBody } from './media.ts';
+import { pathOf } from './problem-replies.ts';
 
 export interface Resource {
   readonly url: string;
@@ -18,7 +19,6 @@ export interface Resource {
  */
 export function addResource(app: FastifyInstance, { url, offers, get, post }: Resource): void {
   const methods = [...(get === undefined ? [] : ['GET', 'HEAD']), ...(post === undefined ? [] : ['POST'])];
-  const allow = [...methods, 'OPTIONS'].join(', ');
   if (get !== undefined) {
     app.get(url, { onRequest: async (request) => requireAcceptable(request, offers) }, get);
   }
@@ -29,13 +29,27 @@ export function addResource(app: FastifyInstance, { url, offers, get, post }: Re
     };
     app.post(url, { onRequest }, post);
   }
+  refuseOtherMethods(app, url, methods);
+}
+
+/**
+ * Answers every method that a resource does not have with 405 and `Allow`, OPTIONS with `Allow` alone.
+ *
+ * @param methods that it has
+ */
+export function refuseOtherMethods(app: FastifyInstance, url: string, methods: readonly string[]): void {
+  const allow = [...methods, 'OPTIONS'].join(', ');
   app.options(url, async (_request, reply) => reply.code(204).header('allow', allow).send());
   app.route({
     method: app.supportedMethods.filter((method) => method !== 'OPTIONS' && !methods.includes(method)),
     url,
     onRequest: async (request, reply) => {
       reply.header('allow', allow);
-      throw fault('method-not-allowed', '', { path: url, method: request.method, methods: allow });
+      throw fault('method-not-allowed', '', {
+        path: pathOf(request),
+        method: request.method,
+        methods: allow,
+      });
     },
     handler: async () => undefined,
   });

@@ -34,6 +34,8 @@ export const homesOfPackage: Readonly<Record<string, readonly string[]>> = {
   fastify: ['http', 'main.ts'],
   '@fastify/accepts': ['http'],
   '@fastify/helmet': ['http'],
+  '@fastify/swagger': ['http'],
+  '@fastify/swagger-ui': ['http'],
   pino: ['http', 'main.ts'],
   'close-with-grace': ['main.ts'],
   'env-schema': ['settings.ts'],
