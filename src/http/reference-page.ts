@@ -23,7 +23,8 @@ const policy = {
 /** `/docs`: the reference document as a page on which every request can be tried. */
 export async function addReferencePage(app: FastifyInstance, document: ReferenceDocument): Promise<void> {
   await app.register(async (scope) => {
-    const urls = new Set<string>();
+    // The framework does not tell of the page's own address with a slash.
+    const urls = new Set([`${prefix}/`]);
     scope.addHook('onRoute', ({ url, method }) => {
       if ([method].flat().includes('GET')) urls.add(url);
     });
@@ -41,6 +42,8 @@ export async function addReferencePage(app: FastifyInstance, document: Reference
         layout: 'BaseLayout',
         validatorUrl: null,
         tryItOutEnabled: true,
+        // Colouring an answer of a megabyte would hold the page for the better part of a minute.
+        syntaxHighlight: false,
         docExpansion: 'list',
         defaultModelsExpandDepth: 0,
       },
@@ -54,7 +57,8 @@ function addAssetRules(scope: FastifyInstance): void {
   scope.addHook('onRequest', async (request, reply) => {
     const path = pathOf(request);
     if (path === `${prefix}/static/`) return reply.callNotFound();
-    if (path.includes('%00')) throw fault('malformed-http', '', { reason: 'the path holds a null character' });
+    if (path.includes('%00'))
+      throw fault('malformed-http', '', { reason: 'the path holds a null character' });
     // Ranges are not offered, and a wrong one would be refused.
     delete request.raw.headers.range;
   });

@@ -2,6 +2,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { buildApp } from '../../src/http/app.ts';
 import { SolverPool } from '../../src/pool/solver-pool.ts';
 import { trialWorker } from '../pool/trial-pool.ts';
+import { trialPages } from './trial-pages.ts';
 import { startTrialService, type TrialService } from './trial-service.ts';
 
 let service: TrialService;
@@ -30,7 +31,7 @@ describe('the health of the service', () => {
       solveDeadline: 1,
       bodyLimit: 1024,
       stopGrace: 1,
-      document: { yaml: '', json: '' },
+      ...trialPages,
     });
     const live = await app.inject('/health/live');
     expect(live.statusCode).toBe(200);

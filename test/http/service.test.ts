@@ -164,6 +164,9 @@ describe('the service as it is started', () => {
     };
     expect(document.openapi).toMatch(/^3\.1/);
     expect(Object.keys(document.paths).toSorted()).toEqual([
+      '/',
+      '/docs',
+      '/examples/{name}.json',
       '/health/live',
       '/health/ready',
       '/openapi.json',

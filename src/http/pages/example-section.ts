@@ -17,7 +17,10 @@ export function exampleSection(
   loading: Loading,
 ): Markup {
   const { name, title, url, text } = example;
-  const command = `curl -s ${origin}${exampleUrl(name)} | curl -s ${origin}${url} -H 'content-type: application/json' -d @-`;
+  const command = [
+    `curl -s ${origin}${exampleUrl(name)} |`,
+    `  curl -s ${origin}${url} -H 'content-type: application/json' -d @-`,
+  ].join('\n');
   return html`
     <article id="${name}" aria-labelledby="${name}-title">
       <header>
