@@ -5,6 +5,7 @@ import { pino } from 'pino';
 import { readRequest } from './contract/read-request.ts';
 import { buildApp } from './http/app.ts';
 import type { Example } from './http/pages/example.ts';
+import { EmbeddedResults } from './jobs/embedded-results.ts';
 import { SolverPool } from './pool/solver-pool.ts';
 import { readSettings, type Settings } from './settings.ts';
 
@@ -20,13 +21,21 @@ const pool = new SolverPool({
   memoryLimit: settings.MEMORY_LIMIT,
   onWorkerError: (error) => logger.error({ err: error }, 'worker failed'),
 });
+const document = { yaml: readBeside('openapi.yaml'), json: readBeside('openapi.json') };
+const mebibyte = 1024 * 1024;
 const app = await buildApp({
   pool,
+  results: new EmbeddedResults({
+    requests: settings.RESULTS_COUNT,
+    requestBytes: settings.RESULTS_MEMORY * mebibyte,
+    answerBytes: settings.ANSWERS_MEMORY * mebibyte,
+  }),
+  version: (JSON.parse(document.json) as { info: { version: string } }).info.version,
   readRequest,
   solveDeadline: settings.SOLVE_DEADLINE,
   bodyLimit: settings.BODY_LIMIT,
   stopGrace: settings.STOP_GRACE,
-  document: { yaml: readBeside('openapi.yaml'), json: readBeside('openapi.json') },
+  document,
   examples: JSON.parse(readBeside('examples.json')) as Example[],
   logger,
 });

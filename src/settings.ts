@@ -14,6 +14,11 @@ export interface Settings {
   readonly BODY_LIMIT: number;
   /** s */
   readonly STOP_GRACE: number;
+  readonly RESULTS_COUNT: number;
+  /** MiB */
+  readonly RESULTS_MEMORY: number;
+  /** MiB */
+  readonly ANSWERS_MEMORY: number;
   readonly LOG_LEVEL: string;
 }
 
@@ -40,6 +45,9 @@ const properties: Readonly<Record<keyof Settings, object>> = {
   MEMORY_LIMIT: integer(64, 65_536, 512),
   BODY_LIMIT: integer(1024, 8 * 1024 * 1024, 8 * 1024 * 1024),
   STOP_GRACE: seconds(3600, 10),
+  RESULTS_COUNT: integer(1, 10_000_000, 10_000),
+  RESULTS_MEMORY: integer(1, 65_536, 64),
+  ANSWERS_MEMORY: integer(0, 65_536, 128),
   LOG_LEVEL: { enum: ['fatal', 'error', 'warn', 'info', 'debug', 'trace', 'silent'], default: 'info' },
 };
 

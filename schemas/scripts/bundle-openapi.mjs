@@ -52,7 +52,7 @@ function inlineExamples(value) {
   }
 }
 
-/** Every example of a request: its name, what it shows, where it is sent, its text as it is written. */
+/** Every example of a request: its name, what it shows, its operation, its text as it is written. */
 function listExamples() {
   const { paths } = parse(readFileSync(new URL('openapi.yaml', top), 'utf8'));
   return Object.entries(paths).flatMap(([url, { post }]) =>
@@ -60,7 +60,7 @@ function listExamples() {
       ({ summary, externalValue }) => ({
         name: basename(externalValue, '.json'),
         title: summary,
-        url,
+        operation: basename(url),
         text: readFileSync(new URL(externalValue, top), 'utf8'),
       }),
     ),

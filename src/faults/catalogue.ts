@@ -1,6 +1,7 @@
 import { formFaultWordings } from './form-faults.ts';
 import { loadFaultWordings } from './load-faults.ts';
 import { memberFaultWordings } from './member-faults.ts';
+import { representationFaultWordings } from './representation-faults.ts';
 import { senseFaultWordings } from './sense-faults.ts';
 import { serviceFaultWordings } from './service-faults.ts';
 
@@ -14,6 +15,7 @@ export const catalogue = {
   ...memberFaultWordings,
   ...loadFaultWordings,
   ...serviceFaultWordings,
+  ...representationFaultWordings,
 
   'pull-without-restraint': {
     title: 'A pull needs a restraint',

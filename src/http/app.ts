@@ -9,21 +9,31 @@ import {
   type FastifyRequest,
 } from 'fastify';
 import { fault, faultRecord } from '../faults/fault.ts';
+import type { SolverPool } from '../pool/solver-pool.ts';
 import { readBody } from './body.ts';
 import { clientErrorHandler } from './client-errors.ts';
 import { addDocumentResources } from './document-resources.ts';
 import { addHealthResources } from './health-resources.ts';
-import { addPageResources, type PageOptions } from './page-resources.ts';
 import { addProblemReplies, pathOf, sendProblem } from './problem-replies.ts';
-import { addReferencePage, isPagePart } from './reference-page.ts';
 import { requestId } from './request-id.ts';
-import { knowAllMethods } from './resource.ts';
+import { Answers } from '../jobs/answers.ts';
+import type { ResultStore } from '../jobs/result-store.ts';
+import { addAnswerPreferences } from './answer-preferences.ts';
+import { addPageResources, type PageOptions } from './page-resources.ts';
+import { pinRequests } from './pinned-results.ts';
+import { addReferencePage, isPagePart } from './reference-page.ts';
+import { knowAllMethods, templateOf } from './resource.ts';
+import { addResultResource } from './result-resource.ts';
+import { resultPath } from './send-answer.ts';
 import { addSolveResource, type SolveOptions } from './solve-resource.ts';
 
 /** Time that a request may take to arrive, s. */
 const requestTimeout = 60;
 
-export interface AppOptions extends SolveOptions, PageOptions {
+export interface AppOptions extends Omit<SolveOptions, 'answers'>, Omit<PageOptions, 'resultUrls'> {
+  readonly pool: SolverPool;
+  /** Where results are kept under their digests. */
+  readonly results: ResultStore;
   /** Seconds that work under way may take once the service is being stopped. */
   readonly stopGrace: number;
   readonly logger?: FastifyBaseLogger;
@@ -31,7 +41,7 @@ export interface AppOptions extends SolveOptions, PageOptions {
 
 /** The service as an app that is ready to listen; closing it stops the pool gracefully. */
 export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
-  const { pool, bodyLimit, document, logger } = options;
+  const { pool, bodyLimit, document, examples, logger } = options;
   const app = fastify({
     ...(logger === undefined ? {} : { loggerInstance: logger }),
     logController: new LogController({ disableRequestLogging: true }),
@@ -65,17 +75,32 @@ export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
 
   const paths = new Set<string>();
   app.addHook('onRoute', (route) => {
-    if (!isPagePart(route.url)) paths.add(route.url);
+    if (!isPagePart(route.url)) paths.add(templateOf(route.url));
   });
   addRequestLog(app);
   addProblemReplies(app, pool, () => [...paths]);
   addGracefulStop(app, options);
-  addSolveResource(app, '/v1/modes', 'modes', options);
-  addSolveResource(app, '/v1/responses', 'responses', options);
-  addSolveResource(app, '/v1/transfer-functions', 'transfer-functions', options);
+  const digests = await pinRequests(
+    options.results,
+    examples.map(({ operation, text }) => ({ operation, body: JSON.parse(text) as unknown })),
+    options,
+  );
+  const answers = new Answers({
+    pool,
+    store: options.results,
+    version: options.version,
+    longest: options.solveDeadline,
+    onStoreError: (error) => app.log.error({ err: error }, 'result store failed'),
+  });
+  const solving = { ...options, answers };
+  addAnswerPreferences(app);
+  addSolveResource(app, '/v1/modes', 'modes', solving);
+  addSolveResource(app, '/v1/responses', 'responses', solving);
+  addSolveResource(app, '/v1/transfer-functions', 'transfer-functions', solving);
+  addResultResource(app, solving);
   addHealthResources(app, pool);
   addDocumentResources(app, document);
-  addPageResources(app, options);
+  addPageResources(app, { ...options, resultUrls: digests.map(resultPath) });
   await addReferencePage(app, document);
   return app;
 }

@@ -3,12 +3,15 @@ import { fault } from '../faults/fault.ts';
 
 const wanted = 'as application/json in UTF-8, without a content coding';
 
-/** Refuses a request whose Accept header admits none of what is offered (RFC 9110, section 12.5.1). */
-export function requireAcceptable(request: FastifyRequest, offered: readonly string[]): void {
-  if (request.accepts().type([...offered]) === false) {
-    const accept = JSON.stringify(request.headers.accept);
-    throw fault('not-acceptable', '', { accept, offered: offered.join(', ') });
-  }
+/**
+ * The media type among those offered that the Accept header likes best (RFC 9110, section 12.5.1);
+ * refuses a request that admits none of them.
+ */
+export function requireAcceptable(request: FastifyRequest, offered: readonly string[]): string {
+  const type = request.accepts().type([...offered]);
+  if (typeof type === 'string') return type;
+  const accept = JSON.stringify(request.headers.accept);
+  throw fault('not-acceptable', '', { accept, offered: offered.join(', ') });
 }
 
 /** Refuses a body that is not plain JSON: media type, charset and coding are taken at their word. */

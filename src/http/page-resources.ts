@@ -3,7 +3,6 @@ import { readFileSync } from 'node:fs';
 import type { FastifyInstance } from 'fastify';
 import type { ReferenceDocument } from './document-resources.ts';
 import { exampleUrl, type Example } from './pages/example.ts';
-import type { FigureLinks } from './pages/example-figures.ts';
 import { originOf } from './pages/request-origin.ts';
 import { serviceLimits, type Schemas } from './pages/service-limits.ts';
 import { startPage, type StartPage } from './pages/start-page.ts';
@@ -16,8 +15,8 @@ export interface PageOptions {
   /** Longest time from the arrival of a request to its answer, s. */
   readonly solveDeadline: number;
   readonly examples: readonly Example[];
-  /** The figures of each example; without it the page shows none. */
-  readonly figureLinks?: FigureLinks;
+  /** Where the answer of each example is, in their order. */
+  readonly resultUrls: readonly string[];
 }
 
 /** Nothing but what this service serves, and no script. */
@@ -29,7 +28,7 @@ const assetAge = 365 * 86_400;
 
 /** `/`, the page for people, with its assets and the examples that it shows. */
 export function addPageResources(app: FastifyInstance, options: PageOptions): void {
-  const { document, examples, figureLinks = () => [], bodyLimit, solveDeadline } = options;
+  const { document, examples, resultUrls, bodyLimit, solveDeadline } = options;
   const { info, components } = JSON.parse(document.json) as {
     info: StartPage['info'];
     components: { schemas: Schemas };
@@ -51,17 +50,17 @@ export function addPageResources(app: FastifyInstance, options: PageOptions): vo
             limits,
             solveDeadline,
             examples,
-            figureLinks,
+            resultUrls,
             origin: originOf(request),
             styleUrl,
             iconUrl,
           }),
         ),
   });
-  for (const { name, text } of examples) {
-    const bytes = Buffer.from(text);
+  for (const example of examples) {
+    const bytes = Buffer.from(example.text);
     addResource(app, {
-      url: exampleUrl(name),
+      url: exampleUrl(example),
       offers: ['application/json'],
       get: async (_request, reply) => reply.type('application/json').send(bytes),
     });

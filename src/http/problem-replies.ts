@@ -39,6 +39,7 @@ export function sendProblem(
   if (problem.status === 415) reply.header('accept', 'application/json');
   return reply
     .code(problem.status)
+    .header('cache-control', 'no-store')
     .type(problemMediaType)
     .send(Buffer.from(JSON.stringify(problem)));
 }

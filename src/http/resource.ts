@@ -1,13 +1,15 @@
 import { METHODS } from 'node:http';
-import type { FastifyInstance, RouteHandlerMethod } from 'fastify';
+import type { FastifyInstance, FastifyReply, FastifyRequest, RouteHandlerMethod } from 'fastify';
 import { fault } from '../faults/fault.ts';
 import { requireAcceptable, requireJsonBody } from './media.ts';
-import { pathOf } from './problem-replies.ts';
 
 export interface Resource {
   readonly url: string;
-  /** Media types of its answers, the preferred first. */
-  readonly offers: readonly string[];
+  /**
+   * Media types of its answers, the preferred first, or a function that negotiates before the body is
+   * read, and throws a Fault where it cannot.
+   */
+  readonly offers: readonly string[] | ((request: FastifyRequest, reply: FastifyReply) => void);
   readonly get?: RouteHandlerMethod;
   /** Takes application/json. */
   readonly post?: RouteHandlerMethod;
@@ -19,12 +21,14 @@ export interface Resource {
  */
 export function addResource(app: FastifyInstance, { url, offers, get, post }: Resource): void {
   const methods = [...(get === undefined ? [] : ['GET', 'HEAD']), ...(post === undefined ? [] : ['POST'])];
-  if (get !== undefined) {
-    app.get(url, { onRequest: async (request) => requireAcceptable(request, offers) }, get);
-  }
+  const negotiate = async (request: FastifyRequest, reply: FastifyReply): Promise<void> => {
+    if (typeof offers === 'function') offers(request, reply);
+    else requireAcceptable(request, offers);
+  };
+  if (get !== undefined) app.get(url, { onRequest: negotiate }, get);
   if (post !== undefined) {
-    const onRequest = async (request: Parameters<typeof requireJsonBody>[0]): Promise<void> => {
-      requireAcceptable(request, offers);
+    const onRequest = async (request: FastifyRequest, reply: FastifyReply): Promise<void> => {
+      await negotiate(request, reply);
       requireJsonBody(request);
     };
     app.post(url, { onRequest }, post);
@@ -46,13 +50,18 @@ export function refuseOtherMethods(app: FastifyInstance, url: string, methods: r
     onRequest: async (request, reply) => {
       reply.header('allow', allow);
       throw fault('method-not-allowed', '', {
-        path: pathOf(request),
+        path: templateOf(url),
         method: request.method,
         methods: allow,
       });
     },
     handler: async () => undefined,
   });
+}
+
+/** The path of a route as a URI template (RFC 6570), as in the reference document. */
+export function templateOf(url: string): string {
+  return url.replaceAll(/:(\w+)/g, '{$1}');
 }
 
 /** Lets the app see every method that Node parses, so that none is mistaken for an unknown path. */

@@ -58,6 +58,15 @@ export const statusOfFault: Readonly<Partial<Record<FaultCode, number>>> = {
   'unsupported-media-type': 415,
   'headers-too-large': 431,
 
+  // The form of an answer
+  'unknown-parameter': 400,
+  'repeated-parameter': 400,
+  'parameter-value': 400,
+  'parameter-without-use': 400,
+  'coding-not-acceptable': 406,
+  'nothing-to-tabulate': 422,
+  'result-not-kept': 404,
+
   // The solver pool
   'internal-error': 500,
   'energy-inconsistent': 500,

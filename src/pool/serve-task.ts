@@ -1,9 +1,11 @@
 import { performance } from 'node:perf_hooks';
 import { move, Piscina } from 'piscina';
-import { encodeJson } from '../encoding/json.ts';
+import { identifyRequest } from '../contract/identify-request.ts';
+import { decompress } from '../encoding/compress.ts';
 import { readJson } from '../encoding/read-json.ts';
 import { Fault } from '../faults/fault.ts';
-import type { SolveResult, SolverOperations, SolveTask } from './task.ts';
+import { encodeAnswer } from './encode-answer.ts';
+import { buffersOf, type SolveResult, type SolverOperations, type SolveTask } from './task.ts';
 
 /**
  * The worker's side of the thread boundary: reads where the event loop has not, solves, encodes, and
@@ -21,15 +23,34 @@ export function runTask(operations: SolverOperations, task: SolveTask): SolveRes
   if (task.kind === 'ready') return { kind: 'ready' };
   const started = performance.now();
   try {
-    const operation = operations[task.operation];
-    const request = task.kind === 'body' ? operation.read(readJson(task.body)) : task.request;
-    const bytes = encodeJson(operation.solve(request));
-    return { kind: 'answer', bytes, seconds: (performance.now() - started) / 1000 };
+    const answered = task.kind === 'body' ? answerBody(operations, task) : answerRequest(operations, task);
+    return { kind: 'answer', ...answered, seconds: (performance.now() - started) / 1000 };
   } catch (error) {
     if (error instanceof Fault) return { kind: 'faults', records: error.records };
     const stack = error instanceof Error ? (error.stack ?? error.message) : String(error);
     return { kind: 'error', memory: isOutOfMemory(error), stack };
   }
+}
+
+function answerBody(operations: SolverOperations, task: Extract<SolveTask, { kind: 'body' }>) {
+  const { operation, body, wanted, version } = task;
+  const identified = identifyRequest(operation, operations[operation].read(readJson(body)), version);
+  // From the canonical text, as for any other request: equal requests are solved from equal objects.
+  const request = parse(identified.request);
+  const encoded = encodeAnswer(operation, request, operations[operation].solve(request), wanted);
+  return { ...encoded, identified: { digest: identified.digest, request: identified.request } };
+}
+
+function answerRequest(operations: SolverOperations, task: Extract<SolveTask, { kind: 'request' }>) {
+  const { operation, kept, wanted } = task;
+  const request = parse(task.request);
+  const answer =
+    kept === undefined ? operations[operation].solve(request) : parse(decompress(kept.bytes, kept.coding));
+  return encodeAnswer(operation, request, answer, wanted);
+}
+
+function parse(bytes: Uint8Array): unknown {
+  return JSON.parse(new TextDecoder().decode(bytes)) as unknown;
 }
 
 /** Typed arrays lie outside the heap that a worker's limits cap; their failure is a RangeError. */
@@ -41,6 +62,7 @@ function isOutOfMemory(error: unknown): boolean {
 }
 
 function handOver(result: SolveResult): unknown {
-  if (result.kind !== 'answer') return result;
-  return move({ [Piscina.transferableSymbol]: result.bytes.buffer, [Piscina.valueSymbol]: result } as never);
+  const buffers = buffersOf(result);
+  if (buffers.length === 0) return result;
+  return move({ [Piscina.transferableSymbol]: buffers, [Piscina.valueSymbol]: result } as never);
 }

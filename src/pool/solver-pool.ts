@@ -2,7 +2,7 @@ import { performance } from 'node:perf_hooks';
 import { Piscina } from 'piscina';
 import { faultRecord, type FaultRecord } from '../faults/fault.ts';
 import { LoadEstimate } from './load-estimate.ts';
-import type { SolveResult, SolveTask } from './task.ts';
+import { buffersOf, type SolvedAnswer, type SolveResult, type SolveTask } from './task.ts';
 
 export interface SolverPoolOptions {
   /** Compiled module whose default export serves the tasks. */
@@ -28,7 +28,7 @@ export interface SolveLimits {
 
 /** What comes of one request; `cause` is for the log, not for the client. */
 export type SolveOutcome =
-  | { readonly kind: 'answer'; readonly bytes: Uint8Array<ArrayBuffer>; readonly seconds: number }
+  | SolvedAnswer
   | { readonly kind: 'faults'; readonly records: readonly FaultRecord[]; readonly cause?: string }
   | { readonly kind: 'gone' };
 
@@ -176,7 +176,7 @@ export class SolverPool {
 
   async #solve(job: Job): Promise<void> {
     const { task, stopper } = job;
-    const transferList = task.kind === 'body' ? [task.body.buffer] : [];
+    const transferList = buffersOf(task);
     let outcome: SolveOutcome;
     try {
       const result = (await this.#threads.run(task, { signal: stopper.signal, transferList })) as SolveResult;

@@ -1,21 +1,57 @@
+import type { ContentCoding } from '../encoding/compress.ts';
 import type { FaultRecord } from '../faults/fault.ts';
+import type { WantedAnswer } from './answer-form.ts';
+
+/** Bytes in a buffer of their own, which is moved to the other thread: its sender keeps nothing of them. */
+type OwnBytes = Uint8Array<ArrayBuffer>;
+
+/** The JSON of an answer that was kept. */
+export interface KeptJson {
+  readonly bytes: OwnBytes;
+  readonly coding: ContentCoding;
+}
 
 /**
- * What crosses the thread boundary on the way to a worker: a request that was read already, or the
- * bytes of a body that is too large to be read on the event loop, in a buffer of their own, which is
- * moved. `ready` asks only for a sign of life.
+ * What crosses the thread boundary on the way to a worker: the canonical text of a request that was
+ * read already, where it is kept with the JSON of its answer, or the bytes of a body that is too
+ * large to be read on the event loop. `ready` asks only for a sign of life.
  */
 export type SolveTask =
-  | { readonly kind: 'request'; readonly operation: string; readonly request: unknown }
-  | { readonly kind: 'body'; readonly operation: string; readonly body: Uint8Array<ArrayBuffer> }
+  | {
+      readonly kind: 'request';
+      readonly operation: string;
+      readonly request: OwnBytes;
+      readonly wanted: WantedAnswer;
+      readonly kept?: KeptJson;
+    }
+  | {
+      readonly kind: 'body';
+      readonly operation: string;
+      readonly body: OwnBytes;
+      readonly wanted: WantedAnswer;
+      /** Version of the solver, for the digest. */
+      readonly version: string;
+    }
   | { readonly kind: 'ready' };
+
+/** The answer to a task. */
+export interface SolvedAnswer {
+  readonly kind: 'answer';
+  readonly bytes: OwnBytes;
+  /** Content coding of the bytes. */
+  readonly coding: ContentCoding;
+  /** Time of the worker, s. */
+  readonly seconds: number;
+  /** Canonical text of the request and digest of its result, where the worker has read a body. */
+  readonly identified?: { readonly digest: string; readonly request: OwnBytes };
+}
 
 /**
  * What crosses it on the way back. Plain records, because structured clone drops the own fields
  * and the subclass of an Error.
  */
 export type SolveResult =
-  | { readonly kind: 'answer'; readonly bytes: Uint8Array<ArrayBuffer>; readonly seconds: number }
+  | SolvedAnswer
   | { readonly kind: 'faults'; readonly records: readonly FaultRecord[] }
   | { readonly kind: 'error'; readonly memory: boolean; readonly stack: string }
   | { readonly kind: 'ready' };
@@ -29,3 +65,23 @@ export interface SolverOperation {
 }
 
 export type SolverOperations = Readonly<Record<string, SolverOperation>>;
+
+/** The buffers of a task or a result, which move to the other thread. */
+export function buffersOf(message: SolveTask | SolveResult): ArrayBuffer[] {
+  switch (message.kind) {
+    case 'request':
+      return [message.request, ...(message.kept === undefined ? [] : [message.kept.bytes])].map(bufferOf);
+    case 'body':
+      return [message.body.buffer];
+    case 'answer':
+      return [message.bytes, ...(message.identified === undefined ? [] : [message.identified.request])].map(
+        bufferOf,
+      );
+    default:
+      return [];
+  }
+}
+
+function bufferOf({ buffer }: OwnBytes): ArrayBuffer {
+  return buffer;
+}

@@ -1,4 +1,5 @@
 import { performance } from 'node:perf_hooks';
+import { plainJson } from './answer-form.ts';
 import { runTask } from './serve-task.ts';
 import type { SolverOperations } from './task.ts';
 
@@ -73,7 +74,7 @@ export function warmUp(operations: SolverOperations): void {
     const body = warmUpBody(operation);
     const end = performance.now() + longest;
     for (let round = 0; round < rounds && performance.now() < end; round++) {
-      const result = runTask(operations, { kind: 'body', operation, body });
+      const result = runTask(operations, { kind: 'body', operation, body, wanted: plainJson, version: '' });
       if (result.kind !== 'answer')
         throw new Error(`warm-up of ${operation} failed: ${JSON.stringify(result)}`);
     }

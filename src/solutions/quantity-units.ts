@@ -1,6 +1,16 @@
 import type { WaveMember } from '../members/wave-member.ts';
 import type { Quantity } from '../spec/types.ts';
 
+/** Every quantity of a motion, in the order in which tables show them. */
+export const motionQuantities = [
+  'displacement',
+  'relativeDisplacement',
+  'velocity',
+  'acceleration',
+  'force',
+  'stress',
+] as const satisfies readonly Quantity[];
+
 const LINEAR: Record<Quantity, string> = {
   displacement: 'm',
   velocity: 'm/s',

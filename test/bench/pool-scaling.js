@@ -1,5 +1,6 @@
 import { performance } from 'node:perf_hooks';
 import { fileURLToPath } from 'node:url';
+import { plainJson } from '../../dist/pool/answer-form.js';
 import { SolverPool } from '../../dist/pool/solver-pool.js';
 import { fixed, median, printTable } from './timing.js';
 
@@ -41,9 +42,15 @@ async function startPool(workers) {
 
 async function run(pool, steps, tasks) {
   const started = performance.now();
-  const task = { kind: 'request', operation: 'compute', request: { steps } };
+  // A buffer for every task: it moves to the worker.
+  const task = () => ({
+    kind: 'request',
+    operation: 'compute',
+    request: new TextEncoder().encode(JSON.stringify({ steps })),
+    wanted: plainJson,
+  });
   const outcomes = await Promise.all(
-    Array.from({ length: tasks }, () => pool.run(task, { arrived: performance.now(), deadline: 600 })),
+    Array.from({ length: tasks }, () => pool.run(task(), { arrived: performance.now(), deadline: 600 })),
   );
   if (outcomes.some(({ kind }) => kind !== 'answer')) throw new Error('a task failed');
   return performance.now() - started;

@@ -1,6 +1,7 @@
 // A process with one worker of the pool that solves the long record, sent as a body: its largest memory.
 import { performance } from 'node:perf_hooks';
 import { fileURLToPath } from 'node:url';
+import { plainJson } from '../../dist/pool/answer-form.js';
 import { SolverPool } from '../../dist/pool/solver-pool.js';
 import { recordRequest } from './record-request.js';
 
@@ -20,7 +21,7 @@ const body = new TextEncoder().encode(JSON.stringify(request));
 const before = process.memoryUsage().rss;
 const solves = 5;
 for (let i = 0; i < solves; i++) {
-  const task = { kind: 'body', operation: 'responses', body: body.slice() };
+  const task = { kind: 'body', operation: 'responses', body: body.slice(), wanted: plainJson, version: '1' };
   const outcome = await pool.run(task, { arrived: performance.now(), deadline: 60 });
   if (outcome.kind !== 'answer') throw new Error(JSON.stringify(outcome));
 }

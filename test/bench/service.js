@@ -1,9 +1,10 @@
 // The real app in front of the worker named on the command line; prints its address when it is ready.
 import { readRequest } from '../../dist/contract/read-request.js';
 import { buildApp } from '../../dist/http/app.js';
+import { EmbeddedResults } from '../../dist/jobs/embedded-results.js';
 import { SolverPool } from '../../dist/pool/solver-pool.js';
 
-const [workerFile, reading, workers] = process.argv.slice(2);
+const [workerFile, reading, workers, answerBytes = '0'] = process.argv.slice(2);
 const pool = new SolverPool({
   workerFile,
   workers: Number(workers),
@@ -15,6 +16,9 @@ const pool = new SolverPool({
 });
 const app = await buildApp({
   pool,
+  // No answers are kept: every request is solved.
+  results: new EmbeddedResults({ requests: 1000, requestBytes: 1e8, answerBytes: Number(answerBytes) }),
+  version: '1',
   readRequest: reading === 'contract' ? readRequest : (_operation, body) => body,
   solveDeadline: 60,
   bodyLimit: 8 * 1024 * 1024,

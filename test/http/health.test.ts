@@ -1,5 +1,6 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { buildApp } from '../../src/http/app.ts';
+import { EmbeddedResults } from '../../src/jobs/embedded-results.ts';
 import { SolverPool } from '../../src/pool/solver-pool.ts';
 import { trialWorker } from '../pool/trial-pool.ts';
 import { trialPages } from './trial-pages.ts';
@@ -27,6 +28,8 @@ describe('the health of the service', () => {
     const pool = new SolverPool({ ...options, onWorkerError: () => undefined });
     const app = await buildApp({
       pool,
+      results: new EmbeddedResults({ requests: 1, requestBytes: 1e6, answerBytes: 0 }),
+      version: '1',
       readRequest: (_operation, body) => body,
       solveDeadline: 1,
       bodyLimit: 1024,

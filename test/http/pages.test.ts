@@ -8,15 +8,7 @@ import { trialPages } from './trial-pages.ts';
 const { examples } = trialPages;
 let service: TrialService;
 beforeAll(async () => {
-  service = await startTrialService({
-    app: {
-      figureLinks: (name) =>
-        figureLinksOf(
-          examples.find((example) => example.name === name)!,
-          `/v1/results/${name}`,
-        ),
-    },
-  });
+  service = await startTrialService();
 });
 afterAll(async () => {
   await service.app.close();
@@ -57,13 +49,14 @@ describe('the start page', () => {
 
   it('shows every example with its request, its command and its figures', async () => {
     const text = await pageText();
-    for (const { name, title, url, text: request } of examples) {
+    for (const example of examples) {
+      const { name, title, text: request } = example;
       const article = text.slice(text.indexOf(`<article id="${name}"`)).split('</article>')[0];
       const shown = unescaped(article);
       expect(shown).toContain(title);
       expect(shown).toContain(request.trim());
       expect(shown).toContain(
-        `curl -s ${service.url}/examples/${name}.json |\n  curl -s ${service.url}${url} -H 'content-type: application/json' -d @-`,
+        `curl -s ${service.url}/examples/${name}.json |\n  curl -s ${service.url}/v1/${example.operation} -H 'content-type: application/json' -d @-`,
       );
       const figures = [...article.matchAll(/<img\s+src="([^"]*)"\s+alt="([^"]*)"/g)];
       expect(figures.length).toBeGreaterThan(0);
@@ -79,7 +72,9 @@ describe('the start page', () => {
   });
 
   it('shows each of the views somewhere', () => {
-    const shown = examples.flatMap((example) => figureLinksOf(example, '/r').map(({ view }) => view));
+    const shown = examples.flatMap((example) =>
+      figureLinksOf(example, '/r').map(({ light }) => new URL(light, service.url).searchParams.get('view')),
+    );
     expect([...new Set(shown)].toSorted()).toEqual([
       'convergence',
       'envelope',

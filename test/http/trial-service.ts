@@ -2,6 +2,7 @@ import { connect, type AddressInfo } from 'node:net';
 import type { FastifyBaseLogger, FastifyInstance } from 'fastify';
 import { fault } from '../../src/faults/fault.ts';
 import { buildApp, type AppOptions } from '../../src/http/app.ts';
+import { EmbeddedResults } from '../../src/jobs/embedded-results.ts';
 import type { SolverPool, SolverPoolOptions } from '../../src/pool/solver-pool.ts';
 import { startTrialPool } from '../pool/trial-pool.ts';
 import { trialPages } from './trial-pages.ts';
@@ -16,7 +17,9 @@ export interface TrialService {
 
 export interface TrialOptions {
   readonly pool?: Partial<SolverPoolOptions>;
-  readonly app?: Partial<Pick<AppOptions, 'solveDeadline' | 'bodyLimit' | 'stopGrace' | 'figureLinks'>>;
+  readonly app?: Partial<
+    Pick<AppOptions, 'solveDeadline' | 'bodyLimit' | 'stopGrace' | 'results' | 'version'>
+  >;
   readonly logger?: FastifyBaseLogger;
 }
 
@@ -25,6 +28,8 @@ export async function startTrialService(options: TrialOptions = {}): Promise<Tri
   const pool = await startTrialPool(options.pool);
   const app = await buildApp({
     pool,
+    results: new EmbeddedResults({ requests: 100, requestBytes: 1e7, answerBytes: 1e7 }),
+    version: '1',
     readRequest: readTrialRequest,
     solveDeadline: 30,
     bodyLimit: 8 * 1024 * 1024,

@@ -1,6 +1,7 @@
 import { setTimeout as pause } from 'node:timers/promises';
 import { performance } from 'node:perf_hooks';
 import { afterEach, describe, expect, it } from 'vitest';
+import { plainJson } from '../../src/pool/answer-form.ts';
 import { SolverPool, type SolverPoolOptions } from '../../src/pool/solver-pool.ts';
 import { answerOf, ask, codesOf, startTrialPool, trialWorker } from './trial-pool.ts';
 
@@ -27,7 +28,13 @@ describe('the solver pool', () => {
     const pool = await startPool();
     const run = (text: string) =>
       pool.run(
-        { kind: 'body', operation: 'echo', body: new TextEncoder().encode(text) },
+        {
+          kind: 'body',
+          operation: 'echo',
+          body: new TextEncoder().encode(text),
+          wanted: plainJson,
+          version: '1',
+        },
         { arrived: performance.now(), deadline: 30 },
       );
     expect(answerOf(await run('{"x":1}'))).toEqual({ echo: { x: 1 } });

@@ -1,5 +1,6 @@
 import { fileURLToPath } from 'node:url';
 import { performance } from 'node:perf_hooks';
+import { plainJson } from '../../src/pool/answer-form.ts';
 import { SolverPool, type SolveOutcome, type SolverPoolOptions } from '../../src/pool/solver-pool.ts';
 
 /** The worker of the tests: operations that spin, crash, fill the memory, … */
@@ -25,9 +26,13 @@ export function ask(
   limits: { deadline?: number; gone?: AbortSignal } = {},
 ): Promise<SolveOutcome> {
   return pool.run(
-    { kind: 'request', operation, request },
+    { kind: 'request', operation, request: bytesOf(request), wanted: plainJson },
     { arrived: performance.now(), deadline: 30, ...limits },
   );
+}
+
+function bytesOf(request: unknown): Uint8Array<ArrayBuffer> {
+  return new TextEncoder().encode(JSON.stringify(request));
 }
 
 /** The parsed answer; throws where the outcome is none. */

@@ -1,20 +1,18 @@
+import type { View } from '../../figures/views.ts';
 import type { Example } from './example.ts';
 
 /** A figure of an example: where it is drawn for either theme, and what is to be seen. */
 export interface FigureLink {
-  readonly view: string;
+  readonly caption: string;
   readonly light: string;
   readonly dark: string;
   readonly alt: string;
 }
 
-/** The figures of an example, by its name. */
-export type FigureLinks = (exampleName: string) => readonly FigureLink[];
-
 /** Size of every figure of the page in CSS pixels. */
 export const figureSize = { width: 640, height: 400 } as const;
 
-const wordsOfView = {
+const wordsOfView: Readonly<Record<View, string>> = {
   shapes: 'mode shapes',
   frequencies: 'natural frequencies and effective mass',
   history: 'displacement over time',
@@ -24,9 +22,7 @@ const wordsOfView = {
   convergence: 'captured energy and bound against the modes kept',
   transfer: 'magnitude and phase over frequency',
   'force-history': 'force over time',
-} as const satisfies Record<string, string>;
-
-export type View = keyof typeof wordsOfView;
+};
 
 /** What is best seen of each example. */
 const viewsOfExample: Readonly<Record<string, readonly View[]>> = {
@@ -49,18 +45,13 @@ const viewsOfExample: Readonly<Record<string, readonly View[]>> = {
 export function figureLinksOf({ name, title }: Example, resultUrl: string): FigureLink[] {
   const { width, height } = figureSize;
   return (viewsOfExample[name] ?? []).map((view) => {
+    const words = wordsOfView[view];
     const drawn = `${resultUrl}?format=svg&view=${view}&width=${width}&height=${height}`;
     return {
-      view,
+      caption: words.charAt(0).toUpperCase() + words.slice(1),
       light: `${drawn}&theme=light`,
       dark: `${drawn}&theme=dark`,
-      alt: `${title}: ${wordsOfView[view]}`,
+      alt: `${title}: ${words}`,
     };
   });
-}
-
-/** What a figure of this view shows, in words. */
-export function captionOf(view: string): string {
-  const words = (wordsOfView as Readonly<Record<string, string>>)[view] ?? view;
-  return words.charAt(0).toUpperCase() + words.slice(1);
 }

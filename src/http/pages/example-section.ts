@@ -1,49 +1,54 @@
-import { exampleUrl, type Example } from './example.ts';
-import { captionOf, figureSize, type FigureLink } from './example-figures.ts';
+import { exampleUrl, solveUrl, type Example } from './example.ts';
+import { figureLinksOf, figureSize, type FigureLink } from './example-figures.ts';
 import { html, type Markup } from './markup.ts';
 
-/** Figures above the fold are fetched at once, the rest when they come near. */
+/** Figures at the top are fetched at once, the rest when they come near. */
 export type Loading = 'eager' | 'lazy';
 
+/** Forms of an answer that a link can ask for. */
+const forms = ['json', 'csv', 'arrow', 'svg', 'png'];
+
 /**
- * One example: its figures, the command that solves it, its request.
+ * One example: its figures, links to its answer, the command that solves it, its request.
  *
+ * @param resultUrl where its answer is
  * @param origin scheme, host and port for the command
  */
 export function exampleSection(
   example: Example,
-  figures: readonly FigureLink[],
+  resultUrl: string,
   origin: string,
   loading: Loading,
 ): Markup {
-  const { name, title, url, text } = example;
+  const { name, title, text } = example;
+  const [source, target] = [exampleUrl(example), solveUrl(example)];
   const command = [
-    `curl -s ${origin}${exampleUrl(name)} |`,
-    `  curl -s ${origin}${url} -H 'content-type: application/json' -d @-`,
+    `curl -s ${origin}${source} |`,
+    `  curl -s ${origin}${target} -H 'content-type: application/json' -d @-`,
   ].join('\n');
   return html`
     <article id="${name}" aria-labelledby="${name}-title">
       <header>
         <h4 id="${name}-title">${title}</h4>
-        <p class="operation"><code>POST ${url}</code></p>
+        <p class="operation"><code>POST ${target}</code></p>
       </header>
-      ${
-        figures.length === 0
-          ? ''
-          : html`<div class="figures">${figures.map((link) => figure(link, loading))}</div>`
-      }
+      <div class="figures">${figureLinksOf(example, resultUrl).map((link) => figure(link, loading))}</div>
+      <p class="forms">
+        The answer:
+        ${forms.map((form) => html`<a href="${resultUrl}?format=${form}">${form.toUpperCase()}</a> `)}
+      </p>
       <p class="label" id="${name}-command">Solve it from a shell</p>
       <pre tabindex="0" role="region" aria-labelledby="${name}-command"><code>${command}</code></pre>
       <details>
         <summary>The request</summary>
-        <p><a href="${exampleUrl(name)}">${name}.json</a>, to copy:</p>
+        <p><a href="${source}">${name}.json</a>, to copy:</p>
         <pre tabindex="0" role="region" aria-label="Request: ${title}"><code>${text.trim()}</code></pre>
       </details>
     </article>
   `;
 }
 
-function figure({ view, light, dark, alt }: FigureLink, loading: Loading): Markup {
+function figure({ caption, light, dark, alt }: FigureLink, loading: Loading): Markup {
   const { width, height } = figureSize;
   return html`
     <figure>
@@ -51,7 +56,7 @@ function figure({ view, light, dark, alt }: FigureLink, loading: Loading): Marku
         <source media="(prefers-color-scheme: dark)" srcset="${dark}" />
         <img src="${light}" alt="${alt}" width="${width}" height="${height}" loading="${loading}" />
       </picture>
-      <figcaption>${captionOf(view)}</figcaption>
+      <figcaption>${caption}</figcaption>
     </figure>
   `;
 }

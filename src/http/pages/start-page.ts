@@ -1,6 +1,6 @@
+import type { Operation } from '../../contract/read-request.ts';
 import { inlineCode, paragraphOf, paragraphsOf } from './description.ts';
 import type { Example } from './example.ts';
-import type { FigureLinks } from './example-figures.ts';
 import { exampleSection } from './example-section.ts';
 import { html, type Markup } from './markup.ts';
 import type { ServiceLimit } from './service-limits.ts';
@@ -17,7 +17,8 @@ export interface StartPage {
   /** Longest time from the arrival of a request to its answer, s. */
   readonly solveDeadline: number;
   readonly examples: readonly Example[];
-  readonly figureLinks: FigureLinks;
+  /** Where the answer of each example is, in their order. */
+  readonly resultUrls: readonly string[];
   /** Scheme, host and port through which the page was asked. */
   readonly origin: string;
   readonly styleUrl: string;
@@ -33,10 +34,10 @@ const links = [
 ];
 
 /** What the operations are called on the page. */
-const headingOfOperation: Readonly<Record<string, string>> = {
-  '/v1/modes': 'Natural modes',
-  '/v1/responses': 'Motion',
-  '/v1/transfer-functions': 'Steady state over frequency',
+const headingOfOperation: Readonly<Record<Operation, string>> = {
+  modes: 'Natural modes',
+  responses: 'Motion',
+  'transfer-functions': 'Steady state over frequency',
 };
 
 /** Examples whose figures are fetched at once. */
@@ -45,7 +46,7 @@ const eagerExamples = 1;
 /** The page `/` for people: HTML that needs no script. */
 export function startPage(page: StartPage): string {
   const { info, examples, styleUrl, iconUrl } = page;
-  const operations = [...new Set(examples.map(({ url }) => url))];
+  const operations = [...new Set(examples.map(({ operation }) => operation))];
   const document = html`
     <html lang="en">
       <head>
@@ -82,7 +83,7 @@ export function startPage(page: StartPage): string {
             <p>
               Each is a complete request; its figures are drawn by this service from the answer that it gives.
             </p>
-            ${operations.map((url, i) => operationExamples(page, url, i === 0))}
+            ${operations.map((operation, i) => operationExamples(page, operation, i === 0))}
           </section>
           ${limitTable(page)} ${linkList()}
         </main>
@@ -105,21 +106,15 @@ function cautions(description: string): Markup {
   `;
 }
 
-function operationExamples(
-  { examples, figureLinks, origin }: StartPage,
-  url: string,
-  first: boolean,
-): Markup {
-  const shown = examples.filter((example) => example.url === url);
+function operationExamples(page: StartPage, operation: Operation, first: boolean): Markup {
+  const { examples, resultUrls, origin } = page;
+  const shown = examples
+    .map((example, i) => ({ example, resultUrl: resultUrls[i] }))
+    .filter(({ example }) => example.operation === operation);
   return html`
-    <h3 class="operation-title">${headingOfOperation[url] ?? url}</h3>
-    ${shown.map((example, i) =>
-      exampleSection(
-        example,
-        figureLinks(example.name),
-        origin,
-        first && i < eagerExamples ? 'eager' : 'lazy',
-      ),
+    <h3>${headingOfOperation[operation]}</h3>
+    ${shown.map(({ example, resultUrl }, i) =>
+      exampleSection(example, resultUrl, origin, first && i < eagerExamples ? 'eager' : 'lazy'),
     )}
   `;
 }
