@@ -1,6 +1,7 @@
 import { readFileSync } from 'node:fs';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { readRepositoryFile } from '../house/repository.ts';
+import { viewsOf } from '../../src/figures/views.ts';
 import { figureLinksOf } from '../../src/http/pages/example-figures.ts';
 import { exchange, startTrialService, type TrialService } from './trial-service.ts';
 import { trialPages } from './trial-pages.ts';
@@ -66,26 +67,22 @@ describe('the start page', () => {
         );
         expect(unescaped(alt).startsWith(`${title}: `)).toBe(true);
       }
-      const dark = article.match(/media="\(prefers-color-scheme: dark\)"\s+srcset="[^"]*theme=dark"/g);
-      expect(dark).toHaveLength(figures.length);
+      const dark = article.match(/media="[^"]*\(prefers-color-scheme: dark\)"\s+srcset="[^"]*theme=dark"/g);
+      expect(dark).toHaveLength(2 * figures.length);
+      const narrow = article.match(/media="\(max-width: 36rem\)[^"]*"\s+srcset="[^"]*width=400/g);
+      expect(narrow).toHaveLength(2 * figures.length);
     }
   });
 
-  it('shows each of the views somewhere', () => {
-    const shown = examples.flatMap((example) =>
-      figureLinksOf(example, '/r').map(({ light }) => new URL(light, service.url).searchParams.get('view')),
-    );
-    expect([...new Set(shown)].toSorted()).toEqual([
-      'convergence',
-      'envelope',
-      'force-history',
-      'frequencies',
-      'heat-map',
-      'history',
-      'shapes',
-      'snapshots',
-      'transfer',
-    ]);
+  it('shows each of the views somewhere, and of each example only what its operation has', () => {
+    const shown = examples.flatMap((example) => {
+      const views = figureLinksOf(example, '/r').flatMap(({ drawings }) =>
+        drawings.map(({ url }) => new URL(url, service.url).searchParams.get('view')),
+      );
+      expect(viewsOf[example.operation]).toEqual(expect.arrayContaining(views));
+      return views;
+    });
+    expect(new Set(shown)).toEqual(new Set(Object.values(viewsOf).flat()));
   });
 
   it('lists the limits that the README lists', async () => {

@@ -1,16 +1,30 @@
 import type { View } from '../../figures/views.ts';
 import type { Example } from './example.ts';
 
-/** A figure of an example: where it is drawn for either theme, and what is to be seen. */
-export interface FigureLink {
-  readonly caption: string;
-  readonly light: string;
-  readonly dark: string;
-  readonly alt: string;
+/** One drawing of a figure, for one kind of screen. */
+export interface Drawing {
+  readonly url: string;
+  /** When a browser takes it, as a media query; '' for the one that is always possible. */
+  readonly media: string;
+  /** CSS px */
+  readonly width: number;
+  /** CSS px */
+  readonly height: number;
 }
 
-/** Size of every figure of the page in CSS pixels. */
-export const figureSize = { width: 640, height: 400 } as const;
+/** A figure of an example, and what is to be seen on it. */
+export interface FigureLink {
+  readonly caption: string;
+  readonly alt: string;
+  /** The first whose media query holds is shown; the last always can be. */
+  readonly drawings: readonly Drawing[];
+}
+
+/** Drawn for a telephone, so that its words stay readable, and for everything wider. */
+const screens = [
+  { narrow: true, width: 400, height: 320 },
+  { narrow: false, width: 500, height: 340 },
+] as const;
 
 const wordsOfView: Readonly<Record<View, string>> = {
   shapes: 'mode shapes',
@@ -43,15 +57,33 @@ const viewsOfExample: Readonly<Record<string, readonly View[]>> = {
  * @param resultUrl where the result is, `/v1/results/{digest}`
  */
 export function figureLinksOf({ name, title }: Example, resultUrl: string): FigureLink[] {
-  const { width, height } = figureSize;
   return (viewsOfExample[name] ?? []).map((view) => {
     const words = wordsOfView[view];
-    const drawn = `${resultUrl}?format=svg&view=${view}&width=${width}&height=${height}`;
     return {
       caption: words.charAt(0).toUpperCase() + words.slice(1),
-      light: `${drawn}&theme=light`,
-      dark: `${drawn}&theme=dark`,
       alt: `${title}: ${words}`,
+      drawings: screens.flatMap((screen) => [
+        drawing(resultUrl, view, screen, 'dark'),
+        drawing(resultUrl, view, screen, 'light'),
+      ]),
     };
   });
+}
+
+function drawing(
+  resultUrl: string,
+  view: View,
+  { narrow, width, height }: (typeof screens)[number],
+  theme: 'light' | 'dark',
+): Drawing {
+  const conditions = [
+    ...(narrow ? ['(max-width: 36rem)'] : []),
+    ...(theme === 'dark' ? ['(prefers-color-scheme: dark)'] : []),
+  ];
+  return {
+    url: `${resultUrl}?format=svg&view=${view}&width=${width}&height=${height}&theme=${theme}`,
+    media: conditions.join(' and '),
+    width,
+    height,
+  };
 }

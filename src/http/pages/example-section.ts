@@ -1,5 +1,5 @@
 import { exampleUrl, solveUrl, type Example } from './example.ts';
-import { figureLinksOf, figureSize, type FigureLink } from './example-figures.ts';
+import { figureLinksOf, type FigureLink } from './example-figures.ts';
 import { html, type Markup } from './markup.ts';
 
 /** Figures at the top are fetched at once, the rest when they come near. */
@@ -48,13 +48,24 @@ export function exampleSection(
   `;
 }
 
-function figure({ caption, light, dark, alt }: FigureLink, loading: Loading): Markup {
-  const { width, height } = figureSize;
+function figure({ caption, alt, drawings }: FigureLink, loading: Loading): Markup {
+  const always = drawings[drawings.length - 1];
   return html`
     <figure>
       <picture>
-        <source media="(prefers-color-scheme: dark)" srcset="${dark}" />
-        <img src="${light}" alt="${alt}" width="${width}" height="${height}" loading="${loading}" />
+        ${drawings
+          .slice(0, -1)
+          .map(
+            ({ url, media, width, height }) =>
+              html`<source media="${media}" srcset="${url}" width="${width}" height="${height}" /> `,
+          )}
+        <img
+          src="${always.url}"
+          alt="${alt}"
+          width="${always.width}"
+          height="${always.height}"
+          loading="${loading}"
+        />
       </picture>
       <figcaption>${caption}</figcaption>
     </figure>
