@@ -45,13 +45,14 @@ function hasGaps(values: Column['values']): boolean {
 }
 
 function dataOf(column: Column, type: DataType, rows: number): Data {
-  const { makeData, Utf8, vectorFromArray } = arrow();
-  if (column.type === 'text') {
-    const texts = Array.from({ length: rows }, (_, row) => column.values[placeOf(column, row)]);
-    return vectorFromArray(texts as string[], new Utf8()).data[0] ?? makeData({ type });
-  }
-  const values = column.type === 'integer' ? new Int32Array(rows) : new Float64Array(rows);
-  const valid = new Uint8Array(Math.ceil(rows / 64) * 8);
+  return column.type === 'text' ? textData(column, type, rows) : numberData(column, type, rows);
+}
+
+function numberData(column: Column, type: DataType, rows: number): Data {
+  const { makeData } = arrow();
+  const data = column.type === 'integer' ? new Int32Array(rows) : new Float64Array(rows);
+  // A bit per row, in whole words of 64 bits.
+  const nullBitmap = new Uint8Array(Math.ceil(rows / 64) * 8);
   let nullCount = 0;
   for (let row = 0; row < rows; row++) {
     const value = column.values[placeOf(column, row)] as number | null;
@@ -59,9 +60,20 @@ function dataOf(column: Column, type: DataType, rows: number): Data {
       nullCount++;
       continue;
     }
-    values[row] = value;
-    valid[row >> 3] |= 1 << (row & 7);
+    data[row] = value;
+    nullBitmap[row >> 3] |= 1 << (row & 7);
   }
-  const nulls = nullCount === 0 ? {} : { nullBitmap: valid, nullCount };
-  return makeData({ type, length: rows, data: values, ...nulls } as never);
+  const gaps = nullCount === 0 ? {} : { nullBitmap, nullCount };
+  return makeData({ type, length: rows, data, ...gaps } as never);
+}
+
+function textData(column: Column, type: DataType, rows: number): Data {
+  const texts = Array.from(column.values as ArrayLike<string>, (text) => new TextEncoder().encode(text));
+  const valueOffsets = new Int32Array(rows + 1);
+  for (let row = 0; row < rows; row++) {
+    valueOffsets[row + 1] = valueOffsets[row] + texts[placeOf(column, row)].byteLength;
+  }
+  const data = new Uint8Array(valueOffsets[rows]);
+  for (let row = 0; row < rows; row++) data.set(texts[placeOf(column, row)], valueOffsets[row]);
+  return arrow().makeData({ type, length: rows, valueOffsets, data, nullCount: 0 } as never);
 }

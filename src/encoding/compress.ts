@@ -6,6 +6,11 @@ export type ContentCoding = 'identity' | 'gzip' | 'br';
 /** Below this size in bytes a coding saves no packet worth its time. */
 export const smallestCoded = 1400;
 
+/** Whether bytes are too few for a coding. */
+export function isSmall({ byteLength }: Uint8Array): boolean {
+  return byteLength < smallestCoded;
+}
+
 /** Fast levels: of numbers as text the thorough ones save little more (test/bench). */
 const gzipLevel = 1;
 const brotliQuality = 1;
@@ -22,7 +27,7 @@ export function compress(
   bytes: Uint8Array<ArrayBuffer>,
   codings: readonly ContentCoding[],
 ): { readonly bytes: Uint8Array<ArrayBuffer>; readonly coding: ContentCoding } {
-  const small = bytes.byteLength < smallestCoded && codings.includes('identity');
+  const small = isSmall(bytes) && codings.includes('identity');
   const coding = small ? 'identity' : codings[0];
   switch (coding) {
     case 'identity':

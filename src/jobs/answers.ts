@@ -1,8 +1,8 @@
 import { performance } from 'node:perf_hooks';
 import type { IdentifiedRequest } from '../contract/identify-request.ts';
-import type { ContentCoding } from '../encoding/compress.ts';
+import { isSmall, type ContentCoding } from '../encoding/compress.ts';
 import { faultRecord } from '../faults/fault.ts';
-import type { WantedAnswer } from '../pool/answer-form.ts';
+import type { AnswerForm, WantedAnswer } from '../pool/answer-form.ts';
 import type { SolveLimits, SolveOutcome, SolverPool } from '../pool/solver-pool.ts';
 import type { KeptJson } from '../pool/task.ts';
 import { answerKey } from './answer-key.ts';
@@ -109,7 +109,7 @@ export class Answers {
   }
 
   async #solve(result: IdentifiedRequest, wanted: WantedAnswer, limits: SolveLimits): Promise<AnswerOutcome> {
-    const kept = wanted.form.format === 'json' ? null : await this.#keptJson(result.digest);
+    const kept = await this.#keptJson(result.digest);
     // A copy, because the buffer of a task moves to the worker.
     const request = new Uint8Array(result.request);
     const task = { kind: 'request', operation: result.operation, request, wanted } as const;
@@ -127,20 +127,29 @@ export class Answers {
     return { kind: 'answered', bytes, coding, digest, key };
   }
 
+  /** The bytes that a solver would give: in the first coding, or small ones without any. */
   async #keptAnswer(digest: string, { form, codings }: WantedAnswer): Promise<Answered | null> {
-    for (const coding of codings) {
-      const key = answerKey(digest, form, coding);
-      const bytes = await this.#safely(this.#store.findAnswer(key));
-      if (bytes != null) return { kind: 'answered', bytes, coding, digest, key };
-    }
-    return null;
+    const first = await this.#keptBytes(digest, form, codings[0]);
+    if (first !== null || !codings.includes('identity')) return first;
+    const plain = await this.#keptBytes(digest, form, 'identity');
+    return plain !== null && isSmall(plain.bytes) ? plain : null;
   }
 
+  async #keptBytes(digest: string, form: AnswerForm, coding: ContentCoding): Promise<Answered | null> {
+    const key = answerKey(digest, form, coding);
+    const bytes = await this.#safely(this.#store.findAnswer(key));
+    return bytes == null ? null : { kind: 'answered', bytes, coding, digest, key };
+  }
+
+  /** A copy of the JSON of a result in any coding: of that, a worker makes every other form. */
   async #keptJson(digest: string): Promise<KeptJson | null> {
-    const codings = ['identity', 'br', 'gzip'] as const;
-    const found = await this.#keptAnswer(digest, { form: { format: 'json' }, codings });
-    if (found === null || found.bytes.byteLength > largestHandedOver) return null;
-    return { bytes: new Uint8Array(found.bytes), coding: found.coding };
+    for (const coding of ['identity', 'br', 'gzip'] as const) {
+      const found = await this.#keptBytes(digest, { format: 'json' }, coding);
+      if (found !== null && found.bytes.byteLength <= largestHandedOver) {
+        return { bytes: new Uint8Array(found.bytes), coding };
+      }
+    }
+    return null;
   }
 
   /** What the store gives; undefined where it fails, so that an answer never depends on it. */

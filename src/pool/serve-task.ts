@@ -1,7 +1,7 @@
 import { performance } from 'node:perf_hooks';
 import { move, Piscina } from 'piscina';
 import { identifyRequest } from '../contract/identify-request.ts';
-import { decompress } from '../encoding/compress.ts';
+import { compress, decompress } from '../encoding/compress.ts';
 import { readJson } from '../encoding/read-json.ts';
 import { Fault } from '../faults/fault.ts';
 import { encodeAnswer } from './encode-answer.ts';
@@ -43,9 +43,10 @@ function answerBody(operations: SolverOperations, task: Extract<SolveTask, { kin
 
 function answerRequest(operations: SolverOperations, task: Extract<SolveTask, { kind: 'request' }>) {
   const { operation, kept, wanted } = task;
+  const json = kept === undefined ? null : decompress(kept.bytes, kept.coding);
+  if (json !== null && wanted.form.format === 'json') return compress(new Uint8Array(json), wanted.codings);
   const request = parse(task.request);
-  const answer =
-    kept === undefined ? operations[operation].solve(request) : parse(decompress(kept.bytes, kept.coding));
+  const answer = json === null ? operations[operation].solve(request) : parse(json);
   return encodeAnswer(operation, request, answer, wanted);
 }
 

@@ -14,7 +14,13 @@ function spin(milliseconds) {
   while (Date.now() < end);
 }
 
+let solved = 0;
+
 const solvers = {
+  count: ({ milliseconds = 0 }) => {
+    spin(milliseconds);
+    return { threadId, solved: ++solved };
+  },
   echo: (request) => ({ echo: request }),
   thread: ({ milliseconds = 0 }) => {
     spin(milliseconds);
