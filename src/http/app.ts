@@ -1,5 +1,6 @@
 import type { IncomingMessage } from 'node:http';
 import accepts from '@fastify/accepts';
+import compress from '@fastify/compress';
 import helmet from '@fastify/helmet';
 import {
   fastify,
@@ -8,6 +9,7 @@ import {
   type FastifyInstance,
   type FastifyRequest,
 } from 'fastify';
+import { smallestCoded } from '../encoding/compress.ts';
 import { fault, faultRecord } from '../faults/fault.ts';
 import type { SolverPool } from '../pool/solver-pool.ts';
 import { readBody } from './body.ts';
@@ -99,10 +101,26 @@ export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
   addSolveResource(app, '/v1/transfer-functions', 'transfer-functions', solving);
   addResultResource(app, solving);
   addHealthResources(app, pool);
-  addDocumentResources(app, document);
-  addPageResources(app, { ...options, resultUrls: digests.map(resultPath) });
-  await addReferencePage(app, document);
+  await app.register(async (pages) => {
+    await addCompression(pages);
+    addDocumentResources(pages, document);
+    addPageResources(pages, { ...options, resultUrls: digests.map(resultPath) });
+    await addReferencePage(pages, document);
+  });
   return app;
+}
+
+/**
+ * Gzip for what is the same for everybody; answers are coded in the workers. No br: packing the
+ * scripts of the reference page with it takes a second, which only pays for files packed beforehand.
+ */
+async function addCompression(pages: FastifyInstance): Promise<void> {
+  await pages.register(compress, {
+    encodings: ['gzip', 'identity'],
+    threshold: smallestCoded,
+    customTypes: /^text\/|[/+](?:json|yaml|xml|javascript)\b/,
+    globalDecompression: false,
+  });
 }
 
 /** One line per request, with its id; never a body. */

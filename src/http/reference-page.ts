@@ -1,3 +1,4 @@
+import { readFileSync } from 'node:fs';
 import swagger from '@fastify/swagger';
 import swaggerUi from '@fastify/swagger-ui';
 import type { FastifyInstance } from 'fastify';
@@ -7,6 +8,8 @@ import { pathOf } from './problem-replies.ts';
 import { refuseOtherMethods } from './resource.ts';
 
 const prefix = '/docs';
+
+const mark = readFileSync(new URL('pages/mark.svg', import.meta.url));
 
 /** Scripts and styles of this service alone; the icons of the page are data. */
 const policy = {
@@ -36,7 +39,10 @@ export async function addReferencePage(app: FastifyInstance, document: Reference
     await scope.register(swaggerUi, {
       routePrefix: prefix,
       staticCSP: policy,
-      theme: { title: 'Tailbound: reference' },
+      theme: {
+        title: 'Tailbound: reference',
+        favicon: [{ filename: 'mark.svg', rel: 'icon', type: 'image/svg+xml', sizes: 'any', content: mark }],
+      },
       uiConfig: {
         // The default layout has a bar for opening other documents.
         layout: 'BaseLayout',

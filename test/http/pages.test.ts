@@ -151,6 +151,27 @@ describe('the start page', () => {
   });
 });
 
+describe('what every client gets alike', () => {
+  it.each([
+    '/',
+    '/docs/',
+    '/docs/json',
+    '/docs/static/swagger-ui-bundle.js',
+    '/openapi.yaml',
+    '/openapi.json',
+  ])('is packed where the client unpacks: %s', async (url) => {
+    const get = (coding: string): Promise<Response> =>
+      fetch(service.url + url, { headers: { 'accept-encoding': coding } });
+    const [plain, packed] = [await get('identity'), await get('gzip')];
+    expect([plain.headers.get('content-encoding'), packed.headers.get('content-encoding')]).toEqual(
+      url === '/docs/' ? [null, null] : [null, 'gzip'],
+    );
+    if (url !== '/docs/') expect(packed.headers.get('vary')).toMatch(/accept-encoding/i);
+    expect(packed.headers.get('content-type')).toBe(plain.headers.get('content-type'));
+    expect(await packed.text()).toBe(await plain.text());
+  });
+});
+
 describe('the reference page', () => {
   it.each(['/docs', '/docs/'])(
     'is served at %s, with every asset from here and no inline script',
