@@ -11,6 +11,9 @@ describe('the settings', () => {
       MEMORY_LIMIT: 512,
       BODY_LIMIT: 8_388_608,
       STOP_GRACE: 10,
+      RESULTS_COUNT: 10_000,
+      RESULTS_MEMORY: 64,
+      ANSWERS_MEMORY: 128,
       LOG_LEVEL: 'info',
     });
     expect(readSettings({}).WORKERS).toBeGreaterThanOrEqual(1);
@@ -25,7 +28,7 @@ describe('the settings', () => {
       HOME: '/root',
     });
     expect(settings).toMatchObject({ PORT: 0, WORKERS: 3, SOLVE_DEADLINE: 2.5, HOST: '::1' });
-    expect(Object.keys(settings)).toHaveLength(9);
+    expect(Object.keys(settings)).toHaveLength(12);
   });
 
   it('take an empty variable as not set', () => {

@@ -15,7 +15,7 @@ const encoder = new TextEncoder();
  */
 export function encodeCsv(table: Table): Uint8Array<ArrayBuffer> {
   const { rows, columns } = table;
-  const cells = columns.map((column) => Array.from(column.values as ArrayLike<unknown>, cellOf));
+  const cells = columns.map((column) => cellsOf(column, rows));
   const pieces = [encoder.encode(`${columns.map((column) => textCell(headerOf(column))).join(',')}\r\n`)];
   for (let start = 0; start < rows; start += rowsAtOnce) {
     let text = '';
@@ -23,13 +23,21 @@ export function encodeCsv(table: Table): Uint8Array<ArrayBuffer> {
     for (let row = start; row < end; row++) {
       for (let i = 0; i < cells.length; i++) {
         text += i === 0 ? '' : ',';
-        text += cells[i][placeOf(columns[i], row)];
+        text += cells[i](row);
       }
       text += '\r\n';
     }
     pieces.push(encoder.encode(text));
   }
   return joined(pieces);
+}
+
+/** Gives the cell of a row. What stands in several rows is made text once, the rest as it comes. */
+function cellsOf(column: Column, rows: number): (row: number) => string {
+  const { values } = column;
+  if (values.length === rows) return (row) => cellOf(values[row]);
+  const texts = Array.from(values as ArrayLike<unknown>, cellOf);
+  return (row) => texts[placeOf(column, row)];
 }
 
 function headerOf({ name, unit }: Column): string {

@@ -7,7 +7,7 @@ import { shownText } from './answer-query.ts';
 import { entityTag, namedTag } from './entity-tag.ts';
 import { addResource } from './resource.ts';
 import { resultPath, sendOutcome } from './send-answer.ts';
-import { confirmWait, limitsOf } from './solve-limits.ts';
+import { limitsOf } from './solve-limits.ts';
 import type { SolveOptions } from './solve-resource.ts';
 
 /** A digest names one content for ever (RFC 8246). */
@@ -35,9 +35,8 @@ export function addResultResource(app: FastifyInstance, { answers, solveDeadline
           .send();
       }
       const outcome = await answers.toResult(result, wanted, limits);
-      confirmWait(request, reply, limits);
       if (outcome.kind === 'answered') reply.header('cache-control', cacheControl);
-      return sendOutcome(request, reply, result.operation, outcome);
+      return sendOutcome(request, reply, result.operation, outcome, limits);
     },
   });
 }

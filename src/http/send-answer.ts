@@ -2,9 +2,11 @@ import type { FastifyReply, FastifyRequest } from 'fastify';
 import { Fault } from '../faults/fault.ts';
 import type { Answered, AnswerOutcome } from '../jobs/answers.ts';
 import type { Format } from '../pool/answer-form.ts';
+import type { SolveLimits } from '../pool/solver-pool.ts';
 import { inPieces } from './answer-stream.ts';
 import { entityTag } from './entity-tag.ts';
 import { mediaTypeOf } from './negotiate-answer.ts';
+import { confirmWait } from './solve-limits.ts';
 
 /** Where the result of a digest is. */
 export function resultPath(digest: string): string {
@@ -25,6 +27,7 @@ export function sendOutcome(
   reply: FastifyReply,
   operation: string,
   outcome: AnswerOutcome,
+  limits: SolveLimits,
 ): FastifyReply {
   if (outcome.kind === 'gone') {
     request.log.info({ operation }, 'client gone');
@@ -34,6 +37,7 @@ export function sendOutcome(
     if (outcome.cause !== undefined) request.log.error({ operation, cause: outcome.cause }, 'solver failed');
     throw new Fault(outcome.records);
   }
+  confirmWait(request, reply, limits);
   return sendAnswer(reply, request.answerPreferences!.format, outcome);
 }
 

@@ -16,7 +16,7 @@ export function limitsOf(request: FastifyRequest, reply: FastifyReply, solveDead
   return { arrived: performance.now(), deadline, gone: goneSignal(reply) };
 }
 
-/** Confirms the preference that was followed. */
+/** Confirms the preference that an answer has followed. */
 export function confirmWait(request: FastifyRequest, reply: FastifyReply, { deadline }: SolveLimits): void {
   if (preferredWait(request.headers.prefer) === deadline)
     reply.header('preference-applied', `wait=${deadline}`);

@@ -7,7 +7,7 @@ import { warmUpBody } from '../pool/warm-up.ts';
 import { readPreferences, wantedAnswer } from './answer-preferences.ts';
 import { addResource } from './resource.ts';
 import { sendOutcome } from './send-answer.ts';
-import { confirmWait, limitsOf } from './solve-limits.ts';
+import { limitsOf } from './solve-limits.ts';
 
 /**
  * Largest body in bytes that is read on the event loop; larger ones are read in the worker. At 8 KiB
@@ -60,8 +60,7 @@ export function addSolveResource(
               wanted,
               limits,
             );
-      confirmWait(request, reply, limits);
-      return sendOutcome(request, reply, operation, outcome);
+      return sendOutcome(request, reply, operation, outcome, limits);
     },
   });
 }

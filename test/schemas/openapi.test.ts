@@ -5,12 +5,30 @@ import { join } from 'node:path';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { parse } from 'yaml';
 import { type Operation, readRequest } from '../../src/contract/read-request.ts';
+import { tableNames, tablesOf } from '../../src/encoding/tables.ts';
+import { viewsOf } from '../../src/figures/views.ts';
+import { readAnswerQuery } from '../../src/http/answer-query.ts';
+import { formOf, mediaTypeOf } from '../../src/http/negotiate-answer.ts';
 import { statusOfFault } from '../../src/http/statuses.ts';
+import { formats } from '../../src/pool/answer-form.ts';
 
 interface Reply {
   $ref?: string;
   content?: Record<string, { schema: { $ref?: string } }>;
   headers?: Record<string, unknown>;
+}
+interface QueryParameter {
+  name: string;
+  in: string;
+  description: string;
+  schema: {
+    enum?: string[];
+    default?: unknown;
+    minimum?: number;
+    maximum?: number;
+    items?: { type: string };
+    maxItems?: number;
+  };
 }
 interface OperationObject {
   operationId: string;
@@ -20,7 +38,9 @@ interface OperationObject {
 interface Document {
   openapi: string;
   paths: Record<string, Record<string, OperationObject>>;
+  info: { version: string };
   components: {
+    parameters: Record<string, QueryParameter>;
     schemas: Record<string, Record<string, unknown>>;
     responses: Record<string, Reply>;
   };
@@ -97,6 +117,7 @@ describe('the served document', () => {
       'post /v1/modes',
       'post /v1/responses',
       'post /v1/transfer-functions',
+      'get /v1/results/{digest}',
       'get /health/live',
       'get /health/ready',
       'get /openapi.yaml',
@@ -127,6 +148,62 @@ describe('the served document', () => {
       if (method !== 'post') continue;
       const listed = Object.keys(responses).map(Number);
       expect(listed.filter((status) => status >= 400)).toEqual([...possible].toSorted((a, b) => a - b));
+    }
+  });
+
+  it('has the version of the package, which is part of every digest', () => {
+    const { version } = JSON.parse(readFileSync(new URL('package.json', top), 'utf8')) as { version: string };
+    expect(document.info.version).toBe(version);
+  });
+
+  it('describes the query parameters as they are read', () => {
+    const { parameters } = document.components;
+    const queried = Object.values(parameters).filter((parameter) => parameter.in === 'query');
+    expect(() => readAnswerQuery({ x: '' })).toThrow(queried.map(({ name }) => name).join(', '));
+    expect(parameters.Format.schema.enum).toEqual(formats);
+    expect(parameters.Table.schema.enum).toEqual(tableNames);
+    expect(parameters.View.schema.enum!.toSorted()).toEqual(
+      [...new Set(Object.values(viewsOf).flat())].toSorted(),
+    );
+    const figure = formOf('modes', 'svg', {});
+    for (const { name, schema, description } of queried) {
+      const { minimum, maximum, maxItems } = schema;
+      const takes = (value: unknown): boolean => {
+        try {
+          readAnswerQuery({ [name]: String(value) });
+          return true;
+        } catch {
+          return false;
+        }
+      };
+      for (const value of schema.enum ?? []) expect(takes(value)).toBe(true);
+      if (minimum !== undefined && maximum !== undefined) {
+        expect([minimum - 1, minimum, maximum, maximum + 1].map(takes)).toEqual([false, true, true, false]);
+      }
+      if (maxItems !== undefined) {
+        expect([maxItems, maxItems + 1].map((length) => takes(Array<number>(length).fill(1)))).toEqual([
+          true,
+          false,
+        ]);
+      }
+      if (schema.default !== undefined && name !== 'format') {
+        expect(figure).toMatchObject({ figure: { [name]: schema.default } });
+      }
+      if (name === 'table' || name === 'view') {
+        for (const choices of Object.values(name === 'table' ? tablesOf : viewsOf)) {
+          for (const choice of choices) expect(description).toContain(`\`${choice}\``);
+        }
+      }
+    }
+  });
+
+  it('offers every form of an answer wherever there is one', () => {
+    for (const [path, , { responses }] of operations()) {
+      if (!path.startsWith('/v1/')) continue;
+      expect(Object.keys(responses['200'].content!)).toEqual(formats.map((format) => mediaTypeOf[format]));
+      expect(Object.keys(responses['200'].headers!)).toEqual(
+        expect.arrayContaining(['Content-Location', 'ETag', 'Vary']),
+      );
     }
   });
 
