@@ -4,6 +4,7 @@ import swaggerUi from '@fastify/swagger-ui';
 import type { FastifyInstance } from 'fastify';
 import { fault } from '../faults/fault.ts';
 import type { ReferenceDocument } from './document-resources.ts';
+import { requireAcceptable } from './media.ts';
 import { pathOf } from './problem-replies.ts';
 import { refuseOtherMethods } from './resource.ts';
 
@@ -62,6 +63,8 @@ export async function addReferencePage(app: FastifyInstance, document: Reference
 function addAssetRules(scope: FastifyInstance): void {
   scope.addHook('onRequest', async (request, reply) => {
     const path = pathOf(request);
+    const asked = ['GET', 'HEAD'].includes(request.method);
+    if (asked && [prefix, `${prefix}/`].includes(path)) requireAcceptable(request, ['text/html']);
     if (path === `${prefix}/static/`) return reply.callNotFound();
     if (path.includes('%00'))
       throw fault('malformed-http', '', { reason: 'the path holds a null character' });

@@ -193,6 +193,11 @@ describe('the reference page', () => {
     },
   );
 
+  it.each(['/', '/docs', '/docs/'])('is HTML only: %s', async (url) => {
+    const response = await fetch(service.url + url, { headers: { accept: 'application/json' } });
+    expect(await response.json()).toMatchObject({ status: 406, code: 'not-acceptable' });
+  });
+
   it('is that of the reference document', async () => {
     const document = await (await fetch(`${service.url}/docs/json`)).json();
     expect(document).toEqual(JSON.parse(trialPages.document.json));

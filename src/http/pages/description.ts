@@ -1,4 +1,4 @@
-import { html, Markup } from './markup.ts';
+import { html, type Markup } from './markup.ts';
 
 /** One paragraph of the description, without its bold title. */
 export interface Paragraph {

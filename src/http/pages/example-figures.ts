@@ -14,7 +14,6 @@ export interface Drawing {
 
 /** A figure of an example, and what is to be seen on it. */
 export interface FigureLink {
-  readonly caption: string;
   readonly alt: string;
   /** The first whose media query holds is shown; the last always can be. */
   readonly drawings: readonly Drawing[];
@@ -22,8 +21,8 @@ export interface FigureLink {
 
 /** Drawn for a telephone, so that its words stay readable, and for everything wider. */
 const screens = [
-  { narrow: true, width: 400, height: 320 },
-  { narrow: false, width: 500, height: 340 },
+  { narrow: true, width: 400, height: 360 },
+  { narrow: false, width: 500, height: 370 },
 ] as const;
 
 const wordsOfView: Readonly<Record<View, string>> = {
@@ -58,10 +57,8 @@ const viewsOfExample: Readonly<Record<string, readonly View[]>> = {
  */
 export function figureLinksOf({ name, title }: Example, resultUrl: string): FigureLink[] {
   return (viewsOfExample[name] ?? []).map((view) => {
-    const words = wordsOfView[view];
     return {
-      caption: words.charAt(0).toUpperCase() + words.slice(1),
-      alt: `${title}: ${words}`,
+      alt: `${title}: ${wordsOfView[view]}`,
       drawings: screens.flatMap((screen) => [
         drawing(resultUrl, view, screen, 'dark'),
         drawing(resultUrl, view, screen, 'light'),

@@ -6,7 +6,7 @@ import { html, type Markup } from './markup.ts';
 export type Loading = 'eager' | 'lazy';
 
 /** Forms of an answer that a link can ask for. */
-const forms = ['json', 'csv', 'arrow', 'svg', 'png'];
+const forms = ['JSON', 'CSV', 'Arrow', 'SVG', 'PNG'];
 
 /**
  * One example: its figures, links to its answer, the command that solves it, its request.
@@ -35,7 +35,7 @@ export function exampleSection(
       <div class="figures">${figureLinksOf(example, resultUrl).map((link) => figure(link, loading))}</div>
       <p class="forms">
         The answer:
-        ${forms.map((form) => html`<a href="${resultUrl}?format=${form}">${form.toUpperCase()}</a> `)}
+        ${forms.map((form) => html`<a href="${resultUrl}?format=${form.toLowerCase()}">${form}</a> `)}
       </p>
       <p class="label" id="${name}-command">Solve it from a shell</p>
       <pre tabindex="0" role="region" aria-labelledby="${name}-command"><code>${command}</code></pre>
@@ -48,7 +48,7 @@ export function exampleSection(
   `;
 }
 
-function figure({ caption, alt, drawings }: FigureLink, loading: Loading): Markup {
+function figure({ alt, drawings }: FigureLink, loading: Loading): Markup {
   const always = drawings[drawings.length - 1];
   return html`
     <figure>
@@ -67,7 +67,6 @@ function figure({ caption, alt, drawings }: FigureLink, loading: Loading): Marku
           loading="${loading}"
         />
       </picture>
-      <figcaption>${caption}</figcaption>
     </figure>
   `;
 }

@@ -76,8 +76,10 @@ export function startPage(page: StartPage): string {
           </nav>
         </header>
         <main id="main">
-          <p class="job">${inlineCode(paragraphsOf(info.description)[0].text)}</p>
-          ${cautions(info.description)}
+          <div class="opening">
+            <p class="job">${inlineCode(paragraphsOf(info.description)[0].text)}</p>
+            ${cautions(info.description)}
+          </div>
           <section id="examples" aria-labelledby="examples-title">
             <h2 id="examples-title">Examples</h2>
             <p>
