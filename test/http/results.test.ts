@@ -6,6 +6,7 @@ import { identifyRequest } from '../../src/contract/identify-request.ts';
 import { EmbeddedResults } from '../../src/jobs/embedded-results.ts';
 import { reachableBufferBytes } from '../jobs/collect-garbage.ts';
 import { startTrialService, type TrialOptions, type TrialService } from './trial-service.ts';
+import { trialPages } from './trial-pages.ts';
 
 const services: TrialService[] = [];
 
@@ -233,7 +234,8 @@ describe('a result', () => {
     };
     const full = await push(0);
     expect(await push(100)).toBeLessThan(full + 2e6);
-    expect(results.size.requests).toBe(50);
+    // The examples of the start page stay beside them.
+    expect(results.size.requests).toBe(50 + trialPages.examples.length);
     expect(results.size.answerBytes).toBeLessThanOrEqual(4e6);
   });
 });

@@ -173,6 +173,7 @@ describe('the service as it is started', () => {
       '/openapi.yaml',
       '/v1/modes',
       '/v1/responses',
+      '/v1/results/{digest}',
       '/v1/transfer-functions',
     ]);
     const yaml = await fetch(`${service.url}/openapi.yaml`);
