@@ -1,7 +1,7 @@
 import { execFileSync } from 'node:child_process';
 import { mkdtempSync, readdirSync, readFileSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
-import { join } from 'node:path';
+import { basename, join } from 'node:path';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { parse } from 'yaml';
 import { type Operation, readRequest } from '../../src/contract/read-request.ts';
@@ -9,6 +9,7 @@ import { tableNames, tablesOf } from '../../src/encoding/tables.ts';
 import { viewsOf } from '../../src/figures/views.ts';
 import { readAnswerQuery } from '../../src/http/answer-query.ts';
 import { formOf, mediaTypeOf } from '../../src/http/negotiate-answer.ts';
+import type { Example } from '../../src/http/pages/example.ts';
 import { statusOfFault } from '../../src/http/statuses.ts';
 import { formats } from '../../src/pool/answer-form.ts';
 
@@ -109,6 +110,16 @@ describe('the served document', () => {
       const { mapping } = discriminator as { mapping: Record<string, string> };
       const branches = (oneOf as { $ref: string }[]).map(({ $ref }) => $ref);
       expect(Object.values(mapping)).toEqual(branches);
+    }
+  });
+
+  it('lists its examples beside it, as they are written', () => {
+    const examples = JSON.parse(readFileSync(join(folder, 'examples.json'), 'utf8')) as Example[];
+    const names = readdirSync(new URL('schemas/examples/', top)).map((file) => basename(file, '.json'));
+    expect(examples.map(({ name }) => name).toSorted()).toEqual(names.toSorted());
+    for (const { name, operation, text } of examples) {
+      expect(text).toBe(readFileSync(new URL(`schemas/examples/${name}.json`, top), 'utf8'));
+      expect(document.paths).toHaveProperty([`/v1/${operation}`]);
     }
   });
 
