@@ -1,8 +1,9 @@
 import { createRequire } from 'node:module';
+import type * as ArrowModule from 'apache-arrow';
 import type { Data, DataType, Field } from 'apache-arrow';
 import { placeOf, type Column, type Table } from './table.ts';
 
-type Arrow = typeof import('apache-arrow');
+type Arrow = typeof ArrowModule;
 
 let loaded: Arrow | null = null;
 

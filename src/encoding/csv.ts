@@ -34,9 +34,9 @@ export function encodeCsv(table: Table): Uint8Array<ArrayBuffer> {
 
 /** Gives the cell of a row. What stands in several rows is made text once, the rest as it comes. */
 function cellsOf(column: Column, rows: number): (row: number) => string {
-  const { values } = column;
-  if (values.length === rows) return (row) => cellOf(values[row]);
-  const texts = Array.from(values as ArrayLike<unknown>, cellOf);
+  const { values, each } = column;
+  if (each === 1 && values.length === rows) return (row) => cellOf(values[row]);
+  const texts = Array.from(values as ArrayLike<Cell>, cellOf);
   return (row) => texts[placeOf(column, row)];
 }
 
@@ -44,7 +44,9 @@ function headerOf({ name, unit }: Column): string {
   return unit === null ? name : `${name} [${unit}]`;
 }
 
-function cellOf(value: unknown): string {
+type Cell = string | number | null;
+
+function cellOf(value: Cell): string {
   if (value === null) return '';
   return typeof value === 'string' ? textCell(value) : String(value);
 }

@@ -70,7 +70,7 @@ function fittingFormats(bindings: ReturnType<typeof bindingsOf>): readonly Forma
 export function negotiateCodings(request: FastifyRequest, format: Format): readonly ContentCoding[] {
   const offered: readonly ContentCoding[] = format === 'png' ? ['identity'] : ['br', 'gzip', 'identity'];
   const header = request.headers['accept-encoding'];
-  const codings = acceptedCodings(header === undefined ? undefined : String(header), offered);
+  const codings = acceptedCodings(header, offered);
   if (codings.length > 0) return codings;
   throw fault('coding-not-acceptable', '', {
     accept: shownText(String(header)),

@@ -56,7 +56,7 @@ describe('the query of an answer', () => {
     [{ modes: '0' }, /orders of modes/],
     [{ modes: '1.5' }, /orders of modes/],
   ])('refuses %j', (query, wording) => {
-    const faults = faultsOf(query as unknown as Record<string, string>);
+    const faults = faultsOf(query);
     expect(faults).toHaveLength(1);
     expect(faults[0]).toMatch(/^parameter-value: /);
     expect(faults[0]).toMatch(wording);

@@ -40,8 +40,10 @@ async function linkTo(path: string, request: object): Promise<{ link: string; js
   return { link: service.url + solved.headers.get('content-location'), json: await solved.json() };
 }
 
+type Cell = number | string | null;
+
 interface Read {
-  readonly columns: Record<string, unknown[]>;
+  readonly columns: Record<string, Cell[]>;
   readonly units: Record<string, string | undefined>;
 }
 
@@ -51,19 +53,19 @@ async function readTable(link: string, table: string): Promise<Read> {
   expect(csv.headers.get('content-type')).toBe('text/csv; charset=utf-8; header=present');
   const text = await csv.text();
   expect(text.endsWith('\r\n') && !/[^\r]\n/.test(text)).toBe(true);
-  const [header, ...rows] = parse(text) as string[][];
+  const [header, ...rows] = parse(text);
   const arrow = await fetch(`${link}?table=${table}`, {
     headers: { accept: 'application/vnd.apache.arrow.stream' },
   });
   expect(arrow.headers.get('content-type')).toBe('application/vnd.apache.arrow.stream');
   const read = tableFromIPC(await arrow.arrayBuffer());
   expect(read.schema.metadata?.get('table')).toBe(table);
-  const columns: Record<string, unknown[]> = {};
+  const columns: Record<string, Cell[]> = {};
   const units: Record<string, string | undefined> = {};
   for (const [i, { name, metadata }] of read.schema.fields.entries()) {
     units[name] = metadata?.get('unit');
     expect(header[i]).toBe(units[name] === undefined ? name : `${name} [${units[name]}]`);
-    columns[name] = Array.from({ length: read.numRows }, (_, row) => read.getChild(name).at(row) as unknown);
+    columns[name] = Array.from({ length: read.numRows }, (_, row) => read.getChild(name).at(row) as Cell);
     const texts = columns[name].map((value) => (value === null ? '' : String(value)));
     expect(rows.map((row) => row[i])).toEqual(texts);
   }

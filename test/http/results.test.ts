@@ -136,7 +136,7 @@ describe('a result', () => {
     const without = (headers: Headers) =>
       [...headers]
         .filter(([name]) => !['date', 'x-request-id', 'connection', 'keep-alive'].includes(name))
-        .toSorted();
+        .toSorted(([a], [b]) => (a < b ? -1 : 1));
     expect([head.status, without(head.headers)]).toEqual([200, without(get.headers)]);
     expect(await head.text()).toBe('');
     expect(head.headers.get('content-length')).toBe(String((await get.text()).length));
@@ -167,6 +167,16 @@ describe('a result', () => {
     ]);
   });
 
+  it('of a request of the service itself is there from the start and never forgotten', async () => {
+    const results = new EmbeddedResults({ requests: 1, requestBytes: 1e6, answerBytes: 0 });
+    const ownRequests = [{ operation: 'modes' as const, body: { own: true } }];
+    const { url, post } = await startService({ app: { results, ownRequests } });
+    const path = `/v1/results/${identifyRequest('modes', { own: true }, '1').digest}`;
+    expect(await (await fetch(url + path)).json()).toEqual({ echo: { own: true } });
+    for (const i of [1, 2, 3]) await (await post('/v1/modes', { i })).text();
+    expect((await fetch(url + path)).status).toBe(200);
+  });
+
   it('is solved once for all who ask for it at the same time', async () => {
     const store = withoutAnswers();
     const { url, pool } = await startService({ app: { results: store }, pool: { workers: 2 } });
@@ -193,7 +203,9 @@ describe('a result', () => {
       socket.destroy();
     };
     let stays: Promise<Response> | undefined;
-    await leave(path, () => (stays = fetch(url + path)));
+    await leave(path, () => {
+      stays = fetch(url + path);
+    });
     expect((await stays!).status).toBe(200);
     const endless = await pinned(store, { do: 'busy', milliseconds: 60_000 });
     await leave(endless, () => undefined);
