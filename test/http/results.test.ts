@@ -169,8 +169,8 @@ describe('a result', () => {
 
   it('of a request of the service itself is there from the start and never forgotten', async () => {
     const results = new EmbeddedResults({ requests: 1, requestBytes: 1e6, answerBytes: 0 });
-    const ownRequests = [{ operation: 'modes' as const, body: { own: true } }];
-    const { url, post } = await startService({ app: { results, ownRequests } });
+    const examples = [{ name: 'own', title: 'Own', operation: 'modes' as const, text: '{"own":true}' }];
+    const { url, post } = await startService({ app: { results, examples } });
     const path = `/v1/results/${identifyRequest('modes', { own: true }, '1').digest}`;
     expect(await (await fetch(url + path)).json()).toEqual({ echo: { own: true } });
     for (const i of [1, 2, 3]) await (await post('/v1/modes', { i })).text();

@@ -18,7 +18,7 @@ export interface TrialService {
 export interface TrialOptions {
   readonly pool?: Partial<SolverPoolOptions>;
   readonly app?: Partial<
-    Pick<AppOptions, 'solveDeadline' | 'bodyLimit' | 'stopGrace' | 'results' | 'version' | 'ownRequests'>
+    Pick<AppOptions, 'solveDeadline' | 'bodyLimit' | 'stopGrace' | 'results' | 'version' | 'examples'>
   >;
   readonly logger?: FastifyBaseLogger;
 }
