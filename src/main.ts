@@ -4,6 +4,7 @@ import closeWithGrace from 'close-with-grace';
 import { pino } from 'pino';
 import { readRequest } from './contract/read-request.ts';
 import { buildApp } from './http/app.ts';
+import type { Example } from './http/pages/example.ts';
 import { EmbeddedResults } from './jobs/embedded-results.ts';
 import { SolverPool } from './pool/solver-pool.ts';
 import { readSettings, type Settings } from './settings.ts';
@@ -35,6 +36,7 @@ const app = await buildApp({
   bodyLimit: settings.BODY_LIMIT,
   stopGrace: settings.STOP_GRACE,
   document,
+  examples: JSON.parse(readBeside('examples.json')) as Example[],
   logger,
 });
 

@@ -1,6 +1,8 @@
 /**
  * Bundles openapi.yaml and the files it refers to into one document, as it is served:
- * dist/openapi.json and dist/openapi.yaml (or in the folder given as argument).
+ * dist/openapi.json and dist/openapi.yaml (or in the folder given as argument). Beside them,
+ * dist/examples.json lists the examples with their texts as they are written, in the order of the
+ * document.
  *
  * After bundling, unions get the mapping of their discriminator (Ajv does not take one in the
  * schema files, generators of clients need it), what only a separate file needs is dropped, and
@@ -9,9 +11,9 @@
 import { execFileSync } from 'node:child_process';
 import { mkdirSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
-import { join } from 'node:path';
+import { basename, join } from 'node:path';
 import { fileURLToPath, pathToFileURL } from 'node:url';
-import { stringify } from 'yaml';
+import { parse, stringify } from 'yaml';
 
 const top = new URL('../../', import.meta.url);
 const target = process.argv[2] === undefined ? new URL('dist/', top) : pathToFileURL(`${process.argv[2]}/`);
@@ -50,6 +52,21 @@ function inlineExamples(value) {
   }
 }
 
+/** Every example of a request: its name, what it shows, its operation, its text as it is written. */
+function listExamples() {
+  const { paths } = parse(readFileSync(new URL('openapi.yaml', top), 'utf8'));
+  return Object.entries(paths).flatMap(([url, { post }]) =>
+    Object.values(post?.requestBody.content['application/json'].examples ?? {}).map(
+      ({ summary, externalValue }) => ({
+        name: basename(externalValue, '.json'),
+        title: summary,
+        operation: basename(url),
+        text: readFileSync(new URL(externalValue, top), 'utf8'),
+      }),
+    ),
+  );
+}
+
 const document = bundle();
 const { schemas } = document.components;
 for (const schema of Object.values(schemas)) {
@@ -61,6 +78,7 @@ inlineExamples(document.paths);
 
 mkdirSync(target, { recursive: true });
 writeFileSync(new URL('openapi.json', target), JSON.stringify(document));
+writeFileSync(new URL('examples.json', target), JSON.stringify(listExamples()));
 writeFileSync(
   new URL('openapi.yaml', target),
   stringify(document, { aliasDuplicateObjects: false, lineWidth: 0 }),

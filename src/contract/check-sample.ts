@@ -3,7 +3,7 @@ import type { ModesRequest, Positions, Sample, Times } from '../spec/types.ts';
 import { checkPosition, type Span } from './check-position.ts';
 
 /** Most values of a field or of mode shapes in one answer. */
-const mostValues = 1_000_000;
+export const mostValues = 1_000_000;
 
 /** What in a sample does not fit together or not to the member. */
 export function checkSample({ positions, times, quantities }: Sample, span: Span | null): FaultRecord[] {

@@ -16,7 +16,7 @@ export type Operation = 'modes' | 'responses' | 'transfer-functions';
 export type AnyRequest = ModesRequest | ResponsesRequest | TransferFunctionsRequest;
 
 /** Most faults that are listed at once. */
-const mostFaults = 50;
+export const mostFaults = 50;
 
 const readers = {
   modes: readerOf<ModesRequest>('ModesRequest', checkModesRequest),

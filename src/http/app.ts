@@ -1,5 +1,6 @@
 import type { IncomingMessage } from 'node:http';
 import accepts from '@fastify/accepts';
+import compress from '@fastify/compress';
 import helmet from '@fastify/helmet';
 import {
   fastify,
@@ -8,42 +9,41 @@ import {
   type FastifyInstance,
   type FastifyRequest,
 } from 'fastify';
+import { smallestCoded } from '../encoding/compress.ts';
 import { fault, faultRecord } from '../faults/fault.ts';
 import type { SolverPool } from '../pool/solver-pool.ts';
 import { readBody } from './body.ts';
 import { clientErrorHandler } from './client-errors.ts';
-import { addDocumentResources, type ReferenceDocument } from './document-resources.ts';
+import { addDocumentResources } from './document-resources.ts';
 import { addHealthResources } from './health-resources.ts';
 import { addProblemReplies, pathOf, sendProblem } from './problem-replies.ts';
 import { requestId } from './request-id.ts';
 import { Answers } from '../jobs/answers.ts';
 import type { ResultStore } from '../jobs/result-store.ts';
 import { addAnswerPreferences } from './answer-preferences.ts';
-import { pinRequests, type OwnRequest } from './pinned-results.ts';
+import { addPageResources, type PageOptions } from './page-resources.ts';
+import { pinRequests } from './pinned-results.ts';
+import { addReferencePage, isPagePart } from './reference-page.ts';
 import { knowAllMethods, templateOf } from './resource.ts';
 import { addResultResource } from './result-resource.ts';
+import { resultPath } from './send-answer.ts';
 import { addSolveResource, type SolveOptions } from './solve-resource.ts';
 
 /** Time that a request may take to arrive, s. */
 const requestTimeout = 60;
 
-export interface AppOptions extends Omit<SolveOptions, 'answers'> {
+export interface AppOptions extends Omit<SolveOptions, 'answers'>, Omit<PageOptions, 'resultUrls'> {
   readonly pool: SolverPool;
   /** Where results are kept under their digests. */
   readonly results: ResultStore;
-  /** Requests of the service's own pages; their results are never forgotten. */
-  readonly ownRequests?: readonly OwnRequest[];
-  /** Largest body in bytes. */
-  readonly bodyLimit: number;
   /** Seconds that work under way may take once the service is being stopped. */
   readonly stopGrace: number;
-  readonly document: ReferenceDocument;
   readonly logger?: FastifyBaseLogger;
 }
 
 /** The service as an app that is ready to listen; closing it stops the pool gracefully. */
 export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
-  const { pool, bodyLimit, document, logger } = options;
+  const { pool, bodyLimit, document, examples, logger } = options;
   const app = fastify({
     ...(logger === undefined ? {} : { loggerInstance: logger }),
     logController: new LogController({ disableRequestLogging: true }),
@@ -77,12 +77,16 @@ export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
 
   const paths = new Set<string>();
   app.addHook('onRoute', (route) => {
-    paths.add(templateOf(route.url));
+    if (!isPagePart(route.url)) paths.add(templateOf(route.url));
   });
   addRequestLog(app);
   addProblemReplies(app, pool, () => [...paths]);
   addGracefulStop(app, options);
-  await pinRequests(options.results, options.ownRequests ?? [], options);
+  const digests = await pinRequests(
+    options.results,
+    examples.map(({ operation, text }) => ({ operation, body: JSON.parse(text) as unknown })),
+    options,
+  );
   const answers = new Answers({
     pool,
     store: options.results,
@@ -97,8 +101,26 @@ export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
   addSolveResource(app, '/v1/transfer-functions', 'transfer-functions', solving);
   addResultResource(app, solving);
   addHealthResources(app, pool);
-  addDocumentResources(app, document);
+  await app.register(async (pages) => {
+    await addCompression(pages);
+    addDocumentResources(pages, document);
+    addPageResources(pages, { ...options, resultUrls: digests.map(resultPath) });
+    await addReferencePage(pages, document);
+  });
   return app;
+}
+
+/**
+ * Gzip for what is the same for everybody; answers are coded in the workers. No br: packing the
+ * scripts of the reference page with it takes a second, which only pays for files packed beforehand.
+ */
+async function addCompression(pages: FastifyInstance): Promise<void> {
+  await pages.register(compress, {
+    encodings: ['gzip', 'identity'],
+    threshold: smallestCoded,
+    customTypes: /^text\/|[/+](?:json|yaml|xml|javascript)\b/,
+    globalDecompression: false,
+  });
 }
 
 /** One line per request, with its id; never a body. */

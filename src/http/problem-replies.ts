@@ -16,9 +16,15 @@ export function addProblemReplies(
   app.setErrorHandler((error: FastifyError, request, reply) =>
     sendProblem(request, reply, recordsOf(error, request), pool),
   );
+  const notFound = (request: FastifyRequest): Error =>
+    fault('not-found', '', { path: pathOf(request), resources: paths().join(', ') });
   // Before the body is read: what is not served needs no body.
   app.addHook('onRequest', async (request) => {
-    if (request.is404) throw fault('not-found', '', { path: pathOf(request), resources: paths().join(', ') });
+    if (request.is404) throw notFound(request);
+  });
+  // What a handler finds missing below its own path.
+  app.setNotFoundHandler((request) => {
+    throw notFound(request);
   });
 }
 

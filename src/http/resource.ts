@@ -21,7 +21,6 @@ export interface Resource {
  */
 export function addResource(app: FastifyInstance, { url, offers, get, post }: Resource): void {
   const methods = [...(get === undefined ? [] : ['GET', 'HEAD']), ...(post === undefined ? [] : ['POST'])];
-  const allow = [...methods, 'OPTIONS'].join(', ');
   const negotiate = async (request: FastifyRequest, reply: FastifyReply): Promise<void> => {
     if (typeof offers === 'function') offers(request, reply);
     else requireAcceptable(request, offers);
@@ -34,6 +33,16 @@ export function addResource(app: FastifyInstance, { url, offers, get, post }: Re
     };
     app.post(url, { onRequest }, post);
   }
+  refuseOtherMethods(app, url, methods);
+}
+
+/**
+ * Answers every method that a resource does not have with 405 and `Allow`, OPTIONS with `Allow` alone.
+ *
+ * @param methods that it has
+ */
+export function refuseOtherMethods(app: FastifyInstance, url: string, methods: readonly string[]): void {
+  const allow = [...methods, 'OPTIONS'].join(', ');
   app.options(url, async (_request, reply) => reply.code(204).header('allow', allow).send());
   app.route({
     method: app.supportedMethods.filter((method) => method !== 'OPTIONS' && !methods.includes(method)),

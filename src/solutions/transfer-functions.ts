@@ -26,7 +26,7 @@ import { undrivenResonances } from './transfer-resonance.ts';
 import { seriesSource, type SeriesState } from './transfer-series.ts';
 
 /** Most values of one answer, outputs × frequencies. */
-const MOST_VALUES = 1_000_000;
+export const MOST_VALUES = 1_000_000;
 
 /** Modes taken where no closed form exists (ratios above 0.7, or beside drag). */
 const FALLBACK_MODES = 4096;

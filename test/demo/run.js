@@ -30,6 +30,6 @@ Call it yourself, from this folder:
 
   curl -s ${service.url}/v1/responses -H 'content-type: application/json' -d @schemas/examples/${examples[0].file}
 
-The reference of the interface: ${service.url}/openapi.yaml
+To look at: ${service.url}/ shows the examples with their figures, ${service.url}/docs is the reference.
 Serving until you stop it (Ctrl-C).`);
 process.exit(await service.ended);

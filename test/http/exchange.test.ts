@@ -1,4 +1,5 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { trialPages } from './trial-pages.ts';
 import { exchange, startTrialService, type TrialService } from './trial-service.ts';
 
 let service: TrialService;
@@ -86,6 +87,13 @@ describe('an exchange over HTTP', () => {
     ['POST', '/health/live', 'GET, HEAD, OPTIONS'],
     ['PROPFIND', '/health/ready', 'GET, HEAD, OPTIONS'],
     ['PATCH', '/openapi.yaml', 'GET, HEAD, OPTIONS'],
+    ['POST', '/', 'GET, HEAD, OPTIONS'],
+    ['DELETE', '/docs', 'GET, HEAD, OPTIONS'],
+    ['PUT', '/docs/', 'GET, HEAD, OPTIONS'],
+    ['POST', '/docs/json', 'GET, HEAD, OPTIONS'],
+    ['PATCH', '/docs/static/swagger-ui.css', 'GET, HEAD, OPTIONS'],
+    ['POST', '/examples/struck-pile.json', 'GET, HEAD, OPTIONS'],
+    ['POST', '/assets/page.css', 'GET, HEAD, OPTIONS'],
   ])('refuses %s %s and says what it takes', async (method, path, allow) => {
     const response = await fetch(service.url + path, { method });
     expect(response.headers.get('allow')).toBe(allow);
@@ -268,9 +276,9 @@ describe('an exchange over HTTP', () => {
   it('serves the reference document in both forms', async () => {
     const yaml = await fetch(`${service.url}/openapi.yaml`);
     expect([yaml.status, yaml.headers.get('content-type')]).toEqual([200, 'application/yaml']);
-    expect(await yaml.text()).toBe('openapi: 3.1.0\n');
+    expect(await yaml.text()).toBe(trialPages.document.yaml);
     const json = await fetch(`${service.url}/openapi.json`);
     expect(json.headers.get('content-type')).toBe('application/json');
-    expect(await json.json()).toEqual({ openapi: '3.1.0' });
+    expect(await json.json()).toEqual(JSON.parse(trialPages.document.json));
   });
 });

@@ -3,6 +3,7 @@ import { buildApp } from '../../src/http/app.ts';
 import { EmbeddedResults } from '../../src/jobs/embedded-results.ts';
 import { SolverPool } from '../../src/pool/solver-pool.ts';
 import { trialWorker } from '../pool/trial-pool.ts';
+import { trialPages } from './trial-pages.ts';
 import { startTrialService, type TrialService } from './trial-service.ts';
 
 let service: TrialService;
@@ -33,7 +34,7 @@ describe('the health of the service', () => {
       solveDeadline: 1,
       bodyLimit: 1024,
       stopGrace: 1,
-      document: { yaml: '', json: '' },
+      ...trialPages,
     });
     const live = await app.inject('/health/live');
     expect(live.statusCode).toBe(200);

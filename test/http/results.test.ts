@@ -6,6 +6,7 @@ import { identifyRequest } from '../../src/contract/identify-request.ts';
 import { EmbeddedResults } from '../../src/jobs/embedded-results.ts';
 import { reachableBufferBytes } from '../jobs/collect-garbage.ts';
 import { startTrialService, type TrialOptions, type TrialService } from './trial-service.ts';
+import { trialPages } from './trial-pages.ts';
 
 const services: TrialService[] = [];
 
@@ -168,8 +169,8 @@ describe('a result', () => {
 
   it('of a request of the service itself is there from the start and never forgotten', async () => {
     const results = new EmbeddedResults({ requests: 1, requestBytes: 1e6, answerBytes: 0 });
-    const ownRequests = [{ operation: 'modes' as const, body: { own: true } }];
-    const { url, post } = await startService({ app: { results, ownRequests } });
+    const examples = [{ name: 'own', title: 'Own', operation: 'modes' as const, text: '{"own":true}' }];
+    const { url, post } = await startService({ app: { results, examples } });
     const path = `/v1/results/${identifyRequest('modes', { own: true }, '1').digest}`;
     expect(await (await fetch(url + path)).json()).toEqual({ echo: { own: true } });
     for (const i of [1, 2, 3]) await (await post('/v1/modes', { i })).text();
@@ -245,7 +246,8 @@ describe('a result', () => {
     };
     const full = await push(0);
     expect(await push(100)).toBeLessThan(full + 2e6);
-    expect(results.size.requests).toBe(50);
+    // The examples of the start page stay beside them.
+    expect(results.size.requests).toBe(50 + trialPages.examples.length);
     expect(results.size.answerBytes).toBeLessThanOrEqual(4e6);
   });
 });

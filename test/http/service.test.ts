@@ -157,6 +157,20 @@ describe('the service as it is started', () => {
     },
   );
 
+  it('answers every link to a result that its start page has', async () => {
+    const page = await (await fetch(`${service.url}/`)).text();
+    const links = new Set(
+      [...page.matchAll(/"(\/v1\/results\/[^"]*)"/g)].map(([, link]) => link.replaceAll('&amp;', '&')),
+    );
+    // Five forms of each example, and at least one figure in two sizes and two themes.
+    expect(links.size).toBeGreaterThanOrEqual(files.length * (5 + 4));
+    for (const link of links) {
+      const response = await fetch(service.url + link);
+      const bytes = await response.arrayBuffer();
+      expect([link, response.status, bytes.byteLength > 0]).toEqual([link, 200, true]);
+    }
+  });
+
   it('serves the reference document that clients are built from', async () => {
     const document = (await (await fetch(`${service.url}/openapi.json`)).json()) as {
       openapi: string;
@@ -164,6 +178,9 @@ describe('the service as it is started', () => {
     };
     expect(document.openapi).toMatch(/^3\.1/);
     expect(Object.keys(document.paths).toSorted()).toEqual([
+      '/',
+      '/docs',
+      '/examples/{name}.json',
       '/health/live',
       '/health/ready',
       '/openapi.json',

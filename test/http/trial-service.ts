@@ -5,6 +5,7 @@ import { buildApp, type AppOptions } from '../../src/http/app.ts';
 import { EmbeddedResults } from '../../src/jobs/embedded-results.ts';
 import type { SolverPool, SolverPoolOptions } from '../../src/pool/solver-pool.ts';
 import { startTrialPool } from '../pool/trial-pool.ts';
+import { trialPages } from './trial-pages.ts';
 
 export interface TrialService {
   readonly app: FastifyInstance;
@@ -17,7 +18,7 @@ export interface TrialService {
 export interface TrialOptions {
   readonly pool?: Partial<SolverPoolOptions>;
   readonly app?: Partial<
-    Pick<AppOptions, 'solveDeadline' | 'bodyLimit' | 'stopGrace' | 'results' | 'version' | 'ownRequests'>
+    Pick<AppOptions, 'solveDeadline' | 'bodyLimit' | 'stopGrace' | 'results' | 'version' | 'examples'>
   >;
   readonly logger?: FastifyBaseLogger;
 }
@@ -33,7 +34,7 @@ export async function startTrialService(options: TrialOptions = {}): Promise<Tri
     solveDeadline: 30,
     bodyLimit: 8 * 1024 * 1024,
     stopGrace: 5,
-    document: { yaml: 'openapi: 3.1.0\n', json: '{"openapi":"3.1.0"}' },
+    ...trialPages,
     ...options.app,
     ...(options.logger === undefined ? {} : { logger: options.logger }),
   });

@@ -1,7 +1,7 @@
 import { execFileSync } from 'node:child_process';
 import { mkdtempSync, readdirSync, readFileSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
-import { join } from 'node:path';
+import { basename, join } from 'node:path';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { parse } from 'yaml';
 import { type Operation, readRequest } from '../../src/contract/read-request.ts';
@@ -9,6 +9,7 @@ import { tableNames, tablesOf } from '../../src/encoding/tables.ts';
 import { viewsOf } from '../../src/figures/views.ts';
 import { readAnswerQuery } from '../../src/http/answer-query.ts';
 import { formOf, mediaTypeOf } from '../../src/http/negotiate-answer.ts';
+import type { Example } from '../../src/http/pages/example.ts';
 import { statusOfFault } from '../../src/http/statuses.ts';
 import { formats } from '../../src/pool/answer-form.ts';
 
@@ -112,12 +113,25 @@ describe('the served document', () => {
     }
   });
 
+  it('lists its examples beside it, as they are written', () => {
+    const examples = JSON.parse(readFileSync(join(folder, 'examples.json'), 'utf8')) as Example[];
+    const names = readdirSync(new URL('schemas/examples/', top)).map((file) => basename(file, '.json'));
+    expect(examples.map(({ name }) => name).toSorted()).toEqual(names.toSorted());
+    for (const { name, operation, text } of examples) {
+      expect(text).toBe(readFileSync(new URL(`schemas/examples/${name}.json`, top), 'utf8'));
+      expect(document.paths).toHaveProperty([`/v1/${operation}`]);
+    }
+  });
+
   it('offers the routes of the service', () => {
     expect(operations().map(([path, method]) => `${method} ${path}`)).toEqual([
       'post /v1/modes',
       'post /v1/responses',
       'post /v1/transfer-functions',
       'get /v1/results/{digest}',
+      'get /',
+      'get /docs',
+      'get /examples/{name}.json',
       'get /health/live',
       'get /health/ready',
       'get /openapi.yaml',
@@ -186,8 +200,11 @@ describe('the served document', () => {
           false,
         ]);
       }
-      if (schema.default !== undefined && name !== 'format') {
-        expect(figure).toMatchObject({ figure: { [name]: schema.default } });
+      // Said in words, because a caller that fills defaults in would name them beside another format.
+      if (name !== 'format') expect(schema.default).toBeUndefined();
+      const stated = /(?:; |\(`)(\w+)(?:`, also)? where none is given/.exec(description ?? '')?.[1];
+      if (['width', 'height', 'theme'].includes(name)) {
+        expect(String((figure as unknown as { figure: Record<string, unknown> }).figure[name])).toBe(stated);
       }
       if (name === 'table' || name === 'view') {
         for (const choices of Object.values(name === 'table' ? tablesOf : viewsOf)) {
