@@ -53,7 +53,7 @@ export function checkIndependently(
   const perMode = grid.size;
   if (perMode > LARGEST_GRID) return null;
   const most = Math.max(1, Math.min(INSTANTS, Math.floor(WORK / (2 * perMode * kept.length))));
-  const balance = new PowerBalance(member, loads, times, Math.sqrt(highest), most);
+  const balance = new PowerBalance(member, loads, times, Math.sqrt(highest), most, kept.length);
   const { instants } = balance;
   const balanced = perMode * kept.length <= 2 * WORK;
   const stride = Math.max(1, Math.ceil((perMode * kept.length) / WORK));

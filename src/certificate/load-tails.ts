@@ -35,9 +35,9 @@ export class LoadTails {
   private readonly points: TailFlexibility | null;
   private readonly pointOf: Int32Array;
   private readonly moving: (MovingTail | null)[];
-  /** Reaches found for the modes left out and for those kept, by load. */
+  /** Reaches found for the modes left out, and their plain form for the modes kept, by load. */
   private readonly reaches = new Map<number, KnownReach>();
-  private readonly keptReaches = new Map<number, KnownReach>();
+  private readonly swings = new Map<number, { readonly omega: number; readonly swing: number }>();
 
   constructor(member: WaveMember, loads: readonly AppliedLoad[]) {
     this.member = member;
@@ -94,9 +94,8 @@ export class LoadTails {
       const kicks = measures.weighedKicks(0);
       // F_n itself is known to the rounding of its terms only
       const known = Math.abs(factor) + load.totalForce * peakDisplacement(this.member, mode.shape);
-      const { energy } = this.reachOf(this.keptReaches, index, omega, mode.frequency.order - 1);
       const reach = Math.min(
-        measures.largest + energy,
+        measures.largest + this.swingOf(index, omega, mode.frequency.order - 1),
         harmonicReach(measures, this.member, mode),
         omega * span * measures.largest,
       );
@@ -140,7 +139,7 @@ export class LoadTails {
     const c = Math.sqrt(this.complianceTail(index, nextOmega));
     const f = load.smooth ? Math.sqrt(Math.max(0, this.norm[index]) + 64 * EPS * load.massNorm) : Infinity;
     const source = Math.min(c, f / nextOmega);
-    const { rest, energy } = this.reachOf(this.reaches, index, nextOmega, kept);
+    const { rest, energy } = this.reachOf(index, nextOmega, kept);
     const gamma = decayRate(this.member, nextOmega, kept);
     const zeta = 0.5 * ratio;
     const fading = zeta < 1 && damping.stiffnessCoefficient === 0;
@@ -181,13 +180,22 @@ export class LoadTails {
   }
 
   /** The reach of a load's history, found anew only when ω has grown by an eighth: it falls with ω and N. */
-  private reachOf(known: Map<number, KnownReach>, index: number, omega: number, kept: number): Reach {
-    const last = known.get(index);
+  private reachOf(index: number, omega: number, kept: number): Reach {
+    const last = this.reaches.get(index);
     if (last && omega < 1.125 * last.omega && omega >= last.omega && kept > 8) return last.reach;
     const measures = this.loads[index].measures as HistoryMeasures;
     const reach = reachOfHistory(measures, this.member, omega, kept);
-    known.set(index, { omega, reach });
+    this.reaches.set(index, { omega, reach });
     return reach;
+  }
+
+  /** The plainest form of its energy part, for rounding only: found anew when ω has grown fourfold. */
+  private swingOf(index: number, omega: number, kept: number): number {
+    const last = this.swings.get(index);
+    if (last && omega < 4 * last.omega) return last.swing;
+    const swing = plainSwing(this.loads[index].measures as HistoryMeasures, this.member, omega, kept);
+    this.swings.set(index, { omega, swing });
+    return swing;
   }
 }
 
@@ -249,6 +257,16 @@ function reachOfHistory(measures: HistoryMeasures, member: WaveMember, omega: nu
     take(reach, reach + gain * r);
   }
   return { rest, energy };
+}
+
+/** The energy norm ω²|(r, q′/ω)|/F of any later mode by V or its faded form alone. */
+function plainSwing(measures: HistoryMeasures, member: WaveMember, omega: number, kept: number): number {
+  const total = totalVariation(measures);
+  const { damping } = member;
+  const zeta = largestRatioAbove(damping, kept) + (0.5 * damping.massCoefficient) / omega;
+  const gamma = decayRate(member, omega, kept);
+  if (damping.stiffnessCoefficient > 0 || zeta >= 1 || gamma === 0) return total;
+  return Math.min(total, measures.weighed(gamma, 1, 0) * Math.sqrt((1 + zeta) / (1 - zeta)));
 }
 
 /** ω²|(q, q′/ω)|/F of one mode under a lasting harmonic from rest, at most: twice its steady amplitude. */

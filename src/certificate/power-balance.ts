@@ -7,8 +7,11 @@ import { GAUSS_20 } from '../numerics/gauss-legendre.ts';
 
 /** Phase of the quickest mode over one panel of time. */
 const PANEL = 8;
-/** Panels of time over which the power of loads is integrated at most. */
+/** Panels of time over which the power of loads is integrated at most, and at least. */
 const PANELS = 100;
+const FEWEST_PANELS = 10;
+/** Products of modes and quadrature nodes that the integral may spend beyond that. */
+const WORK = 40_000;
 
 /**
  * What loads and damping do to the energy of each mode, integrated in time from the power itself,
@@ -17,7 +20,7 @@ const PANELS = 100;
  *
  * by Gauss panels that end where a load changes its formula (impulses of a support beside it), not
  * from the energy left. Without loads what damping takes is closed form and any sampled instants serve;
- * with loads the instants are those of the first 100 panels.
+ * with loads the instants are those of the first panels, 100 at most and fewer of long series.
  */
 export class PowerBalance {
   /** Instants at which the balance is drawn, s. */
@@ -37,16 +40,25 @@ export class PowerBalance {
   private readonly kickInstant: Instant | null;
   private readonly worked: Float64Array;
 
+  /**
+   * @param highest highest frequency of the modes, rad/s
+   * @param most instants at most
+   * @param modes number of modes that will be added
+   */
   constructor(
     member: WaveMember,
     loads: readonly AppliedLoad[],
     times: Float64Array,
     highest: number,
     most: number,
+    modes: number,
   ) {
     this.member = member;
     const loaded = loads.length > 0;
-    const { panels, end } = loaded ? panelsOf(loads, times, highest) : { panels: [], end: Infinity };
+    const count = Math.floor(WORK / (GAUSS_20.nodes.length * modes));
+    const { panels, end } = loaded
+      ? panelsOf(loads, times, highest, Math.max(FEWEST_PANELS, Math.min(PANELS, count)))
+      : { panels: [], end: Infinity };
     const inside = times.filter((t) => t <= end);
     this.instants = Float64Array.from(inside.length > 0 ? pick(inside, most) : [end]);
     this.taken = new Float64Array(this.instants.length);
@@ -140,17 +152,18 @@ function panelsOf(
   loads: readonly AppliedLoad[],
   times: Float64Array,
   highest: number,
+  most: number,
 ): { panels: number[]; end: number } {
   const span = times.reduce((latest, t) => Math.max(latest, t), 0);
   const events = loads
-    .flatMap((load) => load.events(span, PANELS))
+    .flatMap((load) => load.events(span, most))
     .filter((t) => t > 0 && t < span)
     .toSorted((a, b) => a - b);
   const quickest = loads.reduce((rate, load) => Math.max(rate, load.quickest), highest);
   const width = PANEL / quickest;
   const panels = [0];
   let next = 0;
-  while (panels.length <= PANELS && panels[panels.length - 1] < span) {
+  while (panels.length <= most && panels[panels.length - 1] < span) {
     const from = panels[panels.length - 1];
     while (next < events.length && events[next] <= from) next++;
     panels.push(Math.min(from + width, events[next] ?? span, span));
