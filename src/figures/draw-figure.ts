@@ -1,0 +1,110 @@
+import { fault } from '../faults/fault.ts';
+import type {
+  ModesAnswer,
+  ModesRequest,
+  ResponsesAnswer,
+  ResponsesRequest,
+  TransferFunctionsAnswer,
+  TransferFunctionsRequest,
+} from '../spec/types.ts';
+import { convergenceData } from './data/convergence-data.ts';
+import { envelopeData } from './data/envelope-data.ts';
+import { frequenciesData } from './data/frequencies-data.ts';
+import { heatMapData } from './data/heat-map-data.ts';
+import { historyData } from './data/history-data.ts';
+import type { FigureWords, PanelFigure } from './data/panel-figure.ts';
+import { shapesData } from './data/shapes-data.ts';
+import { snapshotsData } from './data/snapshots-data.ts';
+import { transferData } from './data/transfer-data.ts';
+import { drawHeatMap } from './draw/draw-heat-map.ts';
+import { drawPanels } from './draw/draw-panels.ts';
+import { panelRoom } from './draw/panel-room.ts';
+import { Sheet } from './frame/sheet.ts';
+import { type FigureOperation, figureSizes, type View, viewsOf } from './views.ts';
+
+/** Which figure is wanted, and how. */
+export interface FigureOptions {
+  view: View;
+  /** Size in px, within {@link figureSizes}. */
+  width: number;
+  height: number;
+  theme: 'light' | 'dark';
+  /** Positions, m, whose nearest sampled ones are shown by history and force-history. */
+  stations?: readonly number[];
+  /** Times, s, whose nearest sampled ones are shown by snapshots. */
+  instants?: readonly number[];
+  /** Orders of the modes shown by shapes and frequencies. */
+  modes?: readonly number[];
+}
+
+/**
+ * A figure of an answer as SVG: no scripts, no ids, nothing outside itself; the same arguments give the
+ * same bytes.
+ *
+ * @param request the canonical request
+ * @param answer the answer to it
+ *
+ * Faults: `figure-not-of-operation`, `figure-size`, and those of the data of the view.
+ * Cost: O(samples) for the data, O(pixels) for the drawing.
+ */
+export function drawFigure(
+  operation: FigureOperation,
+  request: unknown,
+  answer: unknown,
+  options: FigureOptions,
+): string {
+  const { view, width, height, theme } = options;
+  if (!viewsOf[operation].includes(view)) {
+    throw fault('figure-not-of-operation', '', { operation, view, views: viewsOf[operation].join(', ') });
+  }
+  requireSize('width', width);
+  requireSize('height', height);
+  const sheet = new Sheet(width, height, theme);
+  if (view === 'heat-map') {
+    const figure = heatMapData(request as ResponsesRequest, answer as ResponsesAnswer);
+    drawHeatMap(sheet, figure, theme);
+    return finish(sheet, figure.words);
+  }
+  const figure = panelFigure(view, request, answer, options);
+  drawPanels(sheet, figure);
+  return finish(sheet, figure.words);
+}
+
+function requireSize(side: 'width' | 'height', size: number): void {
+  const { least, most } = figureSizes[side];
+  if (Number.isInteger(size) && size >= least && size <= most) return;
+  throw fault('figure-size', '', { side, size, least, most });
+}
+
+function panelFigure(
+  view: Exclude<View, 'heat-map'>,
+  request: unknown,
+  answer: unknown,
+  options: FigureOptions,
+): PanelFigure {
+  const { width, height } = options;
+  const { kind } = (request as { member: { kind: string } }).member;
+  const along = panelRoom(width, height, kind === 'shear-column' ? 'upright' : 'position');
+  const below = panelRoom(width, height, 'time');
+  switch (view) {
+    case 'shapes':
+      return shapesData(request as ModesRequest, answer as ModesAnswer, options, along);
+    case 'frequencies':
+      return frequenciesData(request as ModesRequest, answer as ModesAnswer, options);
+    case 'history':
+    case 'force-history':
+      return historyData(request as ResponsesRequest, answer as ResponsesAnswer, options, below, view);
+    case 'snapshots':
+      return snapshotsData(request as ResponsesRequest, answer as ResponsesAnswer, options, along);
+    case 'envelope':
+      return envelopeData(request as ResponsesRequest, answer as ResponsesAnswer);
+    case 'convergence':
+      return convergenceData(request as ResponsesRequest, answer as ResponsesAnswer);
+    case 'transfer':
+      return transferData(request as TransferFunctionsRequest, answer as TransferFunctionsAnswer, below);
+  }
+}
+
+function finish(sheet: Sheet, { title, subtitle, notes }: FigureWords): string {
+  return sheet.finish(`${title}: ${subtitle}`, notes.join(' '));
+}

@@ -1,0 +1,72 @@
+import type { Numbers } from '../../spec/types.ts';
+import { px } from '../frame/sheet.ts';
+
+/** Places on the sheet of the points of a curve, px; `along` ascends or descends. */
+export interface Points {
+  readonly along: Float64Array;
+  readonly across: Float64Array;
+}
+
+/** Places of numbers on an axis. */
+export function placesOf(values: Numbers, place: (value: number) => number): Float64Array {
+  const places = new Float64Array(values.length);
+  for (let i = 0; i < values.length; i++) places[i] = place(values[i]);
+  return places;
+}
+
+/**
+ * The points that a drawing can show: of each pixel along, the first, the least, the greatest and the last
+ * in their order, so that no peak is lost. Few points are kept as they are. Cost O(points).
+ */
+export function thinOut({ along, across }: Points): Points {
+  const count = along.length;
+  const pixels = Math.abs(along[count - 1] - along[0]) + 1;
+  if (count <= 2 * pixels + 8) return { along, across };
+  const keptAlong: number[] = [];
+  const keptAcross: number[] = [];
+  const keep = (i: number) => {
+    keptAlong.push(along[i]);
+    keptAcross.push(across[i]);
+  };
+  for (let first = 0; first < count;) {
+    const pixel = Math.floor(along[first]);
+    let least = first;
+    let most = first;
+    let next = first;
+    while (next < count && Math.floor(along[next]) === pixel) {
+      if (across[next] < across[least]) least = next;
+      if (across[next] > across[most]) most = next;
+      next++;
+    }
+    const last = next - 1;
+    for (const i of [...new Set([first, Math.min(least, most), Math.max(least, most), last])]) keep(i);
+    first = next;
+  }
+  return { along: Float64Array.from(keptAlong), across: Float64Array.from(keptAcross) };
+}
+
+/** SVG path through points; `upright` swaps the axes. */
+export function pathOf({ along, across }: Points, upright: boolean, start = 'M'): string {
+  let path = '';
+  for (let i = 0; i < along.length; i++) {
+    const a = px(along[i]);
+    const b = px(across[i]);
+    path += `${i === 0 ? start : 'L'}${upright ? `${b} ${a}` : `${a} ${b}`}`;
+  }
+  return path;
+}
+
+/** Path of a step line that holds every value until the next place. */
+export function stepsOf({ along, across }: Points): string {
+  let path = '';
+  for (let i = 0; i < along.length; i++) {
+    path += i === 0 ? `M${px(along[0])} ${px(across[0])}` : `H${px(along[i])}V${px(across[i])}`;
+  }
+  return path;
+}
+
+/** Closed path between two curves over the same places; each is thinned to its outermost points. */
+export function areaBetween(lower: Points, upper: Points, upright: boolean): string {
+  const back = thinOut(lower);
+  return `${pathOf(thinOut(upper), upright)}${pathOf({ along: back.along.toReversed(), across: back.across.toReversed() }, upright, 'L')}Z`;
+}
