@@ -20,7 +20,8 @@ export const figureFaultWordings = {
   },
   'figure-mode-not-solved': {
     title: 'A mode was not solved',
-    detail: 'Mode {order} was not solved; the answer holds modes 1 to {count}. Choose among those or solve more.',
+    detail:
+      'Mode {order} was not solved; the answer holds modes 1 to {count}. Choose among those or solve more.',
   },
   'figure-station-outside': {
     title: 'A station lies outside the sampled stretch',
@@ -39,7 +40,8 @@ export const figureFaultWordings = {
   },
   'figure-needs-samples': {
     title: 'There are too few samples for this figure',
-    detail: 'The view "{view}" needs at least two sampled {what}. Sample more, or ask for the view "{instead}".',
+    detail:
+      'The view "{view}" needs at least two sampled {what}. Sample more, or ask for the view "{instead}".',
   },
   'figure-without-energy': {
     title: 'There is no energy to share among the modes',

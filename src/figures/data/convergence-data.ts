@@ -28,7 +28,10 @@ export interface SeriesConvergence {
  * proportion to Σ_{k>n} 1/ω_k², above N with evenly spaced frequencies, Σ_{k>N} 1/k² ≈ 1/(N + ½).
  * The shapes' part in Γ varies along the member, so this is no bound. Cost O(N).
  */
-export function convergenceOf({ coefficients, convergence }: ResponsesAnswer, loaded: boolean): SeriesConvergence {
+export function convergenceOf(
+  { coefficients, convergence }: ResponsesAnswer,
+  loaded: boolean,
+): SeriesConvergence {
   const count = coefficients.length;
   const { total, tail } = convergence.energy;
   const leftOut = new Float64Array(count);
@@ -69,22 +72,27 @@ export function convergenceData(request: ResponsesRequest, answer: ResponsesAnsw
   const panels: Panel[] = [
     {
       label: '',
-      value: { name: 'energy left out', unit: '', logarithmic: true, ...decadesOf(leftOut) },
+      value: {
+        name: 'energy left out / total, exact but for rounding',
+        unit: '',
+        logarithmic: true,
+        ...decadesOf(leftOut),
+      },
       curves: [{ along: modes, values: leftOut, look: 0, kind }],
       marks: [{ along: modes.length, value: leftOut[modes.length - 1] }],
     },
   ];
-  const key: KeyEntry[] = [{ label: 'energy left out over the total, exact but for rounding', look: 0 }];
+  const key: KeyEntry[] = [];
   const hasBound = displacementBound !== null && displacementBound > 0;
   if (hasBound) {
-    key[0] = { ...key[0] };
     panels.push(boundPanel(request, answer, modes, estimate, { word, unit, kind, key }));
     key.push({ label: `certified with ${countOf(modesUsed, 'mode')}`, look: 0, kind: 'dot' });
   } else key.push({ label: `with the ${countOf(modesUsed, 'mode')} used`, look: 0, kind: 'dot' });
 
   const captured = 100 * energy.capturedFraction;
   const share = captured > 99.99 ? 'All but' : 'Captured:';
-  const amount = captured > 99.99 ? formatNumber(leftOut[modes.length - 1], 2) : `${formatNumber(captured, 4)} %`;
+  const amount =
+    captured > 99.99 ? formatNumber(leftOut[modes.length - 1], 2) : `${formatNumber(captured, 4)} %`;
   return {
     words: {
       title: 'Convergence of the modal series',
@@ -95,7 +103,9 @@ export function convergenceData(request: ResponsesRequest, answer: ResponsesAnsw
             ? `Bound on the ${word}, certified: ±${roundedUp(displacementBound, unit)}.`
             : `No bound on the ${word} exists.`
         }`,
-        ...(loaded && hasBound ? ['The bound includes the loads and is certified with the modes used only.'] : []),
+        ...(loaded && hasBound
+          ? ['The bound includes the loads and is certified with the modes used only.']
+          : []),
         ...(modesNeeded === undefined
           ? []
           : [`The tolerance would take about ${countOf(modesNeeded, 'mode')}, an estimate.`]),
@@ -124,7 +134,11 @@ function boundPanel(
   }
   const tolerance = toleranceOf(request, answer);
   if (tolerance !== null && tolerance > 0) {
-    curves.push({ along: [modesAxis(modes.length).from, modesAxis(modes.length).to], values: [tolerance, tolerance], look: 2 });
+    curves.push({
+      along: [modesAxis(modes.length).from, modesAxis(modes.length).to],
+      values: [tolerance, tolerance],
+      look: 2,
+    });
     shown.push(tolerance);
     key.push({ label: `tolerance ${roundedUp(tolerance, unit)}`, look: 2 });
   }

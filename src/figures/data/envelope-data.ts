@@ -61,7 +61,8 @@ export function envelopeData(request: ResponsesRequest, answer: ResponsesAnswer)
   const upper = peak?.upper ?? null;
   // a limit far beyond the motion would press it flat; the words tell it
   const reach = Math.max(-low, high);
-  if (upper !== null && upper > 0 && upper <= 2.5 * reach) {
+  const limited = upper !== null && upper > 0 && upper <= 2.5 * reach;
+  if (limited) {
     const ends = [0, outlineOf(request.member).length];
     for (const side of [-upper, upper]) {
       curves.push({ along: ends, values: [side, side], look: 1 });
@@ -86,8 +87,11 @@ export function envelopeData(request: ResponsesRequest, answer: ResponsesAnswer)
       title: `Envelope of ${sampled.word}`,
       subtitle: responseInWords(request.member, answer),
       notes: [
-        `${boundInWords(field, bound, sampled.gaugeTime)}${moves ? '' : ` The ${sampled.word} is zero throughout.`}`,
-        ...(upper === null
+        ...(moves && bound && field.boundKind === 'pointwise'
+          ? []
+          : [boundInWords(field, bound, sampled.gaugeTime)]),
+        ...(moves ? [] : [`The ${sampled.word} is zero throughout.`]),
+        ...(upper === null || limited
           ? []
           : [
               `Certified limit over the whole member and the sampled time: ${roundedUp(upper, unit)}${limitWord(field.boundKind)}.`,
@@ -96,9 +100,7 @@ export function envelopeData(request: ResponsesRequest, answer: ResponsesAnswer)
     },
     along: { name: 'position', unit: 'm', from: 0, to: outline.length },
     value: { name: sampled.name, unit, ...rangeAround(low, high) },
-    panels: [
-      { label: `${capital(sampled.word)} over ${timesInWords(sampled)}`, areas, curves, marks },
-    ],
+    panels: [{ label: `${capital(sampled.word)} over ${timesInWords(sampled)}`, areas, curves, marks }],
     key,
     outline,
   };

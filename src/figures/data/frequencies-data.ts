@@ -30,8 +30,14 @@ function plainFrequencies(request: ModesRequest, answer: ModesAnswer, modes: rea
       subtitle: modesInWords(request, answer),
       notes: ['Effective masses are shown where the request asks for participation.'],
     },
-    along: { name: 'order of the mode', unit: '', from: 0, to: last + Math.max(0.5, 0.02 * last), whole: true },
-    value: { name: 'frequency', unit: 'Hz', from: 0, to: highest > 0 ? 1.12 * highest : 1 },
+    along: {
+      name: 'order of the mode',
+      unit: '',
+      from: 0,
+      to: last + Math.max(0.5, 0.02 * last),
+      whole: true,
+    },
+    value: { name: 'frequency', unit: 'Hz', from: 0, to: highest > 0 ? 1.18 * highest : 1 },
     panels: [
       {
         label: '',
@@ -41,7 +47,9 @@ function plainFrequencies(request: ModesRequest, answer: ModesAnswer, modes: rea
             values: frequencies,
             look: 0,
             kind: 'stems',
-            labels: frequencies.map((frequency) => formatQuantity(frequency, 'Hz', 4)),
+            ...(modes.length <= 12 && {
+              labels: frequencies.map((frequency) => formatQuantity(frequency, 'Hz', 4)),
+            }),
           },
         ],
       },
@@ -49,6 +57,8 @@ function plainFrequencies(request: ModesRequest, answer: ModesAnswer, modes: rea
     key: [],
   };
 }
+
+const percents = [0, 25, 50, 75, 100].map((value) => ({ value, label: String(value) }));
 
 function effectiveMasses(
   request: ModesRequest,
@@ -76,7 +86,7 @@ function effectiveMasses(
       ],
     },
     along: { name: 'frequency', unit: 'Hz', from: 0, to: highest > 0 ? 1.03 * highest : 1 },
-    value: { name: `effective ${shaft ? 'inertia' : 'mass'}`, unit: '%', from: 0, to: 108 },
+    value: { name: `effective ${shaft ? 'inertia' : 'mass'}`, unit: '%', from: 0, to: 122, marks: percents },
     panels: [
       {
         label: '',

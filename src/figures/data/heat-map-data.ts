@@ -46,7 +46,7 @@ export function heatMapData(request: ResponsesRequest, answer: ResponsesAnswer):
       notes: [
         ...rest,
         boundInWords(field, boundAlong(sampled), sampled.gaugeTime),
-        'Negative values are hatched.',
+        ...(reach > 0 ? ['Negative values are hatched.'] : []),
       ],
     },
     name: sampled.name,

@@ -1,5 +1,5 @@
 import type { ResponsesAnswer, ResponsesRequest } from '../../spec/types.ts';
-import { countOf, formatQuantity } from '../text/format-values.ts';
+import { countOf, formatAmong } from '../text/format-values.ts';
 import type { View } from '../views.ts';
 import type { Panel, PanelFigure } from './panel-figure.ts';
 import { boundInWords, capital, responseInWords } from './quantity-words.ts';
@@ -12,7 +12,7 @@ import {
   requireSamples,
   type SampledField,
 } from './sampled-field.ts';
-import { extentOf, nearest, rangeAround } from './value-range.ts';
+import { extentOf, nearest, rangeAround, stepOf } from './value-range.ts';
 
 /** Stations shown where none is asked for. */
 const usual = 3;
@@ -49,7 +49,7 @@ export function historyData(
     }
     const rest = low === 0 && high === 0 ? ' · at rest throughout' : '';
     return {
-      label: `at ${formatQuantity(sampled.positions[index], 'm', 6)}${rest}`,
+      label: `at ${formatAmong(sampled.positions[index], stepOf(sampled.positions), 'm')}${rest}`,
       curves: [
         {
           along: sampled.times,
@@ -85,9 +85,7 @@ export function historyData(
 
 function selectionNote(shown: number, wanted: number, sampled: number, asked: boolean): string[] {
   if (shown < wanted) {
-    return [
-      `Shown: the first ${shown} of ${wanted} stations asked for; a higher figure has room for more.`,
-    ];
+    return [`Shown: the first ${shown} of ${wanted} stations asked for; a higher figure has room for more.`];
   }
   if (asked || shown === sampled) return [];
   return [`Shown: ${shown} of ${countOf(sampled, 'sampled position')}, among them the one of the peak.`];

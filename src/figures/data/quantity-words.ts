@@ -54,7 +54,8 @@ export function nameOfValues(word: string, field: Field, gaugeTime: number): str
 export function boundInWords(field: Field, bound: Numbers | null, gaugeTime: number): string {
   const unit = printedUnit(field.unit);
   if (field.boundKind === 'rms') {
-    const rms = field.rms === undefined ? '' : `: r.m.s. error over the member ≤ ${roundedUp(field.rms, unit)}`;
+    const rms =
+      field.rms === undefined ? '' : `: r.m.s. error over the member ≤ ${roundedUp(field.rms, unit)}`;
     return `No bound holds at single instants${rms}.`;
   }
   if (bound === null || bound.length === 0) return 'No bound exists for these values.';

@@ -41,9 +41,7 @@ export function shapesData(
     most = Math.max(most, high);
     return {
       label: labelOf(mode),
-      curves: [
-        { along: positions, values, look: 0, kind: positions.length > 40 ? 'line' : 'dots' },
-      ],
+      curves: [{ along: positions, values, look: 0, kind: positions.length > 40 ? 'line' : 'dots' }],
     };
   });
   const outline = outlineOf(request.member);
@@ -62,7 +60,7 @@ export function shapesData(
     },
     along: { name: 'position', unit: 'm', from: 0, to: outline.length },
     value: {
-      name: quantity === 'displacement' ? `shape of ${word}` : word,
+      name: quantity === 'displacement' ? `modal ${word}` : word,
       unit: unitOfShape(request, quantity),
       ...rangeAround(least, most),
     },
@@ -119,6 +117,7 @@ function selectionNote(
 function unitOfShape({ member, shapes }: ModesRequest, quantity: 'displacement' | 'force'): string {
   const turns = member.kind === 'shaft';
   const root = turns ? '√(kg·m²)' : '√kg';
-  if (shapes?.normalisation === 'mass') return quantity === 'force' ? `${turns ? 'N·m' : 'N'}/${root}` : `/${root}`;
+  if (shapes?.normalisation === 'mass')
+    return quantity === 'force' ? `${turns ? 'N·m' : 'N'}/${root}` : `/${root}`;
   return quantity === 'force' ? (turns ? 'N·m/rad' : 'N/m') : '';
 }

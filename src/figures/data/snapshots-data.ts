@@ -1,5 +1,5 @@
 import type { ResponsesAnswer, ResponsesRequest } from '../../spec/types.ts';
-import { countOf, formatQuantity } from '../text/format-values.ts';
+import { countOf, formatAmong } from '../text/format-values.ts';
 import { outlineOf } from './member-outline.ts';
 import type { Panel, PanelFigure } from './panel-figure.ts';
 import { boundInWords, capital, responseInWords } from './quantity-words.ts';
@@ -11,7 +11,7 @@ import {
   requireSamples,
   snapshotAt,
 } from './sampled-field.ts';
-import { extentOf, nearest, rangeAround } from './value-range.ts';
+import { extentOf, nearest, rangeAround, stepOf } from './value-range.ts';
 
 /** Instants shown where none is asked for. */
 const usual = 6;
@@ -47,16 +47,23 @@ export function snapshotsData(
       least = Math.min(least, extentOf(bound ? values.map((value, i) => value - bound[i]) : values)[0]);
       most = Math.max(most, extentOf(bound ? values.map((value, i) => value + bound[i]) : values)[1]);
     }
-    const curve = { along: positions, values, look: 0, kind: positions.length > 40 ? 'line' : 'dots' } as const;
+    const curve = {
+      along: positions,
+      values,
+      look: 0,
+      kind: positions.length > 40 ? 'line' : 'dots',
+    } as const;
     return {
-      label: `at ${formatQuantity(times[time], 's', 6)}`,
+      label: `at ${formatAmong(times[time], stepOf(times), 's')}`,
       curves: [{ ...curve, ...(bound && { bound }) }],
     };
   });
   const outline = outlineOf(request.member);
   const note =
     shown.length < wanted.length
-      ? [`Shown: the first ${shown.length} of ${wanted.length} instants asked for; a larger figure has room for more.`]
+      ? [
+          `Shown: the first ${shown.length} of ${wanted.length} instants asked for; a larger figure has room for more.`,
+        ]
       : asked !== undefined || shown.length === times.length
         ? []
         : [`Shown: ${shown.length} of ${countOf(times.length, 'sampled time')}.`];

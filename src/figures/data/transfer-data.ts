@@ -161,7 +161,9 @@ function inputInWords({ input, member }: TransferFunctionsRequest): string {
 
 function solutionInWords({ convergence }: TransferFunctionsAnswer): string {
   if (convergence.closedForm) return 'closed form';
-  return `sum of ${countOf(convergence.modesUsed ?? 0, 'mode')} with bound`;
+  return convergence.modesUsed === null
+    ? 'sum over all modes'
+    : `sum of ${countOf(convergence.modesUsed, 'mode')}`;
 }
 
 function boundInWords({ convergence }: TransferFunctionsAnswer): string {

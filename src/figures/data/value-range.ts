@@ -26,6 +26,16 @@ export function rangeAround(least: number, most: number): { from: number; to: nu
   return { from, to };
 }
 
+/** Smallest distance of neighbours in an ascending list; 0 for a single one. */
+export function stepOf(values: Numbers): number {
+  let step = Infinity;
+  for (let i = 1; i < values.length; i++) {
+    const apart = values[i] - values[i - 1];
+    if (apart > 0 && apart < step) step = apart;
+  }
+  return step === Infinity ? 0 : step;
+}
+
 /** Index of the value nearest to a wanted one. Cost O(n). */
 export function nearest(values: Numbers, wanted: number): number {
   let best = 0;

@@ -19,7 +19,7 @@ export function drawHeatMap(sheet: Sheet, figure: HeatMapFigure, theme: Theme): 
   const { outline, times, positions, reach } = figure;
   const depth = memberDepth(outline);
   const names = outline.names.length > 0 && sheet.width >= 560 ? 96 : 0;
-  const heading = sizes.body + 9;
+  const heading = sizes.body + 14;
   const foot = sizes.tick + sizes.body + 12;
   const y = Math.round(box.y + heading);
   const height = Math.max(20, Math.floor(box.height - heading - foot));
@@ -60,22 +60,18 @@ export function drawHeatMap(sheet: Sheet, figure: HeatMapFigure, theme: Theme): 
   drawMember(sheet, outline, where);
   drawLevels(sheet, left, along);
   const title = shorten(along.title, sizes.body, (barAt - box.x) / 2);
-  sheet.text(box.x, y - 6, title, sizes.body);
-  const valueTitle = shorten(value.title, sizes.body, box.x + box.width - box.x - textWidth(title, sizes.body) - 16);
-  sheet.text(box.x + box.width, y - 6, valueTitle, sizes.body, { anchor: 'end' });
+  sheet.text(box.x, y - 11, title, sizes.body);
+  const valueTitle = shorten(
+    value.title,
+    sizes.body,
+    box.x + box.width - box.x - textWidth(title, sizes.body) - 16,
+  );
+  sheet.text(box.x + box.width, y - 11, valueTitle, sizes.body, { anchor: 'end' });
 
   const palette = fieldPalette(theme);
   const top = Math.round(along.place(positions[positions.length - 1]));
   const bottom = Math.max(Math.round(along.place(positions[0])), top + 1);
-  const pixels = fieldPixels(
-    figure.values,
-    figure.columns,
-    times,
-    positions,
-    reach,
-    width,
-    bottom - top,
-  );
+  const pixels = fieldPixels(figure.values, figure.columns, times, positions, reach, width, bottom - top);
   const picture = indexedPng(pixels, width, bottom - top, palette).toString('base64');
   sheet.image({ x: left, y: top, width, height: bottom - top }, picture);
   drawColorBar(sheet, { x: barAt, y, width: barWidth, height }, palette);

@@ -50,6 +50,7 @@ export function drawPanel(sheet: Sheet, box: Box, panel: Panel, axes: PanelAxes)
   sheet.path(`M${px(box.x)} ${px(box.y)}h${px(box.width)}v${px(box.height)}h${px(-box.width)}Z`, {
     color: edge,
   });
+  for (const curve of panel.curves) labelStems(sheet, box, curve, axes);
   if (!upright) drawTags(sheet, box, panel.curves, axes);
 }
 
@@ -81,8 +82,9 @@ function drawCurve(sheet: Sheet, curve: Curve, axes: PanelAxes): void {
     along: placesOf(curve.along, axes.along.place),
     across: placesOf(curve.values, axes.value.place),
   };
-  if (curve.kind === 'stems') return drawStems(sheet, points, color, axes, curve.labels ?? []);
-  if (curve.kind === 'steps') return sheet.path(stepsOf(thinOut(points)), { color, width: 1.2, dash: lineDash(curve.look) });
+  if (curve.kind === 'stems') return drawStems(sheet, points, color, axes);
+  if (curve.kind === 'steps')
+    return sheet.path(stepsOf(thinOut(points)), { color, width: 1.2, dash: lineDash(curve.look) });
   const thin = thinOut(points);
   const count = curve.along.length;
   if (count > 1) {
@@ -93,16 +95,14 @@ function drawCurve(sheet: Sheet, curve: Curve, axes: PanelAxes): void {
   const reach = Math.abs(points.along[count - 1] - points.along[0]);
   if (count === 1 || (curve.kind === 'dots' && reach / count > 7)) {
     for (let i = 0; i < count; i++) {
-      const [x, y] = axes.upright
-        ? [points.across[i], points.along[i]]
-        : [points.along[i], points.across[i]];
+      const [x, y] = axes.upright ? [points.across[i], points.along[i]] : [points.along[i], points.across[i]];
       sheet.circle(x, y, 2.4, color);
     }
   }
 }
 
 /** One stem a pixel column at most: the tallest. */
-function drawStems(sheet: Sheet, { along, across }: Points, color: string, axes: PanelAxes, labels: readonly string[]): void {
+function drawStems(sheet: Sheet, { along, across }: Points, color: string, axes: PanelAxes): void {
   const foot = axes.value.place(0);
   const tallest = new Map<number, number>();
   for (let i = 0; i < along.length; i++) {
@@ -114,13 +114,24 @@ function drawStems(sheet: Sheet, { along, across }: Points, color: string, axes:
   const path = kept.map((i) => `M${px(along[i])} ${px(foot)}V${px(across[i])}`).join('');
   sheet.path(path, { color, width: kept.length > 150 ? 1 : 1.8 });
   if (kept.length <= 150) for (const i of kept) sheet.circle(along[i], across[i], 3, color);
-  const taken: [number, number, number][] = [];
-  for (const i of kept.toSorted((a, b) => across[a] - across[b])) {
-    const half = textWidth(labels[i] ?? '', sizes.tick) / 2 + 2;
-    const y = across[i] - 6;
-    if (half === 2 || taken.some(([x, w, top]) => Math.abs(x - along[i]) < w + half && y > top - 14)) continue;
-    taken.push([along[i], half, y]);
-    sheet.text(along[i], y, labels[i], sizes.tick, { anchor: 'middle', halo: true });
+}
+
+/** Words above stems, the tallest first, where they touch no other. */
+function labelStems(sheet: Sheet, box: Box, curve: Curve, axes: PanelAxes): void {
+  const { labels = [], along, values } = curve;
+  const taken: { x: number; half: number; y: number }[] = [];
+  const order = Array.from(labels, (_, i) => i).toSorted((a, b) => values[b] - values[a] || a - b);
+  for (const i of order) {
+    if (labels[i] === '') continue;
+    const half = textWidth(labels[i], sizes.tick) / 2 + 2;
+    const x = Math.min(Math.max(axes.along.place(along[i]), box.x + half), box.x + box.width - half);
+    const y = axes.value.place(values[i]) - 6;
+    const touches = taken.some(
+      (other) => Math.abs(other.x - x) < other.half + half && Math.abs(other.y - y) < 14,
+    );
+    if (touches || y < box.y + sizes.tick) continue;
+    taken.push({ x, half, y });
+    sheet.text(x, y, labels[i], sizes.tick, { anchor: 'middle', halo: true });
   }
 }
 

@@ -43,7 +43,9 @@ function hatch(color: Rgb, size: number): Rgb {
   const [red, green, blue] = color;
   const luminance = (0.2126 * red + 0.7152 * green + 0.0722 * blue) / 255;
   const strength = Math.min(1, 4 * size);
-  return luminance > 0.45 ? mix(color, [0, 0, 0], 0.3 * strength) : mix(color, [255, 255, 255], 0.4 * strength);
+  return luminance > 0.45
+    ? mix(color, [0, 0, 0], 0.3 * strength)
+    : mix(color, [255, 255, 255], 0.4 * strength);
 }
 
 function mix(from: Rgb, to: Rgb, part: number): Rgb {

@@ -6,11 +6,12 @@ export interface PanelGrid {
 
 /** Widest and flattest panels that still read well, px. */
 const leastRow = 70;
-const leastColumn = 330;
+const leastColumn = 165;
 const leastUprightColumn = 92;
 const leastUprightRow = 240;
-/** Room for words and axes around the panels, px. */
+/** Room for words and axes around the panels, and for the member above them, px. */
 const words = 150;
+const strip = 45;
 const gutter = 60;
 
 /**
@@ -28,7 +29,7 @@ function largestGrid(width: number, height: number, common: 'time' | 'position' 
   const down = common === 'upright' ? leastUprightRow : leastRow;
   return {
     columns: common === 'time' ? 1 : Math.min(8, Math.max(1, Math.floor((width - gutter) / across))),
-    rows: Math.min(8, Math.max(1, Math.floor((height - words) / down))),
+    rows: Math.min(8, Math.max(1, Math.floor((height - words - (common === 'position' ? strip : 0)) / down))),
   };
 }
 
@@ -50,7 +51,7 @@ export function gridFor(
   while (
     wanted < columns &&
     count > wanted &&
-    (height - words) / Math.ceil(count / wanted) < (width - gutter) / wanted / 6
+    (height - words) / Math.ceil(count / wanted) < (width - gutter) / wanted / 4
   ) {
     wanted++;
   }

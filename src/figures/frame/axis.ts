@@ -60,14 +60,26 @@ export function layOutAxis(spec: AxisSpec, start: number, end: number, direction
     return { title, ticks: marks, place };
   }
   const most = Math.max(2, Math.floor(length / (direction === 'across' ? 55 : 26)));
+  let best: Tick[] = [];
   for (let count = Math.min(most, 10); count >= 1; count--) {
-    let values = evenTicks(Math.min(from, to), Math.max(from, to), count);
-    if (spec.whole === true) values = values.filter(Number.isInteger);
-    const labels = formatTicks(values);
-    const list = values.map((value, i) => ({ at: scale(value), label: labels[i] }));
-    if (fits(list, direction)) return { title, ticks: list, place };
+    for (const values of tickChoices(Math.min(from, to), Math.max(from, to), count, spec.whole === true)) {
+      const labels = formatTicks(values);
+      const list = values.map((value, i) => ({ at: scale(value), label: labels[i] }));
+      if (!fits(list, direction)) continue;
+      if (list.length >= 2) return { title, ticks: list, place };
+      if (best.length === 0) best = list;
+    }
   }
-  return { title, ticks: [], place };
+  return { title, ticks: best, place };
+}
+
+/** Round values in a range, and every second or third of a finer series, zero among them. */
+function tickChoices(from: number, to: number, count: number, whole: boolean): number[][] {
+  return [1, 2, 3].map((stride) => {
+    const values = evenTicks(from, to, stride * count).filter((value) => !whole || Number.isInteger(value));
+    const zero = Math.max(values.indexOf(0), 0);
+    return values.filter((_, i) => (i - zero) % stride === 0);
+  });
 }
 
 /** Whether neighbouring labels keep their distance. */
@@ -75,7 +87,7 @@ function fits(list: readonly Tick[], direction: Direction): boolean {
   return list.every((tick, i) => {
     if (i === 0) return true;
     const apart = Math.abs(tick.at - list[i - 1].at);
-    if (direction === 'upright') return apart >= sizes.tick + 3;
+    if (direction === 'upright') return apart >= sizes.tick + 2.5;
     const half = (textWidth(tick.label, sizes.tick) + textWidth(list[i - 1].label, sizes.tick)) / 2;
     return apart >= half + gapBetweenLabels;
   });
@@ -101,17 +113,16 @@ function logarithmicAxis(spec: AxisSpec, start: number, end: number, direction: 
   const scale = scaleLog([from, to], [start, end]).clamp(true);
   const place = (value: number) => scale(Math.max(value, Number.MIN_VALUE));
   const decades = Math.log10(to / from);
-  const length = Math.abs(end - start);
-  const room = Math.max(1, Math.floor(length / (direction === 'across' ? 60 : 24)));
-  const { exponent, symbol } = decades <= 3.2 ? readableUnit(to, unit) : { exponent: 0, symbol: unit };
-  const title = symbol === '' ? spec.name : `${spec.name} (${symbol})`;
-  for (const digits of [[1, 2, 5], [1, 3], [1]]) {
-    for (let every = 1; every <= 512; every = every === 1 ? 2 : every + 1) {
-      if (digits.length > 1 && every > 1) break;
+  const wide = decades > 3.2;
+  // over many decades every tick has its own prefix, where the unit takes one
+  const own = wide && /^[A-Za-z]{1,3}$/.test(unit);
+  const { exponent, symbol } = wide ? { exponent: 0, symbol: unit } : readableUnit(to, unit);
+  const title = symbol === '' || own ? spec.name : `${spec.name} (${symbol})`;
+  for (const digits of wide ? [[1]] : [[1, 2, 5], [1, 3], [1]]) {
+    for (let every = 1; every <= (digits.length > 1 ? 1 : 512); every++) {
       const values = decadeTicks(from, to, digits, every);
       const list = values.map((value) => ({ at: place(value), label: label(value) }));
-      if (list.length > Math.max(room, 2) || !fits(list, direction)) continue;
-      if (list.length >= 2) return { title, ticks: list, place };
+      if (list.length >= 2 && fits(list, direction)) return { title, ticks: list, place };
     }
   }
   // less than a decade: round numbers of a linear axis on the logarithmic scale
@@ -123,7 +134,8 @@ function logarithmicAxis(spec: AxisSpec, start: number, end: number, direction: 
   return { title, ticks: [], place };
 
   function label(value: number): string {
-    if (decades <= 3.2) return formatNumber(inUnit(value, exponent), 4);
+    if (!wide) return formatNumber(inUnit(value, exponent), 4);
+    if (own) return formatQuantity(value, unit);
     const power = Math.round(Math.log10(value));
     return Math.abs(Math.log10(value) - power) < 1e-9
       ? power >= 0 && power <= 3
@@ -135,8 +147,9 @@ function logarithmicAxis(spec: AxisSpec, start: number, end: number, direction: 
 
 function decadeTicks(from: number, to: number, digits: readonly number[], every: number): number[] {
   const values: number[] = [];
+  const first = Math.ceil(Math.log10(from) - 1e-9);
   for (let power = Math.floor(Math.log10(from)); power <= Math.ceil(Math.log10(to)); power++) {
-    if (power % every !== 0) continue;
+    if ((power - first) % every !== 0) continue;
     for (const digit of digits) {
       const value = Number(`${digit}e${power}`);
       if (value >= from * (1 - 1e-12) && value <= to * (1 + 1e-12)) values.push(value);

@@ -62,7 +62,8 @@ export class Sheet {
 
   text(x: number, y: number, text: string, size: number, look: TextLook = {}): void {
     const turn = look.turned === true ? ` transform="rotate(-90 ${px(x)} ${px(y)})"` : '';
-    const anchor = look.anchor === undefined || look.anchor === 'start' ? '' : ` text-anchor="${look.anchor}"`;
+    const anchor =
+      look.anchor === undefined || look.anchor === 'start' ? '' : ` text-anchor="${look.anchor}"`;
     const fill = look.color === undefined ? '' : ` fill="${look.color}"`;
     const halo =
       look.halo === true ? ` stroke="${this.palette.paper}" stroke-width="3" paint-order="stroke"` : '';

@@ -2,9 +2,7 @@ import { readFileSync } from 'node:fs';
 import { createRequire } from 'node:module';
 
 /** File of the one font that figures use, shipped with the service so that a bare container draws the same text. */
-export const fontFile: string = createRequire(import.meta.url).resolve(
-  'dejavu-fonts-ttf/ttf/DejaVuSans.ttf',
-);
+export const fontFile: string = createRequire(import.meta.url).resolve('dejavu-fonts-ttf/ttf/DejaVuSans.ttf');
 
 /** Name of that font, and what a browser without it takes: Verdana has nearly the same widths, the rest is narrower. */
 export const fontFamily = "'DejaVu Sans', Verdana, Geneva, sans-serif";

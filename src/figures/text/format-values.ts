@@ -31,6 +31,16 @@ function scientific(value: number, digits: number): string {
   return `${number}e${Number(exponent)}`.replaceAll('-', '−');
 }
 
+/**
+ * A value of a series with as many digits as tell it from its neighbours, three at least.
+ *
+ * @param step distance of the neighbours, in the unit
+ */
+export function formatAmong(value: number, step: number, unit: string): string {
+  const digits = step > 0 && value !== 0 ? decimalExponent(Math.abs(value)) - decimalExponent(step) + 2 : 3;
+  return formatQuantity(value, unit, Math.min(15, Math.max(3, digits)));
+}
+
 /** How many of a thing, "1 mode", "12 modes". */
 export function countOf(count: number, one: string, many = `${one}s`): string {
   return `${format(',')(count)} ${count === 1 ? one : many}`;
@@ -46,7 +56,7 @@ export function formatTicks(ticks: readonly number[]): string[] {
   const step = ticks.length > 1 ? Math.abs(ticks[1] - ticks[0]) : Math.abs(ticks[0]);
   const decimals = decimalsOf(step);
   const write = format(`,.${decimals}f`);
-  return ticks.map((tick) => (Math.abs(tick) < 1e-9 * step ? write(0) : write(tick)));
+  return ticks.map((tick) => (Math.abs(tick) < 1e-9 * step ? '0' : write(tick)));
 }
 
 /** Decimals that a step of one digit (1, 2, 2.5 or 5 times a power of ten) needs. */

@@ -24,10 +24,10 @@ const plainRange: Readonly<Record<string, readonly [from: number, to: number]>> 
   m: [1, 1e4],
   'm/s': [1, 1e4],
   kg: [1, 1e4],
-  s: [1, 1e5],
+  s: [1, 1e7],
   rad: [1, 1e5],
-  '/√kg': [1e-2, 1e3],
-  '/√(kg·m²)': [1e-2, 1e3],
+  '/√kg': [1e-1, 1e3],
+  '/√(kg·m²)': [1e-1, 1e3],
   '%': [1e-2, 1e3],
   '': [1e-3, 1e4],
 };
