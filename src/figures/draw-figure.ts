@@ -63,11 +63,15 @@ export function drawFigure(
   if (view === 'heat-map') {
     const figure = heatMapData(request as ResponsesRequest, answer as ResponsesAnswer);
     drawHeatMap(sheet, figure, theme);
-    return finish(sheet, figure.words);
+    return finish(sheet, figure.words, [`Colors show the ${figure.name} over time and position.`]);
   }
   const figure = panelFigure(view, request, answer, options);
   drawPanels(sheet, figure);
-  return finish(sheet, figure.words);
+  const shown = figure.panels.map(({ label, value }) =>
+    [value?.name ?? figure.value?.name, label].filter((word) => word !== undefined && word !== '').join(' '),
+  );
+  const key = figure.key.length > 0 ? [`Key: ${figure.key.map(({ label }) => label).join('; ')}.`] : [];
+  return finish(sheet, figure.words, [`${shown.join('; ')}; over ${figure.along.name}.`, ...key]);
 }
 
 function requireSize(side: 'width' | 'height', size: number): void {
@@ -105,6 +109,7 @@ function panelFigure(
   }
 }
 
-function finish(sheet: Sheet, { title, subtitle, notes }: FigureWords): string {
-  return sheet.finish(`${title}: ${subtitle}`, notes.join(' '));
+/** Closes the figure with a title and a description for those who cannot see it. */
+function finish(sheet: Sheet, { title, subtitle, notes }: FigureWords, shown: readonly string[]): string {
+  return sheet.finish(`${title}: ${subtitle}`, [...shown, ...notes].join(' '));
 }

@@ -37,7 +37,7 @@ const attached = {
   attachments: [
     { at: 4, mass: 30, name: 'lamp "A"' },
     { at: 4.3, mass: 30, name: 'a second lamp with a rather long name' },
-    { at: 12, spring: 3e4, name: 'stay' },
+    { at: 12, spring: 3e4, name: 'stay <A&B>' },
     { at: 18.5, mass: 80, spring: 5e4, name: 'signal bridge' },
   ],
 };

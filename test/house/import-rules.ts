@@ -37,6 +37,13 @@ export const homesOfPackage: Readonly<Record<string, readonly string[]>> = {
   pino: ['http', 'main.ts'],
   'close-with-grace': ['main.ts'],
   'env-schema': ['settings.ts'],
+  'd3-array': ['figures'],
+  'd3-format': ['figures'],
+  'd3-scale': ['figures'],
+  'd3-scale-chromatic': ['figures'],
+  'd3-shape': ['figures'],
+  '@resvg/resvg-js': ['figures'],
+  'dejavu-fonts-ttf': ['figures'],
 };
 
 /** Node built-ins that belong to one room. */

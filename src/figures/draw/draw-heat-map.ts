@@ -5,10 +5,10 @@ import { sizes, type Theme } from '../frame/theme.ts';
 import { shorten } from '../text/fit-text.ts';
 import { textWidth } from '../text/font-metrics.ts';
 import { drawMember, drawNames, memberDepth } from './draw-member.ts';
-import { drawFoot, drawLevels } from './draw-panels.ts';
+import { divisionsOf, drawFoot, drawLevels } from './draw-panels.ts';
 import { drawWords } from './draw-words.ts';
 import { fieldPalette } from './field-colors.ts';
-import { colorOf, fieldPixels } from './field-image.ts';
+import { colorOf, fieldPixels, hatchRow } from './field-image.ts';
 import { indexedPng } from './indexed-png.ts';
 
 const barWidth = 14;
@@ -80,9 +80,7 @@ export function drawHeatMap(sheet: Sheet, figure: HeatMapFigure, theme: Theme): 
       color: sheet.palette.softInk,
     });
   }
-  for (const place of [...outline.boundaries.map(along.place)].filter(
-    (at, i, all) => i === 0 || Math.abs(at - all[i - 1]) >= 4,
-  )) {
+  for (const place of divisionsOf(outline, along)) {
     sheet.line(left, place, left + width, place, { color: sheet.palette.ink, dash: '1 4', opacity: 0.55 });
   }
   frame(sheet, { x: left, y, width, height });
@@ -92,8 +90,9 @@ export function drawHeatMap(sheet: Sheet, figure: HeatMapFigure, theme: Theme): 
 function drawColorBar(sheet: Sheet, box: Box, palette: Uint8Array): void {
   const pixels = new Uint8Array(box.width * box.height);
   for (let y = 0; y < box.height; y++) {
-    const value = 1 - (2 * (y + 0.5)) / box.height;
-    for (let x = 0; x < box.width; x++) pixels[y * box.width + x] = colorOf(value, (x + y) % 6 === 0);
+    const row = pixels.subarray(y * box.width, (y + 1) * box.width);
+    row.fill(colorOf(1 - (2 * (y + 0.5)) / box.height));
+    hatchRow(row, y);
   }
   sheet.image(box, indexedPng(pixels, box.width, box.height, palette).toString('base64'));
   frame(sheet, box);

@@ -29,24 +29,22 @@ export function drawPanel(sheet: Sheet, box: Box, panel: Panel, axes: PanelAxes)
   });
   const zero = value.place(0);
   if (inside(zero, box, !upright)) sheet.path(crossing(box, zero, !upright), { color: edge });
-  sheet.clipped({ x: box.x - 4, y: box.y - 4, width: box.width + 8, height: box.height + 8 }, () => {
-    for (const area of panel.areas ?? []) {
-      const places = placesOf(area.along, along.place);
-      const lower = { along: places, across: placesOf(area.lower, value.place) };
-      const upper = { along: places, across: placesOf(area.upper, value.place) };
-      const strong = area.role === 'bound';
-      sheet.area(areaBetween(lower, upper, upright), lineColor(sheet, strong ? 1 : 0), strong ? 0.4 : 0.18);
-    }
-    for (const curve of panel.curves) drawBand(sheet, curve, axes);
-    for (const curve of panel.curves) drawCurve(sheet, curve, axes);
-    for (const mark of panel.marks ?? []) {
-      const a = along.place(mark.along);
-      const b = value.place(mark.value);
-      const [x, y] = upright ? [b, a] : [a, b];
-      sheet.circle(x, y, 5, sheet.palette.paper);
-      sheet.circle(x, y, 3.5, ink);
-    }
-  });
+  for (const area of panel.areas ?? []) {
+    const places = placesOf(area.along, along.place);
+    const lower = { along: places, across: placesOf(area.lower, value.place) };
+    const upper = { along: places, across: placesOf(area.upper, value.place) };
+    const strong = area.role === 'bound';
+    sheet.area(areaBetween(lower, upper, upright), lineColor(sheet, strong ? 1 : 0), strong ? 0.4 : 0.18);
+  }
+  for (const curve of panel.curves) drawBand(sheet, box, curve, axes);
+  for (const curve of panel.curves) drawCurve(sheet, curve, axes);
+  for (const mark of panel.marks ?? []) {
+    const a = along.place(mark.along);
+    const b = value.place(mark.value);
+    const [x, y] = upright ? [b, a] : [a, b];
+    sheet.circle(x, y, 5, sheet.palette.paper);
+    sheet.circle(x, y, 3.5, ink);
+  }
   sheet.path(`M${px(box.x)} ${px(box.y)}h${px(box.width)}v${px(box.height)}h${px(-box.width)}Z`, {
     color: edge,
   });
@@ -65,14 +63,21 @@ function crossing(box: Box, at: number, level: boolean): string {
     : `M${px(at)} ${px(box.y)}V${px(box.y + box.height)}`;
 }
 
-function drawBand(sheet: Sheet, { along, values, bound, look }: Curve, axes: PanelAxes): void {
+function drawBand(
+  sheet: Sheet,
+  box: Box,
+  { along, values, bound, look }: Curve,
+  { along: common, value, upright }: PanelAxes,
+): void {
   if (bound === undefined) return;
-  const places = placesOf(along, axes.along.place);
-  const lower = Float64Array.from(bound, (half, i) => axes.value.place(values[i] - half));
-  const upper = Float64Array.from(bound, (half, i) => axes.value.place(values[i] + half));
+  const places = placesOf(along, common.place);
+  const [least, most] = upright ? [box.x, box.x + box.width] : [box.y, box.y + box.height];
+  const edgeAt = (at: number) => Math.min(Math.max(value.place(at), least), most);
+  const lower = Float64Array.from(bound, (half, i) => edgeAt(values[i] - half));
+  const upper = Float64Array.from(bound, (half, i) => edgeAt(values[i] + half));
   // a band that the line hides is not drawn; the words tell it
   if (upper.every((at, i) => Math.abs(at - lower[i]) < 1.6)) return;
-  const path = areaBetween({ along: places, across: lower }, { along: places, across: upper }, axes.upright);
+  const path = areaBetween({ along: places, across: lower }, { along: places, across: upper }, upright);
   sheet.area(path, lineColor(sheet, look), 0.28);
 }
 
@@ -93,7 +98,7 @@ function drawCurve(sheet: Sheet, curve: Curve, axes: PanelAxes): void {
   }
   // few samples are shown as such: between them the curve is only guessed
   const reach = Math.abs(points.along[count - 1] - points.along[0]);
-  if (count === 1 || (curve.kind === 'dots' && reach / count > 7)) {
+  if (curve.kind === 'dots' && (count === 1 || reach / count > 7)) {
     for (let i = 0; i < count; i++) {
       const [x, y] = axes.upright ? [points.across[i], points.along[i]] : [points.along[i], points.across[i]];
       sheet.circle(x, y, 2.4, color);
@@ -139,7 +144,7 @@ function labelStems(sheet: Sheet, box: Box, curve: Curve, axes: PanelAxes): void
 function drawTags(sheet: Sheet, box: Box, curves: readonly Curve[], axes: PanelAxes): void {
   const tags = curves
     .filter((curve) => curve.tag !== undefined)
-    .map(({ tag = '', values, look }) => ({ tag, look, y: axes.value.place(values[values.length - 1]) }))
+    .map(({ tag = '', values }) => ({ tag, y: axes.value.place(values[values.length - 1]) }))
     .toSorted((a, b) => a.y - b.y);
   const apart = Math.min(sizes.tick + 1, box.height / Math.max(tags.length, 1));
   let least = box.y + 4;
@@ -152,7 +157,7 @@ function drawTags(sheet: Sheet, box: Box, curves: readonly Curve[], axes: PanelA
     tag.y = Math.min(tag.y, most);
     most = tag.y - apart;
   }
-  for (const { tag, look, y } of tags) {
-    sheet.text(box.x + box.width + 4, y + 4, tag, sizes.tick, { color: lineColor(sheet, look) });
+  for (const { tag, y } of tags) {
+    sheet.text(box.x + box.width + 4, y + 4, tag, sizes.tick);
   }
 }

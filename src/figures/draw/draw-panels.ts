@@ -1,3 +1,4 @@
+import type { MemberOutline } from '../data/member-outline.ts';
 import type { Panel, PanelFigure } from '../data/panel-figure.ts';
 import { type Axis, type AxisSpec, layOutAxis } from '../frame/axis.ts';
 import type { Box, Sheet } from '../frame/sheet.ts';
@@ -12,6 +13,9 @@ import { gridFor } from './panel-room.ts';
 const labelRow = sizes.tick + 5;
 const tickRow = sizes.tick + 6;
 const titleRow = sizes.body + 5;
+
+/** What a panel without an axis would be measured by; every figure has one. */
+const valueless: AxisSpec = { name: '', unit: '', from: 0, to: 1 };
 
 /** Draws a figure of panels over a common axis. */
 export function drawPanels(sheet: Sheet, figure: PanelFigure): void {
@@ -33,7 +37,7 @@ function drawLying(sheet: Sheet, box: Box, figure: PanelFigure): void {
   const rowHeight = (box.y + box.height - tickRow - titleRow - top) / rows;
   const plotHeight = Math.max(rowHeight - labelRow - (rows > 1 ? 6 : 0), 16);
   const levels = panels.map((panel) => {
-    const spec = panel.value ?? (figure.value as AxisSpec);
+    const spec = panel.value ?? figure.value ?? valueless;
     return (y: number) => layOutAxis(spec, y + plotHeight, y, 'upright');
   });
   const gutter = Math.max(16, ...levels.map((level) => widestLabel(level(0)) + 8));
@@ -66,7 +70,7 @@ function drawLying(sheet: Sheet, box: Box, figure: PanelFigure): void {
       const plot = { x, y, width: plotWidth, height: plotHeight };
       const value = levels[row * columns + column](y);
       sheet.text(x, y - 4, shorten(labelOf(panel, value), sizes.tick, plotWidth), sizes.tick);
-      drawPanel(sheet, plot, panel, { along, value, upright: false, divisions: divisionsOf(figure, along) });
+      drawPanel(sheet, plot, panel, { along, value, upright: false, divisions: divisionsOf(outline, along) });
       if (column === 0) drawLevels(sheet, x, value);
     }
     const bottom = top + (inColumn.length - 1) * rowHeight + labelRow + plotHeight;
@@ -106,13 +110,13 @@ function drawUpright(sheet: Sheet, box: Box, figure: PanelFigure): void {
     for (let column = 0; column < columns && row * columns + column < panels.length; column++) {
       const panel = panels[row * columns + column];
       const x = left + column * (plotWidth + gap);
-      const value = layOutAxis(panel.value ?? (figure.value as AxisSpec), x, x + plotWidth, 'across');
+      const value = layOutAxis(panel.value ?? figure.value ?? valueless, x, x + plotWidth, 'across');
       valueTitle = value.title;
       const label = wrap(panel.label, sizes.tick, plotWidth + gap - 8, lines);
       for (const [i, line] of label.entries()) {
         sheet.text(x, y - 5 - (label.length - 1 - i) * (sizes.tick + 2), line, sizes.tick);
       }
-      const axes = { along, value, upright: true, divisions: divisionsOf(figure, along) };
+      const axes = { along, value, upright: true, divisions: divisionsOf(outline, along) };
       drawPanel(sheet, { x, y, width: plotWidth, height: plotHeight }, panel, axes);
       drawTicksAcross(sheet, value, y + plotHeight, [x - gap / 2 + 2, x + plotWidth + gap / 2 - 2]);
     }
@@ -134,7 +138,7 @@ function widestLabel(axis: Axis): number {
 }
 
 /** Segment boundaries that are not too many to be told apart. */
-function divisionsOf({ outline }: PanelFigure, along: Axis): number[] {
+export function divisionsOf(outline: MemberOutline | undefined, along: Axis): number[] {
   const places = (outline?.boundaries ?? []).map((at) => along.place(at));
   return places.filter((at, i) => i === 0 || Math.abs(at - places[i - 1]) >= 4);
 }

@@ -30,33 +30,49 @@ export function fieldPixels(
   const upwards = spansOf(positions, height);
   const pixels = new Uint8Array(width * height);
   if (reach === 0) return pixels;
-  // the most extreme value of every pixel column, position by position, before rows are merged
-  const strip = new Float64Array(positions.length);
-  for (let x = 0; x < width; x++) {
-    const [first, end] = across[x];
-    for (let q = 0; q < strip.length; q++) {
-      const column = columns[q];
+  // first the strongest color of every pixel column at every position, then rows are merged
+  const strips = Array.from({ length: positions.length }, () => new Uint8Array(width));
+  for (let q = 0; q < strips.length; q++) {
+    const strip = strips[q];
+    const column = columns[q];
+    for (let x = 0; x < width; x++) {
+      const [first, end] = across[x];
       let extreme = values[first][column];
       for (let j = first + 1; j < end; j++) {
         if (Math.abs(values[j][column]) > Math.abs(extreme)) extreme = values[j][column];
       }
-      strip[q] = extreme / reach;
+      strip[x] = colorOf(extreme / reach);
     }
-    for (let y = 0; y < height; y++) {
-      const [from, to] = upwards[height - 1 - y];
-      let extreme = strip[from];
-      for (let q = from + 1; q < to; q++) if (Math.abs(strip[q]) > Math.abs(extreme)) extreme = strip[q];
-      pixels[y * width + x] = colorOf(extreme, (x + y) % hatching === 0);
-    }
+  }
+  for (let y = 0; y < height; y++) {
+    const [from, to] = upwards[height - 1 - y];
+    const row = pixels.subarray(y * width, (y + 1) * width);
+    row.set(strips[from]);
+    for (let q = from + 1; q < to; q++) keepStronger(row, strips[q]);
+    hatchRow(row, y);
   }
   return pixels;
 }
 
-/** Index of the colour of a value between −1 and 1. */
-export function colorOf(value: number, hatched: boolean): number {
+/** Index of the color of a value between −1 and 1, without hatching. */
+export function colorOf(value: number): number {
   const step = Math.min(colorSteps, Math.round(Math.abs(value) * colorSteps));
-  if (step === 0 || value > 0) return step;
-  return step + (hatched ? hatchedFrom : negativeFrom);
+  return value < 0 && step > 0 ? negativeFrom + step : step;
+}
+
+/** Puts the hatching over the negative colors of row y. */
+export function hatchRow(row: Uint8Array, y: number): void {
+  for (let x = (hatching - (y % hatching)) % hatching; x < row.length; x += hatching) {
+    if (row[x] > negativeFrom) row[x] += hatchedFrom - negativeFrom;
+  }
+}
+
+function keepStronger(row: Uint8Array, other: Uint8Array): void {
+  for (let x = 0; x < row.length; x++) if (strengthOf(other[x]) > strengthOf(row[x])) row[x] = other[x];
+}
+
+function strengthOf(color: number): number {
+  return color > negativeFrom ? color - negativeFrom : color;
 }
 
 /** The samples of every pixel along a stretch whose ends are the first and the last sample. */
@@ -67,7 +83,8 @@ function spansOf(samples: Numbers, pixels: number): Span[] {
   let next = 0;
   for (let p = 0; p < pixels; p++) {
     const first = next;
-    while (next < samples.length && ((samples[next] - from) * scale < p + 1 || p === pixels - 1)) next++;
+    const end = p === pixels - 1 ? Infinity : p + 1;
+    while (next < samples.length && (samples[next] - from) * scale < end) next++;
     if (next > first) {
       spans.push([first, next]);
       continue;

@@ -9,13 +9,13 @@ import { crc32, deflateSync } from 'node:zlib';
  */
 export function indexedPng(pixels: Uint8Array, width: number, height: number, palette: Uint8Array): Buffer {
   const rows = new Uint8Array(height * (width + 1));
-  for (let y = 0; y < height; y++) {
+  rows[0] = 2;
+  rows.set(pixels.subarray(0, width), 1);
+  for (let y = 1; y < height; y++) {
     const row = y * (width + 1);
+    const first = y * width;
     rows[row] = 2;
-    for (let x = 0; x < width; x++) {
-      const above = y === 0 ? 0 : pixels[(y - 1) * width + x];
-      rows[row + 1 + x] = pixels[y * width + x] - above;
-    }
+    for (let x = 0; x < width; x++) rows[row + 1 + x] = pixels[first + x] - pixels[first + x - width];
   }
   const header = Buffer.alloc(13);
   header.writeUInt32BE(width, 0);
@@ -26,7 +26,7 @@ export function indexedPng(pixels: Uint8Array, width: number, height: number, pa
     Uint8Array.of(0x89, 0x50, 0x4e, 0x47, 0x0d, 0x0a, 0x1a, 0x0a),
     chunk('IHDR', header),
     chunk('PLTE', palette),
-    chunk('IDAT', deflateSync(rows, { level: 6 })),
+    chunk('IDAT', deflateSync(rows, { level: 3 })),
     chunk('IEND', new Uint8Array(0)),
   ]);
 }

@@ -1,5 +1,5 @@
+import { curveStepAfter, line } from 'd3-shape';
 import type { Numbers } from '../../spec/types.ts';
-import { px } from '../frame/sheet.ts';
 
 /** Places on the sheet of the points of a curve, px; `along` ascends or descends. */
 export interface Points {
@@ -39,34 +39,35 @@ export function thinOut({ along, across }: Points): Points {
       next++;
     }
     const last = next - 1;
-    for (const i of [...new Set([first, Math.min(least, most), Math.max(least, most), last])]) keep(i);
+    for (const i of new Set([first, Math.min(least, most), Math.max(least, most), last])) keep(i);
     first = next;
   }
   return { along: Float64Array.from(keptAlong), across: Float64Array.from(keptAcross) };
 }
 
 /** SVG path through points; `upright` swaps the axes. */
-export function pathOf({ along, across }: Points, upright: boolean, start = 'M'): string {
-  let path = '';
-  for (let i = 0; i < along.length; i++) {
-    const a = px(along[i]);
-    const b = px(across[i]);
-    path += `${i === 0 ? start : 'L'}${upright ? `${b} ${a}` : `${a} ${b}`}`;
-  }
-  return path;
+export function pathOf({ along, across }: Points, upright: boolean): string {
+  const [x, y] = upright ? [across, along] : [along, across];
+  return (
+    line<number>(
+      (_, i) => x[i],
+      (_, i) => y[i],
+    ).digits(2)(x) ?? ''
+  );
 }
 
 /** Path of a step line that holds every value until the next place. */
 export function stepsOf({ along, across }: Points): string {
-  let path = '';
-  for (let i = 0; i < along.length; i++) {
-    path += i === 0 ? `M${px(along[0])} ${px(across[0])}` : `H${px(along[i])}V${px(across[i])}`;
-  }
-  return path;
+  const steps = line<number>(
+    (_, i) => along[i],
+    (_, i) => across[i],
+  );
+  return steps.curve(curveStepAfter).digits(2)(along) ?? '';
 }
 
 /** Closed path between two curves over the same places; each is thinned to its outermost points. */
 export function areaBetween(lower: Points, upper: Points, upright: boolean): string {
-  const back = thinOut(lower);
-  return `${pathOf(thinOut(upper), upright)}${pathOf({ along: back.along.toReversed(), across: back.across.toReversed() }, upright, 'L')}Z`;
+  const { along, across } = thinOut(lower);
+  const back = pathOf({ along: along.toReversed(), across: across.toReversed() }, upright);
+  return `${pathOf(thinOut(upper), upright)}L${back.slice(1)}Z`;
 }

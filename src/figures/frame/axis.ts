@@ -33,7 +33,7 @@ export interface Axis {
   readonly title: string;
   readonly ticks: readonly Tick[];
   /** Place of a value, px; values beyond a range that is not finite in its scale stay at the edge. */
-  place(value: number): number;
+  readonly place: (value: number) => number;
 }
 
 /** Which way an axis runs; upright ones grow upwards. */
@@ -57,7 +57,9 @@ export function layOutAxis(spec: AxisSpec, start: number, end: number, direction
   const title = symbol === '' ? name : `${name} (${symbol})`;
   if (spec.marks !== undefined) {
     const marks = spec.marks.map(({ value, label }) => ({ at: place(value), label }));
-    return { title, ticks: marks, place };
+    let stride = 1;
+    while (stride < marks.length && !fits(everyNth(marks, stride), direction)) stride++;
+    return { title, ticks: everyNth(marks, stride), place };
   }
   const most = Math.max(2, Math.floor(length / (direction === 'across' ? 55 : 26)));
   let best: Tick[] = [];
@@ -80,6 +82,10 @@ function tickChoices(from: number, to: number, count: number, whole: boolean): n
     const zero = Math.max(values.indexOf(0), 0);
     return values.filter((_, i) => (i - zero) % stride === 0);
   });
+}
+
+function everyNth<Item>(list: readonly Item[], stride: number): Item[] {
+  return list.filter((_, i) => i % stride === 0);
 }
 
 /** Whether neighbouring labels keep their distance. */

@@ -61,14 +61,13 @@ export class Sheet {
   }
 
   text(x: number, y: number, text: string, size: number, look: TextLook = {}): void {
-    const turn = look.turned === true ? ` transform="rotate(-90 ${px(x)} ${px(y)})"` : '';
     const anchor =
       look.anchor === undefined || look.anchor === 'start' ? '' : ` text-anchor="${look.anchor}"`;
     const fill = look.color === undefined ? '' : ` fill="${look.color}"`;
     const halo =
       look.halo === true ? ` stroke="${this.palette.paper}" stroke-width="3" paint-order="stroke"` : '';
     this.parts.push(
-      `<text x="${px(x)}" y="${px(y)}" font-size="${size}"${anchor}${fill}${halo}${turn}>${escapeXml(text)}</text>`,
+      `<text x="${px(x)}" y="${px(y)}" font-size="${size}"${anchor}${fill}${halo}>${escapeXml(text)}</text>`,
     );
   }
 
@@ -99,16 +98,6 @@ export class Sheet {
     this.parts.push(`<circle cx="${px(x)}" cy="${px(y)}" r="${radius}" fill="${fill}"/>`);
   }
 
-  /** Draws into a part of the sheet and cuts off what reaches beyond it. */
-  clipped(box: Box, draw: () => void): void {
-    this.parts.push(
-      `<svg x="${px(box.x)}" y="${px(box.y)}" width="${px(box.width)}" height="${px(box.height)}" ` +
-        `viewBox="${px(box.x)} ${px(box.y)} ${px(box.width)} ${px(box.height)}" overflow="hidden">`,
-    );
-    draw();
-    this.parts.push('</svg>');
-  }
-
   image(box: Box, base64: string): void {
     this.parts.push(
       `<image x="${px(box.x)}" y="${px(box.y)}" width="${px(box.width)}" height="${px(box.height)}" ` +
@@ -129,11 +118,10 @@ export class Sheet {
   }
 }
 
-/** Where text hangs and how it looks; `turned` reads upwards. */
+/** Where text hangs and how it looks. */
 export interface TextLook {
   readonly anchor?: Anchor;
   readonly color?: string;
-  readonly turned?: boolean;
   /** Kept clear of lines below it. */
   readonly halo?: boolean;
 }

@@ -3,7 +3,7 @@ import { textWidth } from './font-metrics.ts';
 /** The text, or as much of its beginning as fits into the width (px) with an ellipsis. */
 export function shorten(text: string, size: number, width: number): string {
   if (textWidth(text, size) <= width) return text;
-  const characters = [...text];
+  const characters = Array.from(text);
   let low = 0;
   let high = characters.length;
   while (low < high) {

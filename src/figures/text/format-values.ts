@@ -14,7 +14,7 @@ export function formatQuantity(value: number, unit: string, digits = 3): string 
   const { exponent, symbol } = readableUnit(Math.abs(rounded), unit);
   const number = formatNumber(inUnit(rounded, exponent), digits);
   if (symbol.startsWith('10')) return `${number}·${symbol}`;
-  return symbol === '' || symbol === '%' ? `${number}${symbol}` : `${number} ${symbol}`;
+  return symbol === '' ? number : `${number} ${symbol}`;
 }
 
 /** A plain number with so many significant digits, thousands grouped, zeros at the end left out. */

@@ -57,7 +57,7 @@ const superscripts: Readonly<Record<string, string>> = {
 };
 
 export function superscript(number: number): string {
-  return [...String(number)].map((character) => superscripts[character] ?? character).join('');
+  return String(number).replace(/[-\d]/g, (character) => superscripts[character]);
 }
 
 /** A unit in UCUM code as it is printed: "m/s2" → "m/s²", "N.m" → "N·m"; a ratio of like units is no unit. */
