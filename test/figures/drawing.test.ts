@@ -60,9 +60,8 @@ describe('a figure', () => {
     for (const { svg } of drawAll(640, 360)) {
       expect(svg).toMatch(/^<svg xmlns="http:\/\/www\.w3\.org\/2000\/svg" role="img"/);
       expect(svg).toMatch(/<title>[^<]{10,}<\/title><desc>[^<]{10,}<\/desc>/);
-      expect(svg.replace('xmlns="http://www.w3.org/2000/svg"', '')).not.toMatch(
-        /https?:|<script|<style|<a |\bid=|\son\w+=|url\(|NaN|Infinity|undefined/,
-      );
+      const own = svg.replace('xmlns="http://www.w3.org/2000/svg"', '').replace(/base64,[^"]*/g, '');
+      expect(own).not.toMatch(/https?:|<script|style|<a |\bid=|\son\w+=|url\(|NaN|Infinity|undefined/);
     }
   });
 

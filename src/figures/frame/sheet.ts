@@ -101,7 +101,7 @@ export class Sheet {
   image(box: Box, base64: string): void {
     this.parts.push(
       `<image x="${px(box.x)}" y="${px(box.y)}" width="${px(box.width)}" height="${px(box.height)}" ` +
-        `preserveAspectRatio="none" image-rendering="optimizeSpeed" style="image-rendering:pixelated" ` +
+        `preserveAspectRatio="none" image-rendering="optimizeSpeed" ` +
         `href="data:image/png;base64,${base64}"/>`,
     );
   }
