@@ -1,4 +1,5 @@
 // npm run bench: first table of speeds. Every number has a reference measured in the same run.
+import { figureTimes } from './figure-times.js';
 import { httpLoad } from './http-load.js';
 import { jsonTimes } from './json-times.js';
 import { poolScaling } from './pool-scaling.js';
@@ -9,5 +10,6 @@ console.log(`Node ${process.version}`);
 solveTimes();
 recordTimes();
 jsonTimes();
+figureTimes();
 await poolScaling();
 await httpLoad();

@@ -3,28 +3,8 @@ import { formatQuantity } from '../text/format-values.ts';
 import { outlineOf } from './member-outline.ts';
 import type { Area, KeyEntry, PanelFigure } from './panel-figure.ts';
 import { boundInWords, capital, responseInWords, roundedUp } from './quantity-words.ts';
-import { boundAlong, fieldOf, requireSamples, type SampledField } from './sampled-field.ts';
+import { boundAlong, envelopeOf, fieldOf, requireSamples, type SampledField } from './sampled-field.ts';
 import { extentOf, rangeAround } from './value-range.ts';
-
-/** Largest and smallest value over the sampled times at every position, shape [positions] each. */
-export interface Envelope {
-  readonly least: Float64Array;
-  readonly most: Float64Array;
-}
-
-/** Cost O(times · positions). */
-export function envelopeOf({ field, columns }: SampledField): Envelope {
-  const least = new Float64Array(columns.length).fill(Infinity);
-  const most = new Float64Array(columns.length).fill(-Infinity);
-  for (const row of field.values) {
-    for (let i = 0; i < columns.length; i++) {
-      const value = row[columns[i]];
-      if (value < least[i]) least[i] = value;
-      if (value > most[i]) most[i] = value;
-    }
-  }
-  return { least, most };
-}
 
 /**
  * The envelope of the field over the sampled times, its bound as a strip beyond it, the sampled peak and

@@ -6,6 +6,7 @@ import { boundInWords, capital, responseInWords } from './quantity-words.ts';
 import {
   boundAlong,
   type Choice,
+  envelopeOf,
   fieldOf,
   historyAt,
   nearestStations,
@@ -94,10 +95,8 @@ function selectionNote(shown: number, wanted: number, sampled: number, asked: bo
 /** The place of the sampled peak and those nearest to the middle and the quarters that move, at most so many. */
 function usualStations(sampled: SampledField, most: number): number[] {
   const { positions } = sampled;
-  const reach = positions.map((_, index) => {
-    const [low, high] = extentOf(historyAt(sampled, index));
-    return Math.max(-low, high);
-  });
+  const { least, most: highest } = envelopeOf(sampled);
+  const reach = highest.map((high, index) => Math.max(-least[index], high));
   let peak = 0;
   for (let i = 1; i < reach.length; i++) if (reach[i] > reach[peak]) peak = i;
   const from = positions[0];

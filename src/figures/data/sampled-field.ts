@@ -123,7 +123,9 @@ function pick(
 /** The values at one place over time, shape [times]. */
 export function historyAt({ field, columns }: SampledField, index: number): Float64Array {
   const column = columns[index];
-  return Float64Array.from(field.values, (row) => row[column]);
+  const history = new Float64Array(field.values.length);
+  for (let j = 0; j < history.length; j++) history[j] = field.values[j][column];
+  return history;
 }
 
 /** The values along the member at one time, shape [positions]. */
@@ -136,4 +138,24 @@ export function snapshotAt({ field, columns }: SampledField, time: number): Floa
 export function boundAlong({ field, columns }: SampledField): Float64Array | null {
   const { bound } = field;
   return bound && Float64Array.from(columns, (q) => bound[q]);
+}
+
+/** Largest and smallest value over the sampled times at every position, shape [positions] each. */
+export interface Envelope {
+  readonly least: Float64Array;
+  readonly most: Float64Array;
+}
+
+/** Cost O(times · positions). */
+export function envelopeOf({ field, columns }: SampledField): Envelope {
+  const least = new Float64Array(columns.length).fill(Infinity);
+  const most = new Float64Array(columns.length).fill(-Infinity);
+  for (const row of field.values) {
+    for (let i = 0; i < columns.length; i++) {
+      const value = row[columns[i]];
+      if (value < least[i]) least[i] = value;
+      if (value > most[i]) most[i] = value;
+    }
+  }
+  return { least, most };
 }
