@@ -1,4 +1,4 @@
-import { textWidth } from '../../src/figures/text/font-metrics.ts';
+import { textWidth } from '../../src/figures/text/font.ts';
 
 /** A line of text of a figure and the room it takes, px. */
 export interface DrawnText {

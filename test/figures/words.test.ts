@@ -5,7 +5,7 @@ import { layOutAxis } from '../../src/figures/frame/axis.ts';
 import { escapeXml } from '../../src/figures/frame/sheet.ts';
 import { dashes, palettes } from '../../src/figures/frame/theme.ts';
 import { shorten, wrap } from '../../src/figures/text/fit-text.ts';
-import { fontFile, textWidth } from '../../src/figures/text/font-metrics.ts';
+import { fontFile, textWidth } from '../../src/figures/text/font.ts';
 import { formatQuantity, formatTicks } from '../../src/figures/text/format-values.ts';
 import { printedUnit, superscript } from '../../src/figures/text/units.ts';
 import { roundedUp } from '../../src/figures/data/quantity-words.ts';

@@ -44,6 +44,7 @@ export const homesOfPackage: Readonly<Record<string, readonly string[]>> = {
   'd3-shape': ['figures'],
   '@resvg/resvg-js': ['figures'],
   'dejavu-fonts-ttf': ['figures'],
+  'opentype.js': ['figures'],
 };
 
 /** Node built-ins that belong to one room. */

@@ -3,7 +3,7 @@ import { layOutAxis } from '../frame/axis.ts';
 import { type Box, px, type Sheet } from '../frame/sheet.ts';
 import { sizes, type Theme } from '../frame/theme.ts';
 import { shorten } from '../text/fit-text.ts';
-import { textWidth } from '../text/font-metrics.ts';
+import { textWidth } from '../text/font.ts';
 import { drawMember, drawNames, memberDepth } from './draw-member.ts';
 import { divisionsOf, drawFoot, drawLevels } from './draw-panels.ts';
 import { drawWords } from './draw-words.ts';

@@ -1,7 +1,7 @@
 import type { Lump, MemberOutline } from '../data/member-outline.ts';
 import { px, type Sheet } from '../frame/sheet.ts';
 import { sizes } from '../frame/theme.ts';
-import { textWidth } from '../text/font-metrics.ts';
+import { textWidth } from '../text/font.ts';
 import { shorten } from '../text/fit-text.ts';
 
 /** Where the member lies on the sheet. */

@@ -2,7 +2,7 @@ import type { Curve, Panel } from '../data/panel-figure.ts';
 import type { Axis } from '../frame/axis.ts';
 import { type Box, px, type Sheet } from '../frame/sheet.ts';
 import { sizes } from '../frame/theme.ts';
-import { textWidth } from '../text/font-metrics.ts';
+import { textWidth } from '../text/font.ts';
 import { lineColor, lineDash } from './draw-words.ts';
 import { areaBetween, pathOf, placesOf, type Points, stepsOf, thinOut } from './trace.ts';
 

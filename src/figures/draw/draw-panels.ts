@@ -3,7 +3,7 @@ import type { Panel, PanelFigure } from '../data/panel-figure.ts';
 import { type Axis, type AxisSpec, layOutAxis } from '../frame/axis.ts';
 import type { Box, Sheet } from '../frame/sheet.ts';
 import { sizes } from '../frame/theme.ts';
-import { textWidth } from '../text/font-metrics.ts';
+import { textWidth } from '../text/font.ts';
 import { shorten, wrap } from '../text/fit-text.ts';
 import { drawMember, drawNames, memberDepth } from './draw-member.ts';
 import { drawPanel } from './draw-panel.ts';

@@ -2,7 +2,7 @@ import type { FigureWords, KeyEntry } from '../data/panel-figure.ts';
 import { type Box, px, type Sheet } from '../frame/sheet.ts';
 import { dashes, sizes } from '../frame/theme.ts';
 import { shorten, wrap } from '../text/fit-text.ts';
-import { textWidth } from '../text/font-metrics.ts';
+import { textWidth } from '../text/font.ts';
 
 const margin = 12;
 const sampleWidth = 26;

@@ -1,7 +1,7 @@
 import { ticks as evenTicks } from 'd3-array';
 import { scaleLinear, scaleLog } from 'd3-scale';
 import { formatNumber, formatQuantity, formatTicks } from '../text/format-values.ts';
-import { textWidth } from '../text/font-metrics.ts';
+import { textWidth } from '../text/font.ts';
 import { inUnit, readableUnit, superscript } from '../text/units.ts';
 import { sizes } from './theme.ts';
 

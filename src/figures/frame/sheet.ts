@@ -1,4 +1,4 @@
-import { fontFamily } from '../text/font-metrics.ts';
+import { fontFamily } from '../text/font.ts';
 import { palettes, type Palette, type Theme } from './theme.ts';
 
 export type Anchor = 'start' | 'middle' | 'end';

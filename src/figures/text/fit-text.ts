@@ -1,4 +1,4 @@
-import { textWidth } from './font-metrics.ts';
+import { textWidth } from './font.ts';
 
 /** The text, or as much of its beginning as fits into the width (px) with an ellipsis. */
 export function shorten(text: string, size: number, width: number): string {
