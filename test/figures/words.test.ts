@@ -7,6 +7,7 @@ import { dashes, palettes } from '../../src/figures/frame/theme.ts';
 import { shorten, wrap } from '../../src/figures/text/fit-text.ts';
 import { fontFile, textWidth } from '../../src/figures/text/font.ts';
 import { formatQuantity, formatTicks } from '../../src/figures/text/format-values.ts';
+import { outlineText } from '../../src/figures/text/outline-text.ts';
 import { printedUnit, superscript } from '../../src/figures/text/units.ts';
 import { roundedUp } from '../../src/figures/data/quantity-words.ts';
 
@@ -31,6 +32,26 @@ describe('the width of text', () => {
       // kerning may pull letters together; nothing may be wider than measured
       expect(ink / ours).toBeGreaterThan(0.95);
       expect(ink / ours).toBeLessThan(1.005);
+    }
+  });
+
+  it('goes with outlines that cover the pixels that the renderer draws for the same font', () => {
+    const text = '0123456789 ±−·µ°²³⁻⁶ abcdefghijklmnopqrstuvwxyz ABCDEFGHIJKLMNOPQRSTUVWXYZ ÄÖÜß §%&()≤√…';
+    const font = { fontFiles: [fontFile], loadSystemFonts: false, defaultFontFamily: 'DejaVu Sans' };
+    const ink = (svg: string) => new Resvg(svg, { font }).render().pixels;
+    for (const character of text.replaceAll(' ', '')) {
+      const svg = `<svg xmlns="http://www.w3.org/2000/svg" width="60" height="60" font-family="DejaVu Sans"><text x="30" y="45" font-size="40" text-anchor="middle">${escapeXml(character)}</text></svg>`;
+      const [theirs, ours] = [ink(svg), ink(outlineText(svg))];
+      let [inked, differing] = [0, 0];
+      for (let i = 3; i < theirs.length; i += 4) {
+        if (theirs[i] > 0) inked++;
+        if (Math.abs(theirs[i] - ours[i]) > 64) differing++;
+      }
+      expect({ character, inked: inked > 20, differing: differing <= 0.03 * inked }).toEqual({
+        character,
+        inked: true,
+        differing: true,
+      });
     }
   });
 

@@ -1,6 +1,7 @@
 import { readFileSync } from 'node:fs';
 import { createRequire } from 'node:module';
-import opentype, { type Font } from 'opentype.js';
+// oxlint-disable-next-line import/default -- Node takes its CommonJS file, whose exports are the default
+import opentype, { type Font, type PathCommand } from 'opentype.js';
 
 /** File of the one font that figures use, shipped with the service so that a bare container draws the same text. */
 export const fontFile: string = createRequire(import.meta.url).resolve('dejavu-fonts-ttf/ttf/DejaVuSans.ttf');
@@ -20,7 +21,7 @@ function loadedFont(): Font {
   if (font === null) {
     const file = readFileSync(fontFile);
     const bytes = file.buffer.slice(file.byteOffset, file.byteOffset + file.byteLength);
-    font = opentype.parse(bytes as ArrayBuffer, { lowMemory: true });
+    font = opentype.parse(bytes, { lowMemory: true });
   }
   return font;
 }
@@ -52,10 +53,30 @@ export function advanceOf(character: string): number {
 export function outlineOf(character: string): string {
   let outline = outlines.get(character);
   if (outline === undefined) {
-    outline = loadedFont().charToGlyph(character).getPath(0, 0, emSize).toPathData(0);
+    outline = pathOf(loadedFont().charToGlyph(character).getPath(0, 0, emSize).commands);
     remember(outlines, character, outline);
   }
   return outline;
+}
+
+/** The commands as path data; the library's own (2.0.0) runs "151 −0" together as "1510". */
+function pathOf(commands: readonly PathCommand[]): string {
+  const point = (x: number, y: number) => `${Math.round(x)} ${Math.round(y)}`;
+  return commands
+    .map((command) => {
+      switch (command.type) {
+        case 'M':
+        case 'L':
+          return command.type + point(command.x, command.y);
+        case 'Q':
+          return `Q${point(command.x1, command.y1)} ${point(command.x, command.y)}`;
+        case 'C':
+          return `C${point(command.x1, command.y1)} ${point(command.x2, command.y2)} ${point(command.x, command.y)}`;
+        case 'Z':
+          return 'Z';
+      }
+    })
+    .join('');
 }
 
 /** Keeps what was found; names may hold any character, so a full memory is begun anew. */
