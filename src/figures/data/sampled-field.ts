@@ -33,15 +33,15 @@ export interface Choice {
 }
 
 /**
- * The field that a view shows: displacement where it was sampled, else the first quantity sampled;
- * the force for `force-history`.
+ * The field that a view shows: displacement or relative displacement, whichever the sample names first,
+ * else the first quantity sampled; the force for `force-history`.
  *
  * Faults: `figure-quantity-not-sampled`.
  */
 export function fieldOf(request: ResponsesRequest, answer: ResponsesAnswer, view: View): SampledField {
   const { quantities, gaugeTime } = request.sample;
-  const wanted: Quantity =
-    view === 'force-history' ? 'force' : quantities.includes('displacement') ? 'displacement' : quantities[0];
+  const moves = quantities.find((each) => each === 'displacement' || each === 'relativeDisplacement');
+  const wanted: Quantity = view === 'force-history' ? 'force' : (moves ?? quantities[0]);
   const field = answer.fields[wanted];
   if (field === undefined) {
     throw fault('figure-quantity-not-sampled', '/sample/quantities', {
