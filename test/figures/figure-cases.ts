@@ -72,6 +72,60 @@ const sample = (quantities: string[], extra = {}) => ({
 
 /** Bodies by name; each exercises something that a drawing can get wrong. */
 const bodies: readonly (readonly [name: string, operation: FigureOperation, body: unknown])[] = [
+  [
+    'many-attachments',
+    'modes',
+    {
+      member: {
+        ...cable,
+        attachments: Array.from({ length: 120 }, (_, i) => ({
+          at: 0.2 + 0.37 * i,
+          mass: 3,
+          spring: i % 3 === 0 ? 100 : 0,
+          name: `hanger number ${i}`,
+        })),
+      },
+      series: { modes: 12 },
+      shapes,
+    },
+  ],
+  [
+    'long-names',
+    'responses',
+    {
+      member: {
+        ...cable,
+        attachments: [
+          { at: 15, mass: 30, name: 'W'.repeat(90) },
+          { at: 30, mass: 30, name: 'Ω 漢字 '.repeat(12) },
+        ],
+      },
+      initial: pull(0.1),
+      series: { modes: 8 },
+      sample: sample(['displacement']),
+    },
+  ],
+  [
+    'lumps',
+    'responses',
+    {
+      member: {
+        kind: 'wave',
+        segments: [
+          { length: 1e-3, stiffness: 1e-9, inertia: 0 },
+          { length: 2e-3, stiffness: 2e-9, inertia: 0 },
+        ],
+        ends: { near: fixed, far: { type: 'attached', mass: 1e-12 } },
+        attachments: [{ at: 1e-3, mass: 3e-12 }],
+      },
+      initial: { massVelocities: [{ at: 1e-3, velocity: 1e-6 }] },
+      sample: {
+        positions: { count: 11 },
+        times: { end: 1e-3, count: 101 },
+        quantities: ['displacement', 'force'],
+      },
+    },
+  ],
   ['modes-1', 'modes', { member: cable, series: { modes: 1 }, shapes }],
   [
     'modes-64',

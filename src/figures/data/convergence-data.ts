@@ -89,16 +89,13 @@ export function convergenceData(request: ResponsesRequest, answer: ResponsesAnsw
     key.push({ label: `certified with ${countOf(modesUsed, 'mode')}`, look: 0, kind: 'dot' });
   } else key.push({ label: `with the ${countOf(modesUsed, 'mode')} used`, look: 0, kind: 'dot' });
 
-  const captured = 100 * energy.capturedFraction;
-  const share = captured > 99.99 ? 'All but' : 'Captured:';
-  const amount =
-    captured > 99.99 ? formatNumber(leftOut[modes.length - 1], 2) : `${formatNumber(captured, 4)} %`;
+  const captured = capturedInWords(energy.capturedFraction, leftOut[modes.length - 1]);
   return {
     words: {
       title: 'Convergence of the modal series',
       subtitle: responseInWords(request.member, answer),
       notes: [
-        `${share} ${amount} of the initial energy${captured > 99.99 ? ' is captured' : ''}. ${
+        `${captured} ${
           hasBound
             ? `Bound on the ${word}, certified: ±${roundedUp(displacementBound, unit)}.`
             : `No bound on the ${word} exists.`
@@ -115,6 +112,14 @@ export function convergenceData(request: ResponsesRequest, answer: ResponsesAnsw
     panels,
     key,
   };
+}
+
+/** Close to all of it, what is missing says more than 100 %. */
+function capturedInWords(fraction: number, leftOut: number): string {
+  if (leftOut === 0) return 'All of the initial energy is captured.';
+  if (fraction > 0.9999)
+    return `All but ${formatNumber(100 * leftOut, 2)} % of the initial energy is captured.`;
+  return `Captured: ${formatNumber(100 * fraction, 4)} % of the initial energy.`;
 }
 
 function boundPanel(

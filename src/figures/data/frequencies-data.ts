@@ -103,7 +103,11 @@ function effectiveMasses(
       },
     ],
     key: [
-      { label: 'effective mass of a mode, with its order', look: 0, kind: 'stem' },
+      {
+        label: `effective ${shaft ? 'inertia' : 'mass'} of a mode, with its order`,
+        look: 0,
+        kind: 'stem',
+      },
       ...(all ? [{ label: 'sum up to there', look: 1 }] : []),
     ],
   };

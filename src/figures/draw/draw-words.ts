@@ -6,6 +6,8 @@ import { textWidth } from '../text/font.ts';
 
 const margin = 12;
 const sampleWidth = 26;
+/** Height that is kept for the plots, their axes and the member, px. */
+const leastPlot = 130;
 
 /**
  * Writes title, subtitle and key at the top and the notes at the bottom.
@@ -28,7 +30,10 @@ export function drawWords(sheet: Sheet, words: FigureWords, key: readonly KeyEnt
   y += 2;
   if (key.length > 0) y = drawKey(sheet, key, y + 2, width);
 
-  const most = sheet.height < 300 ? 2 : sheet.height < 500 ? 4 : 6;
+  const usual = sheet.height < 300 ? 2 : sheet.height < 500 ? 4 : 6;
+  // what finds no room stands in the description
+  const room = Math.floor((sheet.height - y - leastPlot) / (sizes.tick + 3.5));
+  const most = Math.min(usual, Math.max(room, 0));
   const lines = wrapNotes(words.notes, width, most);
   const bottom = sheet.height - 8 - lines.length * (sizes.tick + 3.5);
   for (const [i, line] of lines.entries()) {
@@ -39,6 +44,7 @@ export function drawWords(sheet: Sheet, words: FigureWords, key: readonly KeyEnt
 
 /** Each note begins a line of its own; where they are too many lines they run on. */
 function wrapNotes(notes: readonly string[], width: number, most: number): string[] {
+  if (most === 0) return [];
   const apart = notes.flatMap((note) => wrap(note, sizes.tick, width));
   if (apart.length <= most) return apart;
   return wrap(notes.join(' '), sizes.tick, width, most);

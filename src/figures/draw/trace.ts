@@ -52,7 +52,7 @@ export function pathOf({ along, across }: Points, upright: boolean): string {
     line<number>(
       (_, i) => x[i],
       (_, i) => y[i],
-    ).digits(2)(x) ?? ''
+    ).digits(along.length > 1000 ? 1 : 2)(x) ?? ''
   );
 }
 
