@@ -65,7 +65,12 @@ export function drawFigure(
     drawHeatMap(sheet, figure, theme);
     return finish(sheet, figure.words, [`Colors show the ${figure.name} over time and position.`]);
   }
-  const figure = panelFigure(view, request, answer, options);
+  const figure = panelFigure(view, request, answer, {
+    ...options,
+    stations: unlessEmpty(options.stations),
+    instants: unlessEmpty(options.instants),
+    modes: unlessEmpty(options.modes),
+  });
   drawPanels(sheet, figure);
   const shown = figure.panels.map(({ label, value }) =>
     [value?.name ?? figure.value?.name, label].filter((word) => word !== undefined && word !== '').join(' '),
@@ -78,6 +83,11 @@ function requireSize(side: 'width' | 'height', size: number): void {
   const { least, most } = figureSizes[side];
   if (Number.isInteger(size) && size >= least && size <= most) return;
   throw fault('figure-size', '', { side, size, least, most });
+}
+
+/** An empty choice is no choice. */
+function unlessEmpty(list: readonly number[] | undefined): readonly number[] | undefined {
+  return list?.length === 0 ? undefined : list;
 }
 
 function panelFigure(

@@ -119,6 +119,9 @@ describe('a figure', () => {
     expect(refusal('zeros', 'history', { width: 319 })).toMatch(/^figure-size: .*319 px.*320 to 4096/);
     expect(refusal('zeros', 'history', { height: 400.5 })).toMatch(/^figure-size: /);
     expect(refusal('zeros', 'history', { stations: [0, 45], width: 320 })).toBe('drawn');
+    expect(refusal('zeros', 'history', { stations: [] })).toBe('drawn');
+    expect(refusal('modes-1', 'shapes', { modes: [0] })).toMatch(/^figure-mode-not-solved: Mode 0 /);
+    expect(refusal('zeros', 'snapshots', { instants: [Number.NaN] })).toMatch(/^figure-instant-outside: /);
   });
 });
 

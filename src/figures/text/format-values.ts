@@ -19,6 +19,7 @@ export function formatQuantity(value: number, unit: string, digits = 3): string 
 
 /** A plain number with so many significant digits, thousands grouped, zeros at the end left out. */
 export function formatNumber(value: number, digits = 3): string {
+  if (!Number.isFinite(value)) return String(value);
   const size = Math.abs(value);
   if (size !== 0 && (size >= 1e9 || size < 1e-4)) return scientific(value, digits);
   const decimals = size === 0 ? 0 : Math.max(0, digits - 1 - decimalExponent(size));
