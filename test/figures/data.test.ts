@@ -236,10 +236,10 @@ describe('transfer functions', () => {
     ]);
     expect(panels[0].curves.map(({ tag }) => tag)).toEqual(['A', 'B']);
     expect(key.map(({ label }) => label)).toEqual([
-      'A  displacement at 12 m',
-      'B  displacement at 4 m',
-      'C  acceleration at 18.5 m',
-      'D  transverse force at 9 m',
+      'A displacement at 12 m',
+      'B displacement at 4 m',
+      'C acceleration at 18.5 m',
+      'D transverse force at 9 m',
     ]);
   });
 

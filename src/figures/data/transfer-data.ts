@@ -79,7 +79,7 @@ export function transferData(
     panels,
     key: [
       ...drawn.map(({ output, look, tag }) => ({
-        label: `${single ? '' : `${tag}  `}${wordOf(output.quantity, memberKind)} at ${formatQuantity(output.at, 'm', 4)}`,
+        label: `${single ? '' : `${tag} `}${wordOf(output.quantity, memberKind)} at ${formatQuantity(output.at, 'm', 4)}`,
         look,
       })),
       ...(single ? seriesKey(drawn[0].output) : []),
