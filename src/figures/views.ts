@@ -1,4 +1,4 @@
-/** Figures of an answer. */
+/** A figure that an answer can be shown as. */
 export type View =
   | 'shapes'
   | 'frequencies'
@@ -10,9 +10,15 @@ export type View =
   | 'transfer'
   | 'force-history';
 
-/** The views of every operation, the default first. */
-export const viewsOf: Readonly<Record<'modes' | 'responses' | 'transfer-functions', readonly View[]>> = {
+/** An operation whose answers can be drawn. */
+export type FigureOperation = 'modes' | 'responses' | 'transfer-functions';
+
+/** The views of each operation; the first one is shown where none is asked for. */
+export const viewsOf: Readonly<Record<FigureOperation, readonly View[]>> = {
   modes: ['shapes', 'frequencies'],
   responses: ['history', 'snapshots', 'heat-map', 'envelope', 'convergence', 'force-history'],
   'transfer-functions': ['transfer'],
 };
+
+/** Sizes that can be drawn, CSS pixels: below them the words find no room, above them a picture is no picture. */
+export const figureSizes = { width: { least: 320, most: 4096 }, height: { least: 240, most: 4096 } } as const;

@@ -1,4 +1,5 @@
 // npm run bench: first table of speeds. Every number has a reference measured in the same run.
+import { figureTimes } from './figure-times.js';
 import { formTimes } from './form-times.js';
 import { httpLoad } from './http-load.js';
 import { jsonTimes } from './json-times.js';
@@ -11,5 +12,6 @@ solveTimes();
 recordTimes();
 jsonTimes();
 formTimes();
+figureTimes();
 await poolScaling();
 await httpLoad();

@@ -31,13 +31,6 @@ const highestPureRank = 7;
 export const homesOfPackage: Readonly<Record<string, readonly string[]>> = {
   ajv: ['contract'],
   'apache-arrow': ['encoding'],
-  'd3-array': ['figures'],
-  'd3-format': ['figures'],
-  'd3-scale': ['figures'],
-  'd3-scale-chromatic': ['figures'],
-  'd3-shape': ['figures'],
-  '@resvg/resvg-js': ['figures'],
-  'dejavu-fonts-ttf': ['figures'],
   piscina: ['pool'],
   'lru-cache': ['jobs'],
   fastify: ['http', 'main.ts'],
@@ -49,6 +42,14 @@ export const homesOfPackage: Readonly<Record<string, readonly string[]>> = {
   pino: ['http', 'main.ts'],
   'close-with-grace': ['main.ts'],
   'env-schema': ['settings.ts'],
+  'd3-array': ['figures'],
+  'd3-format': ['figures'],
+  'd3-scale': ['figures'],
+  'd3-scale-chromatic': ['figures'],
+  'd3-shape': ['figures'],
+  '@resvg/resvg-js': ['figures'],
+  'dejavu-fonts-ttf': ['figures'],
+  'opentype.js': ['figures'],
 };
 
 /** Node built-ins that belong to one room. */
