@@ -1,6 +1,6 @@
 import { tableNames, type TableName } from '../encoding/tables.ts';
 import { Fault, faultRecord, type FaultRecord } from '../faults/fault.ts';
-import { viewsOf, type View } from '../figures/views.ts';
+import { figureSizes, viewsOf, type View } from '../figures/views.ts';
 import { formats, type Format } from '../pool/answer-form.ts';
 import { listOf, numberBetween, oneOf, type ReadValue } from './query-values.ts';
 
@@ -25,13 +25,17 @@ const highestOrder = 20_000;
 
 const anyNumber = { minimum: -Number.MAX_VALUE, maximum: Number.MAX_VALUE };
 
+function pixels({ least, most }: { readonly least: number; readonly most: number }): ReadValue<unknown> {
+  return numberBetween({ minimum: least, maximum: most, whole: true, unit: 'px' });
+}
+
 /** Every query parameter and how its value is read. */
 const readers: Readonly<Record<keyof AnswerQuery, ReadValue<unknown>>> = {
   format: oneOf(formats),
   table: oneOf(tableNames),
   view: oneOf([...new Set(Object.values(viewsOf).flat())]),
-  width: numberBetween({ minimum: 200, maximum: 4000, whole: true, unit: 'px' }),
-  height: numberBetween({ minimum: 150, maximum: 3000, whole: true, unit: 'px' }),
+  width: pixels(figureSizes.width),
+  height: pixels(figureSizes.height),
   theme: oneOf(['light', 'dark']),
   stations: listOf('positions in m', mostEntries, anyNumber),
   instants: listOf('times in s', mostEntries, anyNumber),

@@ -1,5 +1,5 @@
 import { performance } from 'node:perf_hooks';
-import { plainJson } from './answer-form.ts';
+import { plainJson, type WantedAnswer } from './answer-form.ts';
 import { runTask } from './serve-task.ts';
 import type { SolverOperations } from './task.ts';
 
@@ -60,6 +60,11 @@ const requests: Readonly<Record<string, object>> = {
   },
 };
 
+const picture: WantedAnswer = {
+  form: { format: 'png', figure: { view: 'history', width: 320, height: 240, theme: 'light' } },
+  codings: ['identity'],
+};
+
 /** The body of a small request of an operation. */
 export function warmUpBody(operation: string): Uint8Array<ArrayBuffer> {
   return new TextEncoder().encode(JSON.stringify(requests[operation]));
@@ -79,4 +84,14 @@ export function warmUp(operations: SolverOperations): void {
         throw new Error(`warm-up of ${operation} failed: ${JSON.stringify(result)}`);
     }
   }
+  // the first figure of a thread reads the font
+  const body = warmUpBody('responses');
+  const drawn = runTask(operations, {
+    kind: 'body',
+    operation: 'responses',
+    body,
+    wanted: picture,
+    version: '',
+  });
+  if (drawn.kind !== 'answer') throw new Error(`warm-up of figures failed: ${JSON.stringify(drawn)}`);
 }
