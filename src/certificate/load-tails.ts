@@ -1,9 +1,11 @@
 import type { WaveMember } from '../members/wave-member.ts';
 import type { Mode } from '../modes/mode-series.ts';
+import { largestFlexibility } from '../modes/largest-flexibility.ts';
 import { peakDisplacement } from '../modes/shape-figures.ts';
 import type { Stations } from '../modes/stations.ts';
 import type { AppliedLoad } from '../motion/applied-loads.ts';
 import { historyAmount, type HistoryMeasures } from '../motion/history-measures.ts';
+import { complianceRounding } from '../motion/loaded-static.ts';
 import { dampingRate, largestRatioAbove, smallestRatioAbove } from '../motion/modal-damping.ts';
 import { NO_LOADS, type LoadTailFactors } from './load-tail-factors.ts';
 import { MovingTail } from './moving-tail.ts';
@@ -31,6 +33,7 @@ export class LoadTails {
   private readonly loads: readonly AppliedLoad[];
   private readonly factorsOf: number[][] = [];
   private readonly compliance: Float64Array;
+  private readonly complianceFloor: Float64Array;
   private readonly norm: Float64Array;
   private readonly points: TailFlexibility | null;
   private readonly pointOf: Int32Array;
@@ -43,6 +46,8 @@ export class LoadTails {
     this.member = member;
     this.loads = loads;
     this.compliance = Float64Array.from(loads, (load) => load.still?.compliance ?? 0);
+    const flexibility = loads.some((load) => load.cancels) ? largestFlexibility(member, true) : 0;
+    this.complianceFloor = Float64Array.from(loads, (load) => complianceRounding(member, load, flexibility));
     this.norm = Float64Array.from(loads, (load) => load.massNorm);
     this.pointOf = new Int32Array(loads.length).fill(-1);
     const segments: number[] = [];
@@ -137,7 +142,7 @@ export class LoadTails {
     const load = this.loads[index];
     const measures = load.measures as HistoryMeasures;
     const c = Math.sqrt(this.complianceTail(index, nextOmega));
-    const f = load.smooth ? Math.sqrt(Math.max(0, this.norm[index]) + 64 * EPS * load.massNorm) : Infinity;
+    const f = load.smooth ? Math.sqrt(Math.abs(this.norm[index]) + 64 * EPS * load.massNorm) : Infinity;
     const source = Math.min(c, f / nextOmega);
     const { rest, energy } = this.reachOf(index, nextOmega, kept);
     const gamma = decayRate(this.member, nextOmega, kept);
@@ -175,8 +180,7 @@ export class LoadTails {
   private complianceTail(index: number, nextOmega: number): number {
     const at = this.pointOf[index];
     if (at >= 0 && this.points) return this.points.flexibilityTail(at, nextOmega * nextOmega);
-    const whole = this.loads[index].still?.compliance ?? 0;
-    return Math.max(0, this.compliance[index]) + 64 * EPS * whole;
+    return Math.abs(this.compliance[index]) + this.complianceFloor[index];
   }
 
   /** The reach of a load's history, found anew only when ω has grown by an eighth: it falls with ω and N. */

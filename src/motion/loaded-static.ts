@@ -19,6 +19,24 @@ export interface LoadedStatic {
 }
 
 /**
+ * Rounding of the compliance of a load, m/N: 64·2⁻⁵² of it, or of the terms it is summed from where parts of
+ * the load may cancel, its whole force squared on the whole flexibility and softness.
+ *
+ * @param flexibility largest G over the member, held parts included, m/N
+ */
+export function complianceRounding(
+  member: WaveMember,
+  load: { readonly still: LoadedStatic | null; readonly cancels: boolean; readonly totalForce: number },
+  flexibility: number,
+): number {
+  if (load.still === null) return 0;
+  let softness = 0;
+  for (let i = 0; i < member.segmentCount; i++) softness += member.length[i] / member.stiffness[i];
+  const terms = load.cancels ? load.totalForce ** 2 * (flexibility + softness) : load.still.compliance;
+  return 64 * Number.EPSILON * terms;
+}
+
+/**
  * Static response under a load shape; for an unrestrained member its elastic part, the load balanced
  * by inertia (mass-orthogonal to the rigid-body mode).
  *

@@ -2,6 +2,7 @@ import type { WaveMember } from '../members/wave-member.ts';
 import type { Quantity } from '../spec/types.ts';
 import type { AppliedLoad } from './applied-loads.ts';
 import { historyAmount } from './history-measures.ts';
+import { complianceRounding } from './loaded-static.ts';
 import { supportState } from './support-shape.ts';
 
 /**
@@ -41,7 +42,7 @@ function peakOf(
   }
   const { measures, still } = load;
   if (measures === null || still === null) return Infinity;
-  const reach = Math.sqrt(still.compliance * flexibility);
+  const reach = Math.sqrt((still.compliance + complianceRounding(member, load, flexibility)) * flexibility);
   const amount = historyAmount(measures);
   const support = load.support === null ? null : load.support.motion.peaks(span);
   const shape = load.support === null ? 0 : largestSupport(member, load, false);
