@@ -64,6 +64,9 @@ export function transferTable({ frequencies, outputs }: TransferFunctionsAnswer)
   add('truncatedImaginary', unit, ({ series }) => series?.truncated.imaginary);
   add('correctedReal', unit, ({ series }) => series?.corrected.real);
   add('correctedImaginary', unit, ({ series }) => series?.corrected.imaginary);
-  add('correctedBound', unit, ({ series }) => series?.bound);
+  if (outputs.every(({ series }) => series !== undefined)) {
+    const bounds = outputs.flatMap(({ series }) => series?.bound ?? []);
+    columns.push(column('correctedBound', unit, bounds));
+  }
   return { rows: outputs.length * count, columns };
 }

@@ -219,7 +219,9 @@ function seriesOf(
     real: Float64Array.from(values, (value) => value.re),
     imaginary: Float64Array.from(values, (value) => value.im),
   });
-  return { modes, truncated: parts(truncated), corrected: parts(corrected), bound: Float64Array.from(bound) };
+  // none exists from the first frequency left out on
+  const known = bound.map((value) => (Number.isFinite(value) ? value : null));
+  return { modes, truncated: parts(truncated), corrected: parts(corrected), bound: known };
 }
 
 /** What became of the refinement asked for; all peaks are claimed only where all were refined. */

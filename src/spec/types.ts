@@ -1813,9 +1813,9 @@ export interface TransferSeries {
    */
   corrected: ComplexNumbers;
   /**
-   * Largest possible magnitude of the error of the corrected series, per frequency.
+   * Largest possible magnitude of the error of the corrected series, per frequency; null from the first frequency left out on, where no such bound exists.
    */
-  bound: Numbers;
+  bound: (number | null)[];
 }
 /**
  * One value over a stretch; zero outside it.

@@ -71,7 +71,7 @@ describe('harmonic point force on members of several segments', () => {
         Math.abs(corrected.real[0] - truncated.real[0] - row.static_residual_after_50_modes),
       ).toBeLessThan(1e-11 * scale);
       expect(Math.abs(corrected.real[0] - row.u_undamped_exact)).toBeLessThanOrEqual(
-        bound[0] + 1e-14 * scale,
+        bound[0]! + 1e-14 * scale,
       );
 
       const damped = solveTransferFunctions(

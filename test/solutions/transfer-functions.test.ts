@@ -95,7 +95,7 @@ describe('an undamped resonance', () => {
       const exact = Math.sin(kappa * 0.2) / (2 * kappa * Math.cos(kappa / 2));
       expect(Math.abs(output.real[0] / exact - 1)).toBeLessThan(1e-10);
       const { corrected, bound } = output.series!;
-      expect(Math.abs(corrected.real[0] - exact)).toBeLessThanOrEqual(bound[0] + 1e-12 * Math.abs(exact));
+      expect(Math.abs(corrected.real[0] - exact)).toBeLessThanOrEqual(bound[0]! + 1e-12 * Math.abs(exact));
     }
   });
 
@@ -189,4 +189,18 @@ describe('convergence', () => {
     );
     expect(listed.convergence).toMatchObject({ closedForm: false, modesUsed: 2 });
   });
+});
+
+it('a modal series has no bound at frequencies that it leaves out, and says null there', () => {
+  // string of 1 m, c = 1 m/s: modes at 0.5, 1, 1.5, 2 Hz …
+  const [output] = solveTransferFunctions(
+    request(uniformMember(1, 1, 1, true), { type: 'point-force', at: 0.3 }, [0.7, 1.9, 2.1], {
+      outputs: [0.2],
+      modes: 3,
+    }),
+  ).outputs;
+  const { bound } = output.series!;
+  expect(bound[0]).toBeGreaterThan(0);
+  expect(bound[1]).toBeGreaterThan(0);
+  expect(bound[2]).toBeNull();
 });

@@ -105,7 +105,7 @@ describe('random members', () => {
           failures.push(`case ${index}: reciprocity ${other / size}`);
         const error = Math.hypot(corrected.real[i] - exact[0], corrected.imaginary[i] - exact[1]);
         compared++;
-        if (error > bound[i] + (forth.bound?.[i] ?? 0) + 1e-12 * size)
+        if (error > bound[i]! + (forth.bound?.[i] ?? 0) + 1e-12 * size)
           failures.push(`case ${index}, Ω ${omegas[i]}, ${JSON.stringify(damping)}: ${error} > ${bound[i]}`);
       });
     }
