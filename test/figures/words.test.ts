@@ -163,6 +163,15 @@ describe('the labels of an axis', () => {
     );
   });
 
+  it('give a range about zero a second number, in a low panel too', () => {
+    for (let top = 0.5; top < 20; top *= 1.013) {
+      for (const length of [45, 60, 100]) {
+        const spec = { name: 'rotation', unit: 'rad', from: -top * 1e-3, to: 1.06e-3 * top };
+        expect(layOutAxis(spec, length, 0, 'upright').ticks.length).toBeGreaterThanOrEqual(2);
+      }
+    }
+  });
+
   it('are read from the start of a range that is narrow beside its distance from zero', () => {
     const axis = layOutAxis({ name: 'time', unit: 's', from: 1024, to: 1024.03125 }, 0, 500, 'across');
     expect(axis.title).toBe('time − 1,024 s (ms)');

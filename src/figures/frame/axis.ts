@@ -61,9 +61,9 @@ export function layOutAxis(spec: AxisSpec, start: number, end: number, direction
     while (stride < marks.length && !fits(everyNth(marks, stride), direction)) stride++;
     return { title, ticks: everyNth(marks, stride), place };
   }
-  const most = Math.max(2, Math.floor(length / (direction === 'across' ? 55 : 26)));
+  const most = Math.max(2, Math.min(10, Math.floor(length / (direction === 'across' ? 55 : 26))));
   let best: Tick[] = [];
-  for (let count = Math.min(most, 10); count >= 1; count--) {
+  for (const count of countsFrom(most)) {
     for (const values of tickChoices(Math.min(from, to), Math.max(from, to), count, spec.whole === true)) {
       const labels = formatTicks(values);
       const list = values.map((value, i) => ({ at: scale(value), label: labels[i] }));
@@ -73,6 +73,13 @@ export function layOutAxis(spec: AxisSpec, start: number, end: number, direction
     }
   }
   return { title, ticks: best, place };
+}
+
+/** Numbers of ticks to try: fewer and fewer, then more, so that a range is hardly left with its zero alone. */
+function countsFrom(most: number): number[] {
+  const fewer = Array.from({ length: most }, (_, i) => most - i);
+  const more = Array.from({ length: Math.max(0, 6 - most) }, (_, i) => most + 1 + i);
+  return [...fewer, ...more];
 }
 
 /** Round values in a range, and every second or third of a finer series, zero among them. */
