@@ -1,9 +1,7 @@
 import { faultRecord, type FaultRecord } from '../faults/fault.ts';
+import { ANSWER_VALUES } from '../solutions/limits.ts';
 import type { ModesRequest, Positions, Sample, Times } from '../spec/types.ts';
 import { checkPosition, type Span } from './check-position.ts';
-
-/** Most values of a field or of mode shapes in one answer. */
-export const mostValues = 1_000_000;
 
 /** What in a sample does not fit together or not to the member. */
 export function checkSample({ positions, times, quantities }: Sample, span: Span | null): FaultRecord[] {
@@ -63,9 +61,9 @@ function checkTimes(times: Times): FaultRecord[] {
 /** A fault where the product of these counts is more than one answer holds. */
 export function checkSize(counts: Readonly<Record<string, number>>, pointer: string): FaultRecord[] {
   const count = Object.values(counts).reduce((product, factor) => product * factor, 1);
-  if (count <= mostValues) return [];
+  if (count <= ANSWER_VALUES) return [];
   const what = Object.entries(counts)
     .map(([name, number]) => `${number} ${name}`)
     .join(' × ');
-  return [faultRecord('too-many-values', pointer, { count, what, limit: mostValues })];
+  return [faultRecord('too-many-values', pointer, { count, what, limit: ANSWER_VALUES })];
 }

@@ -1,12 +1,10 @@
+import { FREQUENCY_LIMIT } from './limits.ts';
 import type { WaveMember } from '../members/wave-member.ts';
 import { participationFactor } from '../modes/participation.ts';
 import { shapeAt } from '../modes/shape-at.ts';
 import { dampingRate } from '../motion/modal-damping.ts';
 import type { Frequencies, TransferInput } from '../spec/types.ts';
 import { NaturalFrequencies } from '../spectrum/natural-frequencies.ts';
-
-/** Frequencies that a refined transfer function may have. */
-export const FREQUENCY_LIMIT = 100_000;
 
 /**
  * Offsets from a peak in half-widths ζω. Between neighbours a resonance 1/|x − i| is missed by less

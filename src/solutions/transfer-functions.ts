@@ -14,19 +14,12 @@ import type {
 } from '../spec/types.ts';
 import type { BoundedState, SteadyState } from '../steady/steady-response.ts';
 import { scaledState } from '../steady/transfer-state.ts';
+import { ANSWER_VALUES, FREQUENCY_LIMIT } from './limits.ts';
 import { unitOf } from './quantity-units.ts';
-import {
-  askedFrequencies,
-  FREQUENCY_LIMIT,
-  refineFrequencies,
-  type RefinedFrequencies,
-} from './refine-frequencies.ts';
+import { askedFrequencies, refineFrequencies, type RefinedFrequencies } from './refine-frequencies.ts';
 import { exactSource } from './transfer-exact.ts';
 import { undrivenResonances } from './transfer-resonance.ts';
 import { seriesSource, type SeriesState } from './transfer-series.ts';
-
-/** Most values of one answer, outputs × frequencies. */
-export const MOST_VALUES = 1_000_000;
 
 /** Modes taken where no closed form exists (ratios above 0.7, or beside drag). */
 const FALLBACK_MODES = 4096;
@@ -51,9 +44,9 @@ export function solveTransferFunctions(request: TransferFunctionsRequest): Trans
   const grid = request.refine ? refineFrequencies(member, request.input, asked, lossFactor) : null;
   const frequencies = grid === null ? asked : grid.frequencies;
   const count = request.outputs.length * frequencies.length;
-  if (grid !== null && count > MOST_VALUES) {
+  if (grid !== null && count > ANSWER_VALUES) {
     const what = `${request.outputs.length} outputs × ${frequencies.length} frequencies once refined`;
-    throw fault('too-many-values', '/refine', { count, what, limit: MOST_VALUES });
+    throw fault('too-many-values', '/refine', { count, what, limit: ANSWER_VALUES });
   }
   const omegas = frequencies.map((frequency) => 2 * Math.PI * frequency);
   const stations = placeStations(

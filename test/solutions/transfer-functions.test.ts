@@ -1,5 +1,9 @@
 import { describe, expect, it } from 'vitest';
+import frequencyGrid from '../../schemas/FrequencyGrid.json' with { type: 'json' };
+import positionGrid from '../../schemas/PositionGrid.json' with { type: 'json' };
+import timeGrid from '../../schemas/TimeGrid.json' with { type: 'json' };
 import { Fault, type FaultRecord } from '../../src/faults/fault.ts';
+import { ANSWER_VALUES, FREQUENCY_LIMIT } from '../../src/solutions/limits.ts';
 import { solveModes } from '../../src/solutions/modes.ts';
 import { solveTransferFunctions } from '../../src/solutions/transfer-functions.ts';
 import type { Damping, TransferFunctionsRequest, TransferInput } from '../../src/spec/types.ts';
@@ -203,4 +207,10 @@ it('a modal series has no bound at frequencies that it leaves out, and says null
   expect(bound[0]).toBeGreaterThan(0);
   expect(bound[1]).toBeGreaterThan(0);
   expect(bound[2]).toBeNull();
+});
+
+it('the schemas take as many frequencies and samples as the solver', () => {
+  expect(frequencyGrid.properties.count.maximum).toBe(FREQUENCY_LIMIT);
+  expect(positionGrid.properties.count.maximum).toBe(ANSWER_VALUES);
+  expect(timeGrid.properties.count.maximum).toBe(ANSWER_VALUES);
 });

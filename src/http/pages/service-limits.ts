@@ -1,8 +1,6 @@
-import { mostValues as mostSamples } from '../../contract/check-sample.ts';
 import { mostFaults } from '../../contract/read-request.ts';
 import { nestingLimit } from '../../encoding/json-syntax.ts';
-import { FREQUENCY_LIMIT } from '../../solutions/refine-frequencies.ts';
-import { MOST_VALUES as mostTransferValues } from '../../solutions/transfer-functions.ts';
+import { ANSWER_VALUES, FREQUENCY_LIMIT } from '../../solutions/limits.ts';
 
 /** What a limit is read from: the schemas of the reference document. */
 export type Schemas = Readonly<
@@ -39,12 +37,12 @@ export function serviceLimits(schemas: Schemas, bodyLimit: number): ServiceLimit
   return [
     { what: 'modes of one request', limit: most('ModesByCount', 'modes') },
     { what: 'segments; attachments', limit: `${most('Cable', 'segments')} each` },
-    { what: 'sampled values (positions × times × quantities)', limit: grouped(mostSamples) },
+    { what: 'sampled values (positions × times × quantities)', limit: grouped(ANSWER_VALUES) },
     { what: 'loads of one request', limit: most('ResponsesRequest', 'loads') },
     { what: 'samples of a record', limit: most('SampledHistory', 'values') },
     { what: 'outputs of one request', limit: most('TransferFunctionsRequest', 'outputs') },
     { what: 'frequencies; refined ones included', limit: grouped(FREQUENCY_LIMIT) },
-    { what: 'outputs × frequencies', limit: grouped(mostTransferValues) },
+    { what: 'outputs × frequencies', limit: grouped(ANSWER_VALUES) },
     { what: 'body', limit: byteText(bodyLimit) },
     { what: 'nesting of a body', limit: `${nestingLimit} levels` },
     { what: 'faults listed at once', limit: String(mostFaults) },
