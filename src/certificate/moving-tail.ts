@@ -60,7 +60,8 @@ export class MovingTail {
       const wave =
         travelling > 0 ? Math.sqrt(g + h / (k * rho * travelling)) : rho === 0 ? Math.sqrt(g) : Infinity;
       largest = Math.max(largest, wave);
-      steepest = Math.max(steepest, Math.sqrt(h) / k);
+      // ΔH ≤ ΔH(x*) + kρ ΔG(x*) anywhere in the segment
+      steepest = Math.max(steepest, rho > 0 ? Math.sqrt(h + k * rho * g) / k : Infinity);
       within = Math.max(within, gain[i] * wave);
       // a quasi-static part P G(x, vt) is taken out: D − 1 remains where it is smaller
       restWithin = Math.max(restWithin, this.restGain(i, gain[i], mach[i], ratio) * wave);
