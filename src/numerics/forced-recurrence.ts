@@ -8,8 +8,8 @@ const FORCING = STATES + 8 * 2 * LANES;
 
 interface Kernel {
   readonly memory: KernelMemory;
-  march(forcing: number, stops: number, count: number, out: number, lane: number): void;
-  marchBent(forcing: number, stops: number, count: number, out: number, lane: number): void;
+  march(forcing: number, bytes: number, stops: number, count: number, out: number, lane: number): void;
+  marchBent(forcing: number, bytes: number, stops: number, count: number, out: number, lane: number): void;
 }
 
 const recurrence = new WasmKernel<Kernel>(RECURRENCE_KERNEL);
@@ -54,21 +54,12 @@ export class ForcedRecurrence {
   private hold({ memory }: Kernel): void {
     const { value, slope, curve, kick } = this.forcing;
     growTo(memory, this.forcingEnd);
-    const held = new Float64Array(memory.buffer, FORCING);
     this.view(memory);
-    if (!this.bent) {
-      for (let i = 0, at = 0; i < value.length; i++, at += 2) {
-        held[at] = value[i];
-        held[at + 1] = slope[i];
-      }
-      return;
-    }
-    for (let i = 0, at = 0; i < value.length; i++, at += 4) {
-      held[at] = value[i];
-      held[at + 1] = slope[i];
-      held[at + 2] = curve === null ? 0 : curve[i];
-      held[at + 3] = kick === null ? 0 : kick[i + 1];
-    }
+    const tables = this.bent ? [value, slope, curve, kick?.subarray(1) ?? null] : [value, slope];
+    tables.forEach((table, index) => {
+      if (table === null) return;
+      new Float64Array(memory.buffer, FORCING + 8 * index * value.length, value.length).set(table);
+    });
   }
 
   private view({ buffer }: KernelMemory): void {
@@ -91,8 +82,15 @@ export class ForcedRecurrence {
       return this.tables;
     }
     this.stops.set(stops);
-    const march = this.bent ? kernel.marchBent : kernel.march;
-    march(FORCING, this.stops.byteOffset, count, this.tables.byteOffset, 8 * count);
+    const places = [
+      FORCING,
+      8 * this.intervals,
+      this.stops.byteOffset,
+      count,
+      this.tables.byteOffset,
+    ] as const;
+    if (this.bent) kernel.marchBent(...places, 8 * count);
+    else kernel.march(...places, 8 * count);
     return this.tables;
   }
 

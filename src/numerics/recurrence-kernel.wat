@@ -2,14 +2,14 @@
 ;;   p ← (pl load + pr climb [+ pc bend]) + (pp p + pv v)
 ;;   v ← (pv load + pl climb [+ pr bend + blow]) + (vp p + vv v)
 ;; At 0 the steps as [pp pv pl pr vp vv pc][4], at 224 the states as [p v][4], read and written back.
-;; The record is [interval][load climb], with bends [interval][load climb bend blow]; stops (i32) are
+;; The record is [load climb][interval], with bends [load climb bend blow][interval], bytes a table; stops (i32) are
 ;; the numbers of intervals, ascending, after which the states are put to out, [p v][4][lane bytes].
 ;; Every number has one order of operations; none is fused or relaxed.
 (module
   (memory (export "memory") 1)
   (func (export "march")
-    (param $record i32) (param $stops i32) (param $count i32) (param $out i32) (param $lane i32)
-    (local $at i32) (local $end i32) (local $to i32)
+    (param $record i32) (param $bytes i32) (param $stops i32) (param $count i32) (param $out i32) (param $lane i32)
+    (local $loadAt i32) (local $climbAt i32) (local $end i32) (local $to i32)
     (local $app v128) (local $apv v128) (local $apl v128) (local $apr v128) (local $avp v128) (local $avv v128)
     (local $bpp v128) (local $bpv v128) (local $bpl v128) (local $bpr v128) (local $bvp v128) (local $bvv v128)
     (local $ap v128) (local $av v128) (local $bp v128) (local $bv v128) (local $next v128)
@@ -30,16 +30,17 @@
     (local.set $bp (v128.load offset=240 (i32.const 0)))
     (local.set $av (v128.load offset=256 (i32.const 0)))
     (local.set $bv (v128.load offset=272 (i32.const 0)))
-    (local.set $at (local.get $record))
+    (local.set $loadAt (local.get $record))
+    (local.set $climbAt (i32.add (local.get $loadAt) (local.get $bytes)))
     (block $done
       (loop $times
         (br_if $done (i32.eqz (local.get $count)))
-        (local.set $end (i32.add (local.get $record) (i32.mul (i32.load (local.get $stops)) (i32.const 16))))
+        (local.set $end (i32.add (local.get $record) (i32.mul (i32.load (local.get $stops)) (i32.const 8))))
         (block $there
           (loop $intervals
-            (br_if $there (i32.ge_u (local.get $at) (local.get $end)))
-            (local.set $load (v128.load64_splat (local.get $at)))
-            (local.set $climb (v128.load64_splat offset=8 (local.get $at)))
+            (br_if $there (i32.ge_u (local.get $loadAt) (local.get $end)))
+            (local.set $load (v128.load64_splat (local.get $loadAt)))
+            (local.set $climb (v128.load64_splat (local.get $climbAt)))
             (local.set $next
               (f64x2.add
                 (f64x2.add (f64x2.mul (local.get $apl) (local.get $load)) (f64x2.mul (local.get $apr) (local.get $climb)))
@@ -58,7 +59,8 @@
                 (f64x2.add (f64x2.mul (local.get $bpv) (local.get $load)) (f64x2.mul (local.get $bpl) (local.get $climb)))
                 (f64x2.add (f64x2.mul (local.get $bvp) (local.get $bp)) (f64x2.mul (local.get $bvv) (local.get $bv)))))
             (local.set $bp (local.get $next))
-            (local.set $at (i32.add (local.get $at) (i32.const 16)))
+            (local.set $loadAt (i32.add (local.get $loadAt) (i32.const 8)))
+            (local.set $climbAt (i32.add (local.get $climbAt) (i32.const 8)))
             (br $intervals)))
         (local.set $to (local.get $out))
         (v128.store64_lane 0 (local.get $to) (local.get $ap))
@@ -85,8 +87,8 @@
     (v128.store offset=256 (i32.const 0) (local.get $av))
     (v128.store offset=272 (i32.const 0) (local.get $bv)))
   (func (export "marchBent")
-    (param $record i32) (param $stops i32) (param $count i32) (param $out i32) (param $lane i32)
-    (local $at i32) (local $end i32) (local $to i32)
+    (param $record i32) (param $bytes i32) (param $stops i32) (param $count i32) (param $out i32) (param $lane i32)
+    (local $loadAt i32) (local $climbAt i32) (local $bendAt i32) (local $blowAt i32) (local $end i32) (local $to i32)
     (local $app v128) (local $apv v128) (local $apl v128) (local $apr v128) (local $avp v128) (local $avv v128) (local $apc v128)
     (local $bpp v128) (local $bpv v128) (local $bpl v128) (local $bpr v128) (local $bvp v128) (local $bvv v128) (local $bpc v128)
     (local $ap v128) (local $av v128) (local $bp v128) (local $bv v128) (local $next v128)
@@ -109,18 +111,21 @@
     (local.set $bp (v128.load offset=240 (i32.const 0)))
     (local.set $av (v128.load offset=256 (i32.const 0)))
     (local.set $bv (v128.load offset=272 (i32.const 0)))
-    (local.set $at (local.get $record))
+    (local.set $loadAt (local.get $record))
+    (local.set $climbAt (i32.add (local.get $loadAt) (local.get $bytes)))
+    (local.set $bendAt (i32.add (local.get $climbAt) (local.get $bytes)))
+    (local.set $blowAt (i32.add (local.get $bendAt) (local.get $bytes)))
     (block $done
       (loop $times
         (br_if $done (i32.eqz (local.get $count)))
-        (local.set $end (i32.add (local.get $record) (i32.mul (i32.load (local.get $stops)) (i32.const 32))))
+        (local.set $end (i32.add (local.get $record) (i32.mul (i32.load (local.get $stops)) (i32.const 8))))
         (block $there
           (loop $intervals
-            (br_if $there (i32.ge_u (local.get $at) (local.get $end)))
-            (local.set $load (v128.load64_splat (local.get $at)))
-            (local.set $climb (v128.load64_splat offset=8 (local.get $at)))
-            (local.set $bend (v128.load64_splat offset=16 (local.get $at)))
-            (local.set $blow (v128.load64_splat offset=24 (local.get $at)))
+            (br_if $there (i32.ge_u (local.get $loadAt) (local.get $end)))
+            (local.set $load (v128.load64_splat (local.get $loadAt)))
+            (local.set $climb (v128.load64_splat (local.get $climbAt)))
+            (local.set $bend (v128.load64_splat (local.get $bendAt)))
+            (local.set $blow (v128.load64_splat (local.get $blowAt)))
             (local.set $next
               (f64x2.add
                 (f64x2.add (f64x2.add (f64x2.mul (local.get $apl) (local.get $load)) (f64x2.mul (local.get $apr) (local.get $climb))) (f64x2.mul (local.get $apc) (local.get $bend)))
@@ -139,7 +144,10 @@
                 (f64x2.add (f64x2.add (f64x2.add (f64x2.mul (local.get $bpv) (local.get $load)) (f64x2.mul (local.get $bpl) (local.get $climb))) (f64x2.mul (local.get $bpr) (local.get $bend))) (local.get $blow))
                 (f64x2.add (f64x2.mul (local.get $bvp) (local.get $bp)) (f64x2.mul (local.get $bvv) (local.get $bv)))))
             (local.set $bp (local.get $next))
-            (local.set $at (i32.add (local.get $at) (i32.const 32)))
+            (local.set $loadAt (i32.add (local.get $loadAt) (i32.const 8)))
+            (local.set $climbAt (i32.add (local.get $climbAt) (i32.const 8)))
+            (local.set $bendAt (i32.add (local.get $bendAt) (i32.const 8)))
+            (local.set $blowAt (i32.add (local.get $blowAt) (i32.const 8)))
             (br $intervals)))
         (local.set $to (local.get $out))
         (v128.store64_lane 0 (local.get $to) (local.get $ap))

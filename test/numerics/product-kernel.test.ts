@@ -1,10 +1,11 @@
 import { expect, it } from 'vitest';
 import { addProduct } from '../../src/numerics/dense-product.ts';
 import { ProductSum } from '../../src/numerics/product-sum.ts';
-import { holdToSource } from './kernel-source.ts';
+import { kernelTexts } from './kernel-source.ts';
 
 it('the committed kernel is what its source assembles to', async () => {
-  await holdToSource('product-kernel', 'PRODUCT_KERNEL');
+  const { committed, assembled } = await kernelTexts('product-kernel', 'PRODUCT_KERNEL');
+  expect(committed).toBe(assembled);
 });
 
 /** Deterministic values of mixed sign and size. */

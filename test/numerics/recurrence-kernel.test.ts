@@ -4,10 +4,11 @@ import { RecordMotion, RECORD_LANES } from '../../src/motion/record-motion.ts';
 import { ForcedRecurrence } from '../../src/numerics/forced-recurrence.ts';
 import { LANES, STEP } from '../../src/numerics/plain-recurrence.ts';
 import { RandomStream } from '../support/random.ts';
-import { holdToSource } from './kernel-source.ts';
+import { kernelTexts } from './kernel-source.ts';
 
 it('the committed kernel is what its source assembles to', async () => {
-  await holdToSource('recurrence-kernel', 'RECURRENCE_KERNEL');
+  const { committed, assembled } = await kernelTexts('recurrence-kernel', 'RECURRENCE_KERNEL');
+  expect(committed).toBe(assembled);
 });
 
 const random = new RandomStream(20);
