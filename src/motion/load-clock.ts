@@ -45,7 +45,8 @@ export class LoadClock {
   add(mode: Mode, rate: number, factors: readonly number[], table: MotionTable): void {
     const { driven } = this;
     this.last = { mode, factors };
-    driven.fill(0);
+    const alone = this.loads.length === 1 && this.loads[0].moving === null;
+    if (!alone) driven.fill(0);
     this.loads.forEach((load, index) => {
       const factor = factors[index];
       this.movers[index].add(mode, rate, factor, table[0], table[1]);
@@ -54,8 +55,10 @@ export class LoadClock {
         return;
       }
       const { value } = this.drives[index];
-      for (let j = 0; j < value.length; j++) {
-        driven[j] += factor * value[j];
+      if (alone) {
+        for (let j = 0; j < value.length; j++) driven[j] = factor * value[j];
+      } else {
+        for (let j = 0; j < value.length; j++) driven[j] += factor * value[j];
       }
     });
   }

@@ -150,9 +150,9 @@ export class RecordedMotion {
   drive(drag: number): RecordDrive {
     const { velocity, acceleration, interval: h } = this;
     const count = velocity.length - 1;
-    const value = new Float64Array(count);
-    const slope = new Float64Array(count);
     if (acceleration === null) {
+      const value = new Float64Array(count);
+      const slope = new Float64Array(count);
       const kick = new Float64Array(count + 1);
       for (let i = 0; i < count; i++) {
         value[i] = drag * velocity[i];
@@ -161,12 +161,20 @@ export class RecordedMotion {
       kick[count] = -velocity[count - 1];
       return { start: this.start, interval: h, value, slope, curve: null, kick, after: 0 };
     }
-    const curve = drag > 0 ? new Float64Array(count) : null;
+    if (drag === 0) {
+      const slope = new Float64Array(count);
+      for (let i = 0; i < count; i++) slope[i] = (acceleration[i + 1] - acceleration[i]) / h;
+      const value = acceleration.subarray(0, count);
+      return { start: this.start, interval: h, value, slope, curve: null, kick: null, after: 0 };
+    }
+    const value = new Float64Array(count);
+    const slope = new Float64Array(count);
+    const curve = new Float64Array(count);
     for (let i = 0; i < count; i++) {
       const jerk = (acceleration[i + 1] - acceleration[i]) / h;
       value[i] = acceleration[i] + drag * velocity[i];
       slope[i] = jerk + drag * acceleration[i];
-      if (curve) curve[i] = drag * jerk;
+      curve[i] = drag * jerk;
     }
     return { start: this.start, interval: h, value, slope, curve, kick: null, after: drag * velocity[count] };
   }
