@@ -2,6 +2,7 @@ import type { WaveMember } from '../members/wave-member.ts';
 import { ENDS } from '../modes/mode-shape.ts';
 import { nodeDisplacement } from '../modes/shape-figures.ts';
 import type { AppliedLoad } from '../motion/applied-loads.ts';
+import { GatheredField } from './gathered-field.ts';
 import type { KeptMode } from './kept-modes.ts';
 import { PowerBalance } from './power-balance.ts';
 import { QuadratureGrid } from './quadrature-grid.ts';
@@ -58,12 +59,12 @@ export function checkIndependently(
   const balanced = perMode * kept.length <= 2 * WORK;
   const stride = Math.max(1, Math.ceil((perMode * kept.length) / WORK));
 
-  const speed = Array.from(instants, () => new Float64Array(perMode));
-  const flux = Array.from(instants, () => new Float64Array(perMode));
-  const place = Array.from(instants, () => new Float64Array(perMode));
+  const speed = balanced ? new GatheredField(instants.length, perMode) : null;
+  const flux = balanced ? new GatheredField(instants.length, perMode) : null;
   const nodeSpeed = Array.from(instants, () => new Float64Array(member.segmentCount + 1));
   const nodePlace = Array.from(instants, () => new Float64Array(member.segmentCount + 1));
   const bedded = member.foundation.some((s) => s > 0);
+  const place = balanced && bedded ? new GatheredField(instants.length, perMode) : null;
 
   const mostHeld = Math.max(2, Math.min(HELD, Math.floor(Math.sqrt((2 * WORK) / perMode))));
   const heldEvery = Math.max(1, Math.ceil(kept.length / mostHeld));
@@ -105,10 +106,10 @@ export function checkIndependently(
     if (!balanced) continue;
     initial += start.energy;
     const { q, v } = balance.add(kept[n]);
+    speed?.add(v, u);
+    flux?.add(q, p);
+    place?.add(q, u);
     for (let j = 0; j < instants.length; j++) {
-      addScaled(speed[j], u, v[j]);
-      addScaled(flux[j], p, q[j]);
-      if (bedded) addScaled(place[j], u, q[j]);
       for (let node = 0; node <= member.segmentCount; node++) {
         const phi = nodeDisplacement(mode.shape, node);
         nodeSpeed[j][node] += phi * v[j];
@@ -119,9 +120,10 @@ export function checkIndependently(
 
   let drift = 0;
   const size = Math.max(energy, balance.largestWork);
-  if (balanced && size > 0) {
+  if (speed !== null && flux !== null && size > 0) {
+    const [speeds, fluxes, places] = [speed.rows(), flux.rows(), place?.rows()];
     for (let j = 0; j < instants.length; j++) {
-      const sum = fieldEnergy(member, grid, speed[j], flux[j], place[j], nodeSpeed[j], nodePlace[j]);
+      const sum = fieldEnergy(member, grid, speeds[j], fluxes[j], places?.[j], nodeSpeed[j], nodePlace[j]);
       drift = Math.max(drift, Math.abs(sum + balance.taken[j] - initial) / size);
     }
   }
@@ -133,7 +135,7 @@ function fieldEnergy(
   grid: QuadratureGrid,
   speed: Float64Array,
   flux: Float64Array,
-  place: Float64Array,
+  place: Float64Array | undefined,
   nodeSpeed: Float64Array,
   nodePlace: Float64Array,
 ): number {
@@ -147,7 +149,7 @@ function fieldEnergy(
       energy +=
         0.5 *
         grid.weights[x] *
-        (rho * speed[x] * speed[x] + soft * flux[x] * flux[x] + s * place[x] * place[x]);
+        (rho * speed[x] * speed[x] + soft * flux[x] * flux[x] + (place ? s * place[x] * place[x] : 0));
     }
   }
   for (let j = 0; j <= member.segmentCount; j++) {
@@ -255,8 +257,4 @@ function nodeResidual(
 
 function ratio(defect: number, size: number): number {
   return size > 1e-200 ? Math.abs(defect) / size : 0;
-}
-
-function addScaled(into: Float64Array, from: Float64Array, factor: number): void {
-  for (let x = 0; x < into.length; x++) into[x] += factor * from[x];
 }

@@ -4,7 +4,7 @@ import { largestFlexibility } from '../modes/largest-flexibility.ts';
 import { peakDisplacement } from '../modes/shape-figures.ts';
 import type { Stations } from '../modes/stations.ts';
 import type { AppliedLoad } from '../motion/applied-loads.ts';
-import { historyAmount, type HistoryMeasures } from '../motion/history-measures.ts';
+import { historyAmount, VALUES_ONLY, type HistoryMeasures } from '../motion/history-measures.ts';
 import { complianceRounding } from '../motion/loaded-static.ts';
 import { dampingRate, largestRatioAbove, smallestRatioAbove } from '../motion/modal-damping.ts';
 import { NO_LOADS, type LoadTailFactors } from './load-tail-factors.ts';
@@ -227,7 +227,9 @@ function reachOfHistory(measures: HistoryMeasures, member: WaveMember, omega: nu
     energy = Math.min(energy, energyReach);
   };
   if (!rough) {
-    const slow = measures.weighed(0, ratio, 1 / omega);
+    const fully = { onValue: ratio, onSlope: 1 / omega };
+    const slopes = { onValue: 0, onSlope: 1 / omega };
+    const [slow] = measures.weighed(0, [fully]);
     // jumps of p count whole, beside their slopes: √(Δp² + Δp′²/ω²)
     const jumped = measures.jumps.reduce(
       (sum, jump) =>
@@ -236,18 +238,18 @@ function reachOfHistory(measures: HistoryMeasures, member: WaveMember, omega: nu
     );
     const smooth = slow + Math.max(0, jumped);
     take(smooth, smooth + measures.largestRate / omega);
-    const gamma = decayRate(member, omega, kept);
-    if (zeta < 1 && gamma > 0) {
+    if (zeta < 1) {
+      const gamma = decayRate(member, omega, kept);
       const shrink = 1 / Math.sqrt(1 - zeta * zeta);
       const norm = Math.sqrt((1 + zeta) / (1 - zeta));
-      const plain = measures.weighed(gamma, 1, 0);
-      take(plain * shrink, plain * norm);
-      const fine = measures.weighed(gamma, ratio, 1 / omega) + Math.max(0, jumped);
-      take(fine * shrink, fine * norm + measures.largestRate / omega);
-    }
-    if (zeta < 1) {
+      const [plain, weighed, turned] = measures.weighed(gamma, [VALUES_ONLY, fully, slopes]);
+      if (gamma > 0) {
+        take(plain * shrink, plain * norm);
+        const fine = weighed + Math.max(0, jumped);
+        take(fine * shrink, fine * norm + measures.largestRate / omega);
+      }
       const sudden = measures.jumps.reduce((sum, jump) => sum + jump.value, 0);
-      const kinks = (sudden + measures.weighed(gamma, 0, 1 / omega)) / Math.sqrt(1 - zeta * zeta);
+      const kinks = (sudden + turned) * shrink;
       const slow = measures.largestRate / omega;
       take(ratio * slow + kinks, (1 + ratio) * slow + kinks * (1 + zeta) * Math.hypot(1, ratio));
     }
@@ -270,7 +272,7 @@ function plainSwing(measures: HistoryMeasures, member: WaveMember, omega: number
   const zeta = largestRatioAbove(damping, kept) + (0.5 * damping.massCoefficient) / omega;
   const gamma = decayRate(member, omega, kept);
   if (damping.stiffnessCoefficient > 0 || zeta >= 1 || gamma === 0) return total;
-  return Math.min(total, measures.weighed(gamma, 1, 0) * Math.sqrt((1 + zeta) / (1 - zeta)));
+  return Math.min(total, measures.weighed(gamma, [VALUES_ONLY])[0] * Math.sqrt((1 + zeta) / (1 - zeta)));
 }
 
 /** ω²|(q, q′/ω)|/F of one mode under a lasting harmonic from rest, at most: twice its steady amplitude. */

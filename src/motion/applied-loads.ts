@@ -2,11 +2,12 @@ import type { WaveMember } from '../members/wave-member.ts';
 import type { Mode } from '../modes/mode-series.ts';
 import { participationFactor } from '../modes/participation.ts';
 import type { Load } from '../spec/types.ts';
+import { eventsOf, kicksUntil, quickestOf } from './drive-events.ts';
 import { SupportMotion } from './end-motion.ts';
 import { massForm } from './field-energy.ts';
 import { ForcedMotion, type Kick } from './forced-motion.ts';
 import type { LoadMover } from './load-mover.ts';
-import { historyAt, historyIntegrals, readHistory, type TimeHistory } from './history.ts';
+import { historyIntegrals, historyTable, readHistory, type DriveTable, type TimeHistory } from './history.ts';
 import { measureParts, type HistoryMeasures } from './history-measures.ts';
 import { modalForce, type LoadShape } from './load-shape.ts';
 import { loadedStatic, type LoadedStatic } from './loaded-static.ts';
@@ -26,8 +27,8 @@ export interface AppliedLoad {
   moverAt(times: Float64Array): LoadMover;
   /** The static response per unit drive, elastic part; null for a moving force. */
   readonly still: LoadedStatic | null;
-  /** p and p′ of the quasi-static part at a time. */
-  driveAt(t: number): { readonly value: number; readonly rate: number };
+  /** p and p′ of the quasi-static part at each time. */
+  drivesAt(times: Float64Array): DriveTable;
   /** ∫p up to each time, kicks included. */
   driveIntegrals(times: Float64Array): Float64Array;
   /** Instants up to a time at which the drive changes its formula, at most `most` of them, and sudden changes of q′. */
@@ -143,7 +144,7 @@ function shapedLoad(member: WaveMember, shape: LoadShape, history: TimeHistory, 
     modalFactor: (mode) => modalForce(member, mode.shape, shape),
     moverAt: (times) => moverOf(drive, history.parts, times),
     still: loadedStatic(member, shape),
-    driveAt: (t) => historyAt(history, t),
+    drivesAt: (times) => historyTable(history, times),
     driveIntegrals: (times) => historyIntegrals(history, times),
     events: (until, most) => eventsOf(drive, history.parts, until, most),
     kicks: () => [],
@@ -202,15 +203,17 @@ function supportLoad(
         return { displacement: -state.displacement, flux: -state.flux };
       },
     },
-    driveAt: (t) => {
-      const { velocity, acceleration } = motion.at(t);
-      return { value: acceleration + drag * velocity, rate: motion.jerkAt(t) + drag * acceleration };
+    drivesAt: (times) => {
+      const { velocity, acceleration, jerk } = motion.table(times);
+      return {
+        value: acceleration.map((now, j) => now + drag * velocity[j]),
+        rate: jerk.map((now, j) => now + drag * acceleration[j]),
+      };
     },
-    driveIntegrals: (times) =>
-      times.map((t) => {
-        const { velocity, position } = motion.at(t);
-        return velocity + drag * position;
-      }),
+    driveIntegrals: (times) => {
+      const { velocity, position } = motion.table(times);
+      return velocity.map((now, j) => now + drag * position[j]);
+    },
     events: (until, most) => [
       ...eventsOf(motion.record, motion.drive, until, most),
       ...motion.kicks.filter((kick) => kick.time <= until).map((kick) => kick.time),
@@ -234,7 +237,7 @@ function movingLoad(member: WaveMember, force: number, speed: number, start: num
     modalFactor: () => 1,
     moverAt: (times) => moving.moverAt(times),
     still: null,
-    driveAt: () => ({ value: 0, rate: 0 }),
+    drivesAt: ({ length }) => ({ value: new Float64Array(length), rate: new Float64Array(length) }),
     driveIntegrals: (times) => new Float64Array(times.length),
     events: (until) => moving.passage.flatMap(({ from, to }) => [from, to]).filter((t) => t <= until),
     kicks: () => [],
@@ -259,42 +262,4 @@ function totalForce(shape: LoadShape): number {
   for (const force of shape.nodes) total += Math.abs(force);
   // kinks of |f| inside a cell cost the quadrature a little
   return total * (shape.pieces.length > 0 ? 1.02 : 1);
-}
-
-function eventsOf(
-  drive: RecordDrive | null,
-  parts: TimeHistory['parts'],
-  until: number,
-  most: number,
-): number[] {
-  if (drive !== null) {
-    const count = Math.min(
-      most,
-      drive.value.length + 1,
-      Math.floor((until - drive.start) / drive.interval) + 1,
-    );
-    return Array.from({ length: Math.max(0, count) }, (_, i) => drive.start + i * drive.interval);
-  }
-  return parts.flatMap((part) => [part.from, part.to]).filter((t) => t <= until);
-}
-
-function kicksUntil(motion: SupportMotion, until: number): Kick[] {
-  const { record } = motion;
-  if (record === null || record.kick === null) return motion.kicks.filter((kick) => kick.time <= until);
-  const kicks: Kick[] = [];
-  for (let i = 0; i < record.kick.length; i++) {
-    const time = record.start + i * record.interval;
-    if (time > until) break;
-    if (record.kick[i] !== 0) kicks.push({ time, amount: record.kick[i] });
-  }
-  return kicks;
-}
-
-function quickestOf(parts: TimeHistory['parts']): number {
-  let rate = 0;
-  for (const part of parts) {
-    if (part.kind === 'wave')
-      for (const forcing of part.forcings) rate = Math.max(rate, Math.abs(forcing.rate.im));
-  }
-  return rate;
 }

@@ -12,7 +12,7 @@ import {
 import type { Kick } from './forced-motion.ts';
 import type { HistoryPart, LinearPart, TimeHistory } from './history.ts';
 import type { RecordDrive } from './record-motion.ts';
-import { RecordedMotion } from './recorded-motion.ts';
+import { emptyTable, RecordedMotion, type MotionTable } from './recorded-motion.ts';
 import type { WaveForcing } from './wave-forcing.ts';
 
 /** Motion of a support at one time, m, m/s, m/s². */
@@ -112,9 +112,8 @@ export class SupportMotion {
     });
   }
 
-  /** y‴ from the right (0 between samples of a displacement). */
-  jerkAt(t: number): number {
-    if (this.recorded !== null) return this.recorded.jerkAt(t);
+  /** y‴ from the right. */
+  private jerkAt(t: number): number {
     const part = this.parts.findLast((one) => one.from <= t);
     if (part === undefined) return 0;
     const s = t - part.from;
@@ -124,8 +123,25 @@ export class SupportMotion {
     }, part.jerk);
   }
 
+  /** y, y′, y″ and, from the right, y‴ (0 between samples of a displacement) at each time. */
+  table(times: Float64Array): MotionTable {
+    if (this.recorded !== null) return this.recorded.table(times);
+    const table = emptyTable(times.length);
+    times.forEach((t, j) => {
+      const { position, velocity, acceleration } = this.at(t);
+      table.position[j] = position;
+      table.velocity[j] = velocity;
+      table.acceleration[j] = acceleration;
+      table.jerk[j] = this.jerkAt(t);
+    });
+    return table;
+  }
+
   at(t: number): SupportState {
-    if (this.recorded !== null) return this.recorded.at(t);
+    if (this.recorded !== null) {
+      const { position, velocity, acceleration } = this.recorded.table(Float64Array.of(t));
+      return { position: position[0], velocity: velocity[0], acceleration: acceleration[0] };
+    }
     const { parts } = this;
     if (parts.length === 0 || t < parts[0].from) return { position: 0, velocity: 0, acceleration: 0 };
     let low = 0;

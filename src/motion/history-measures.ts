@@ -18,10 +18,19 @@ export interface HistoryMeasures {
   readonly harmonic: { readonly amplitude: number; readonly omega: number } | null;
   /**
    * sup over t of ∫e^{−γ(t−s)} (|dp| a + |dp′| b), jumps included, for long records; for others the
-   * same without the weight.
+   * same without the weight. One for each of up to three weightings, for about the cost of one.
    */
-  weighed(gamma: number, onValue: number, onSlope: number): number;
+  weighed(gamma: number, weightings: readonly Weighting[]): number[];
 }
+
+/** Weights a of |dp| and b of |dp′|. */
+export interface Weighting {
+  readonly onValue: number;
+  readonly onSlope: number;
+}
+
+/** |dp| alone. */
+export const VALUES_ONLY: Weighting = { onValue: 1, onSlope: 0 };
 
 /** Measures of a drive of a few parts up to the span, s. */
 export function measureParts(
@@ -74,15 +83,16 @@ export function measureParts(
     largestRate,
     weighedKicks: () => total,
     harmonic: harmonicOf(parts),
-    weighed: (gamma, onValue, onSlope) => {
-      const sudden = jumps.reduce(
-        (sum, one) => sum + Math.hypot(one.value * onValue, one.slope * onSlope),
-        0,
-      );
-      const held = Math.min(span, gamma > 0 ? 1 / gamma : Number.POSITIVE_INFINITY);
-      const steady = Math.min(variation, largestRate * held) * onValue;
-      return sudden + steady + slopeVariation * onSlope;
-    },
+    weighed: (gamma, weightings) =>
+      weightings.map(({ onValue, onSlope }) => {
+        const sudden = jumps.reduce(
+          (sum, one) => sum + Math.hypot(one.value * onValue, one.slope * onSlope),
+          0,
+        );
+        const held = Math.min(span, gamma > 0 ? 1 / gamma : Number.POSITIVE_INFINITY);
+        const steady = Math.min(variation, largestRate * held) * onValue;
+        return sudden + steady + slopeVariation * onSlope;
+      }),
   };
 }
 
@@ -190,7 +200,7 @@ export function changeWithin(
     variation: Math.min(
       whole,
       measures.largestRate * window + jumps,
-      Math.E * measures.weighed(1 / window, 1, 0),
+      Math.E * measures.weighed(1 / window, [VALUES_ONLY])[0],
     ),
     kicks: Math.min(measures.weighedKicks(0), Math.E * measures.weighedKicks(1 / window)),
   };

@@ -107,10 +107,35 @@ export function recordParts(record: SampledRecord): LinearPart[] {
   return parts;
 }
 
+/** A drive and its rate at a set of times. */
+export interface DriveTable {
+  readonly value: Float64Array;
+  readonly rate: Float64Array;
+}
+
+/** Value and rate of a history at each time, from the right. */
+export function historyTable(history: TimeHistory, times: Float64Array): DriveTable {
+  const value = new Float64Array(times.length);
+  const rate = new Float64Array(times.length);
+  if (history.record !== null) {
+    fillFromRecord(history.record, times, value, rate);
+    return { value, rate };
+  }
+  times.forEach((t, j) => {
+    const now = historyAt(history, t);
+    value[j] = now.value;
+    rate[j] = now.rate;
+  });
+  return { value, rate };
+}
+
 /** Value and rate of a history at a time, from the right. */
 export function historyAt(history: TimeHistory, t: number): { value: number; rate: number } {
   const { record } = history;
-  if (record !== null) return recordAt(record, t);
+  if (record !== null) {
+    const { value, rate } = historyTable(history, Float64Array.of(t));
+    return { value: value[0], rate: rate[0] };
+  }
   for (const part of history.parts) {
     if (t < part.from || t >= part.to) continue;
     const h = t - part.from;
@@ -132,15 +157,24 @@ export function historyAt(history: TimeHistory, t: number): { value: number; rat
   return { value: 0, rate: 0 };
 }
 
-function recordAt(record: SampledRecord, t: number): { value: number; rate: number } {
-  const { start, interval, values, holds } = record;
-  const place = (t - start) / interval;
+function fillFromRecord(
+  { start, interval, values, holds }: SampledRecord,
+  times: Float64Array,
+  value: Float64Array,
+  rate: Float64Array,
+): void {
   const last = values.length - 1;
-  const i = sampleBefore(place);
-  if (i < 0) return { value: 0, rate: 0 };
-  if (i >= last) return { value: holds ? values[last] : 0, rate: 0 };
-  const rate = (values[i + 1] - values[i]) / interval;
-  return { value: values[i] + rate * Math.max(0, (place - i) * interval), rate };
+  for (let j = 0; j < times.length; j++) {
+    const place = (times[j] - start) / interval;
+    const i = sampleBefore(place);
+    if (i < 0) continue;
+    if (i >= last) {
+      value[j] = holds ? values[last] : 0;
+      continue;
+    }
+    rate[j] = (values[i + 1] - values[i]) / interval;
+    value[j] = values[i] + rate[j] * Math.max(0, (place - i) * interval);
+  }
 }
 
 /** Index of the sample at or before a place in a record; a place within rounding of a sample is on it. */

@@ -3,16 +3,11 @@ import { evaluateShape } from '../modes/mode-shape.ts';
 import type { Mode } from '../modes/mode-series.ts';
 import { placeStation } from '../modes/stations.ts';
 import type { AppliedLoad } from './applied-loads.ts';
+import type { DriveTable } from './history.ts';
 import type { LoadMover, ModalCoordinate } from './load-mover.ts';
 
 /** Motion tables of one modal coordinate at one set of times. */
 export type MotionTable = readonly [Float64Array, Float64Array];
-
-/** p and p′ of each load at a set of times. */
-interface Drives {
-  readonly value: Float64Array;
-  readonly rate: Float64Array;
-}
 
 /**
  * The loads as seen by one modal coordinate after the other: adds their motion to tables of q and q′
@@ -22,7 +17,8 @@ export class LoadClock {
   private readonly member: WaveMember;
   private readonly loads: readonly AppliedLoad[];
   private readonly movers: LoadMover[];
-  private readonly drives: Drives[];
+  /** p and p′ of each load at the times. */
+  private readonly drives: DriveTable[];
   private readonly times: Float64Array;
   private readonly pair = new Float64Array(2);
   /** Σ F p of the mode added last, at the times. */
@@ -35,16 +31,7 @@ export class LoadClock {
     this.loads = loads;
     this.times = times;
     this.movers = loads.map((load) => load.moverAt(times));
-    this.drives = loads.map((load) => {
-      const value = new Float64Array(times.length);
-      const rate = new Float64Array(times.length);
-      times.forEach((t, j) => {
-        const drive = load.driveAt(t);
-        value[j] = drive.value;
-        rate[j] = drive.rate;
-      });
-      return { value, rate };
-    });
+    this.drives = loads.map((load) => load.drivesAt(times));
     this.driven = new Float64Array(times.length);
     this.rates = new Float64Array(times.length);
   }
@@ -58,7 +45,8 @@ export class LoadClock {
   add(mode: Mode, rate: number, factors: readonly number[], table: MotionTable): void {
     const { driven } = this;
     this.last = { mode, factors };
-    driven.fill(0);
+    const alone = this.loads.length === 1 && this.loads[0].moving === null;
+    if (!alone) driven.fill(0);
     this.loads.forEach((load, index) => {
       const factor = factors[index];
       this.movers[index].add(mode, rate, factor, table[0], table[1]);
@@ -67,8 +55,10 @@ export class LoadClock {
         return;
       }
       const { value } = this.drives[index];
-      for (let j = 0; j < value.length; j++) {
-        driven[j] += factor * value[j];
+      if (alone) {
+        for (let j = 0; j < value.length; j++) driven[j] = factor * value[j];
+      } else {
+        for (let j = 0; j < value.length; j++) driven[j] += factor * value[j];
       }
     });
   }

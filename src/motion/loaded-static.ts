@@ -1,10 +1,14 @@
 import type { WaveMember } from '../members/wave-member.ts';
 import { InertiaRelief } from '../modes/inertia-relief.ts';
 import { StaticResponse } from '../modes/static-response.ts';
+import { GAUSS_20, GAUSS_8 } from '../numerics/gauss-legendre.ts';
 import { canDriftFreely, totalMass } from '../spectrum/spectrum-size.ts';
 import type { LoadShape } from './load-shape.ts';
 import { isZero, piecePhase, pieceValue, type Piece, type PiecewiseField } from './piecewise-field.ts';
 import { gauss } from './wave-integrals.ts';
+
+/** Powers of a piece with which the eight-point rule is exact: its square times ξ² has degree 15 at most. */
+const FEW_POWERS = 7;
 
 /** Static displacement and flux (near side at a node) under a unit history. */
 export interface StaticState {
@@ -82,7 +86,15 @@ function weighed(
     const b = Math.min(to, piece.start + piece.length);
     if (b <= a) continue;
     const phase = ((piecePhase(piece) + decay * piece.length) * (b - a)) / piece.length;
-    total += gauss(b - a, phase, (xi) => weight(a + xi) * pieceValue(piece, a + xi - piece.start).value);
+    // without bedding every weight is a polynomial, at most two degrees above the piece
+    const few = decay === 0 && piece.waves.length === 0 && piece.powers.length <= FEW_POWERS;
+    const rule = few ? GAUSS_8 : GAUSS_20;
+    total += gauss(
+      b - a,
+      phase,
+      (xi) => weight(a + xi) * pieceValue(piece, a + xi - piece.start).value,
+      rule,
+    );
   }
   return total;
 }

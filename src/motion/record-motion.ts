@@ -1,35 +1,42 @@
-import type { ModalCoordinate } from './load-mover.ts';
+import { ForcedRecurrence } from '../numerics/forced-recurrence.ts';
+import { LANES, type Forcing } from '../numerics/plain-recurrence.ts';
 import { FreeMotionTable } from './free-motion-table.ts';
 import { linearStep, type LinearStep } from './linear-step.ts';
+import type { ModalCoordinate } from './load-mover.ts';
 import { RecordTimes } from './record-times.ts';
 
-/** What a record drives: on [start + i·interval, …) p = value_i + slope_i s + curve_i s²/2, kicks before it. */
-export interface RecordDrive {
+/**
+ * What a record drives: on [start + i·interval, …) p = value_i + slope_i s + curve_i s²/2; the kicks are
+ * jumps of q′ at the beginning of each interval and at the end.
+ */
+export interface RecordDrive extends Forcing {
   readonly start: number;
   readonly interval: number;
-  /** Shape [intervals]. */
-  readonly value: Float64Array;
-  readonly slope: Float64Array;
-  readonly curve: Float64Array | null;
-  /** Jump of q′ at the beginning of each interval and at the end, shape [intervals + 1]. */
-  readonly kick: Float64Array | null;
   /** p after the record, constant. */
   readonly after: number;
 }
 
-/** Modes that run through the record at once: one alone waits for its own last sum at every sample. */
-export const RECORD_LANES = 2;
+/** Modes that run through the record at once. */
+export const RECORD_LANES = LANES;
 
-/** Motion of one mode under the record at the times, per unit of its factor, and its state on the way. */
+/** Motion of one mode under the record at the times, per unit of its factor. */
 interface Lane {
   omega: number;
   rate: number;
-  /** Step to each offset, or null where they are too many to hold. */
-  steps: readonly LinearStep[] | null;
-  position: number;
-  velocity: number;
   readonly q: Float64Array;
   readonly v: Float64Array;
+}
+
+/** The records under way, each with its copy for the kernel: motions at several sets of times share it. */
+const recurrences = new WeakMap<RecordDrive, ForcedRecurrence>();
+
+function recurrenceOf(drive: RecordDrive): ForcedRecurrence {
+  let known = recurrences.get(drive);
+  if (known === undefined) {
+    known = new ForcedRecurrence(drive);
+    recurrences.set(drive, known);
+  }
+  return known;
 }
 
 /**
@@ -40,22 +47,29 @@ interface Lane {
 export class RecordMotion {
   private readonly drive: RecordDrive;
   private readonly at: RecordTimes;
+  private readonly recurrence: ForcedRecurrence;
+  /** Intervals before each time in the record, and all of them if a time comes after it. */
+  private readonly stops: Int32Array;
+  /** Whether any time lies between two samples. */
+  private readonly between: boolean;
   private readonly afterTable: FreeMotionTable;
   private readonly free: [Float64Array, Float64Array];
   private readonly lanes: readonly Lane[];
 
   /** @param times ascending */
-  constructor(drive: RecordDrive, times: Float64Array) {
+  constructor(drive: RecordDrive, times: Float64Array, recurrence = recurrenceOf(drive)) {
     this.drive = drive;
     this.at = new RecordTimes(drive, times);
-    this.afterTable = new FreeMotionTable(this.at.after);
-    this.free = [new Float64Array(this.at.after.length), new Float64Array(this.at.after.length)];
+    const { first, afterFrom, interval, offset, after } = this.at;
+    this.recurrence = recurrence;
+    this.stops = new Int32Array(afterFrom - first + (after.length > 0 ? 1 : 0)).fill(drive.value.length);
+    this.stops.set(interval.subarray(first, afterFrom));
+    this.between = offset.some((s) => s > 0);
+    this.afterTable = new FreeMotionTable(after);
+    this.free = [new Float64Array(after.length), new Float64Array(after.length)];
     this.lanes = Array.from({ length: RECORD_LANES }, () => ({
       omega: Number.NaN,
       rate: Number.NaN,
-      steps: null,
-      position: 0,
-      velocity: 0,
       q: new Float64Array(times.length),
       v: new Float64Array(times.length),
     }));
@@ -63,17 +77,30 @@ export class RecordMotion {
 
   /** Runs modes that are to be added next through the record together, at most {@link RECORD_LANES}. */
   expect(modes: readonly ModalCoordinate[]): void {
-    const { offsets } = this.at;
+    const { drive, at, recurrence, stops } = this;
+    const { steps, states } = recurrence;
     this.lanes.forEach((lane, index) => {
       const { omega, rate } = modes[index] ?? { omega: Number.NaN, rate: Number.NaN };
       lane.omega = omega;
       lane.rate = rate;
-      lane.steps = offsets && index < modes.length ? offsets.map((h) => linearStep(omega, rate, h)) : null;
-      lane.position = 0;
-      lane.velocity = this.drive.kick ? this.drive.kick[0] : 0;
+      const taken = index < modes.length;
+      setStep(steps, index, taken ? linearStep(omega, rate, drive.interval) : REST);
+      states[index] = 0;
+      states[LANES + index] = taken && drive.kick ? drive.kick[0] : 0;
     });
-    this.run(modes.length);
-    if (this.at.after.length > 0) this.lanes.slice(0, modes.length).forEach((lane) => this.runAfter(lane));
+    const tables = recurrence.run(stops);
+    for (let index = 0; index < modes.length; index++) {
+      const lane = this.lanes[index];
+      lane.q.set(tables.subarray(index * stops.length, (index + 1) * stops.length), at.first);
+      lane.v.set(
+        tables.subarray((LANES + index) * stops.length, (LANES + index + 1) * stops.length),
+        at.first,
+      );
+      // a table that had to grow moves the states
+      if (at.after.length > 0)
+        this.runAfter(lane, recurrence.states[index], recurrence.states[LANES + index]);
+      if (this.between) this.sampleBetween(lane);
+    }
   }
 
   /** Adds factor · (q, q′) of a mode to the tables. */
@@ -87,106 +114,41 @@ export class RecordMotion {
     }
   }
 
-  /** Carries the lanes from sampled time to sampled time; those not taken stay at 0 and are not looked at. */
-  private run(taken: number): void {
+  /** Carries the states on from the sample before each time that lies between two. */
+  private sampleBetween(lane: Lane): void {
     const { drive, at } = this;
-    const { value, slope, curve, kick } = drive;
-    const [one, two] = this.lanes;
-    const a = linearStep(one.omega, one.rate, drive.interval);
-    const b = taken > 1 ? linearStep(two.omega, two.rate, drive.interval) : REST;
-    const app = a.positionOfPosition;
-    const apv = a.positionOfVelocity;
-    const apl = a.positionOfLoad;
-    const apr = a.positionOfRate;
-    const avp = a.velocityOfPosition;
-    const avv = a.velocityOfVelocity;
-    const avl = a.velocityOfLoad;
-    const avr = a.velocityOfRate;
-    const bpp = b.positionOfPosition;
-    const bpv = b.positionOfVelocity;
-    const bpl = b.positionOfLoad;
-    const bpr = b.positionOfRate;
-    const bvp = b.velocityOfPosition;
-    const bvv = b.velocityOfVelocity;
-    const bvl = b.velocityOfLoad;
-    const bvr = b.velocityOfRate;
-    let { position: p1, velocity: v1 } = one;
-    let { position: p2, velocity: v2 } = two;
-    let i = 0;
-    for (let j = at.first; j <= at.afterFrom; j++) {
-      const last = j === at.afterFrom;
-      if (last && at.after.length === 0) break;
-      const to = last ? value.length : at.interval[j];
-      if (curve === null && kick === null) {
-        for (; i < to; i++) {
-          const load = value[i];
-          const climb = slope[i];
-          const q1 = app * p1 + apv * v1 + apl * load + apr * climb;
-          v1 = avp * p1 + avv * v1 + avl * load + avr * climb;
-          p1 = q1;
-          const q2 = bpp * p2 + bpv * v2 + bpl * load + bpr * climb;
-          v2 = bvp * p2 + bvv * v2 + bvl * load + bvr * climb;
-          p2 = q2;
-        }
-      } else {
-        for (; i < to; i++) {
-          const load = value[i];
-          const climb = slope[i];
-          const bend = curve === null ? 0 : curve[i];
-          const blow = kick === null ? 0 : kick[i + 1];
-          const q1 = app * p1 + apv * v1 + apl * load + apr * climb + a.positionOfCurve * bend;
-          v1 = avp * p1 + avv * v1 + avl * load + avr * climb + apr * bend + blow;
-          p1 = q1;
-          const q2 = bpp * p2 + bpv * v2 + bpl * load + bpr * climb + b.positionOfCurve * bend;
-          v2 = bvp * p2 + bvv * v2 + bvl * load + bvr * climb + bpr * bend + blow;
-          p2 = q2;
-        }
-      }
-      if (!last && at.offset[j] === 0) {
-        one.q[j] = p1;
-        one.v[j] = v1;
-        two.q[j] = p2;
-        two.v[j] = v2;
-        continue;
-      }
-      one.position = p1;
-      one.velocity = v1;
-      two.position = p2;
-      two.velocity = v2;
-      if (last) break;
-      this.sample(one, j, to);
-      if (taken > 1) this.sample(two, j, to);
+    const { omega, rate, q, v } = lane;
+    const steps = at.offsets && at.offsets.map((h) => linearStep(omega, rate, h));
+    for (let j = at.first; j < at.afterFrom; j++) {
+      if (at.offset[j] === 0) continue;
+      const step = steps === null ? linearStep(omega, rate, at.offset[j]) : steps[at.offsetIndex[j]];
+      const i = at.interval[j];
+      const position = q[j];
+      const velocity = v[j];
+      const load = drive.value[i];
+      const climb = drive.slope[i];
+      const bend = drive.curve ? drive.curve[i] : 0;
+      q[j] =
+        step.positionOfPosition * position +
+        step.positionOfVelocity * velocity +
+        step.positionOfLoad * load +
+        step.positionOfRate * climb +
+        step.positionOfCurve * bend;
+      v[j] =
+        step.velocityOfPosition * position +
+        step.velocityOfVelocity * velocity +
+        step.velocityOfLoad * load +
+        step.velocityOfRate * climb +
+        step.positionOfRate * bend;
     }
   }
 
-  /** The state at time j, its offset after the beginning of interval i. */
-  private sample(lane: Lane, j: number, i: number): void {
-    const { drive, at } = this;
-    const { position, velocity, steps } = lane;
-    const step = steps === null ? linearStep(lane.omega, lane.rate, at.offset[j]) : steps[at.offsetIndex[j]];
-    const load = drive.value[i];
-    const climb = drive.slope[i];
-    const bend = drive.curve ? drive.curve[i] : 0;
-    lane.q[j] =
-      step.positionOfPosition * position +
-      step.positionOfVelocity * velocity +
-      step.positionOfLoad * load +
-      step.positionOfRate * climb +
-      step.positionOfCurve * bend;
-    lane.v[j] =
-      step.velocityOfPosition * position +
-      step.velocityOfVelocity * velocity +
-      step.velocityOfLoad * load +
-      step.velocityOfRate * climb +
-      step.positionOfRate * bend;
-  }
-
   /** Motion after the record, from the state at its end. */
-  private runAfter(lane: Lane): void {
+  private runAfter(lane: Lane, position: number, velocity: number): void {
     const [p, w] = this.free;
     const { at } = this;
     const { after } = this.drive;
-    const { omega, rate, position, velocity, q, v } = lane;
+    const { omega, rate, q, v } = lane;
     if (after !== 0 && omega === 0) {
       at.after.forEach((h, m) => {
         const one = linearStep(omega, rate, h);
@@ -204,6 +166,19 @@ export class RecordMotion {
       v[j] = w[m];
     }
   }
+}
+
+/** The numbers of a lane's step, in the order of the recurrence. */
+function setStep(steps: Float64Array, lane: number, step: LinearStep): void {
+  [
+    step.positionOfPosition,
+    step.positionOfVelocity,
+    step.positionOfLoad,
+    step.positionOfRate,
+    step.velocityOfPosition,
+    step.velocityOfVelocity,
+    step.positionOfCurve,
+  ].forEach((number, index) => (steps[index * LANES + lane] = number));
 }
 
 /** The step of a lane without a mode. */

@@ -33,14 +33,12 @@ export function addStillFields(
       addMoving(member, load.moving, stations, times, begin, end, kind, average, field);
       continue;
     }
-    const onLoad = average
-      ? averagedDrive(load, kind, begin, end)
-      : times.map((t) => instantDrive(load, kind, t));
+    const onLoad = average ? averagedDrive(load, kind, begin, end) : instantDrive(load, kind, times);
     addOuter(field, onLoad, stillAt(load, stations, kind));
     if (load.support === null || kind === 'relativeDisplacement') continue;
     const onSupport = average
       ? averagedSupport(member, load, kind, begin, end)
-      : times.map((t) => instantSupport(member, load, kind, t));
+      : instantSupport(member, load, kind, times);
     addOuter(field, onSupport, supportAt(member, load, stations, kind));
   }
 }
@@ -72,9 +70,10 @@ function supportAt(member: WaveMember, load: AppliedLoad, stations: Stations, ki
   });
 }
 
-function instantDrive(load: AppliedLoad, kind: FieldKind, t: number): number {
-  const { value, rate } = load.driveAt(t);
-  return kind === 'velocity' ? rate : kind === 'acceleration' ? 0 : value;
+function instantDrive(load: AppliedLoad, kind: FieldKind, times: Float64Array): Float64Array {
+  if (kind === 'acceleration') return new Float64Array(times.length);
+  const { value, rate } = load.drivesAt(times);
+  return kind === 'velocity' ? rate : value;
 }
 
 function averagedDrive(
@@ -85,25 +84,32 @@ function averagedDrive(
 ): Float64Array {
   if (kind === 'acceleration') return new Float64Array(begin.length);
   if (kind === 'velocity') {
-    return begin.map((t, j) => (load.driveAt(end[j]).value - load.driveAt(t).value) / (end[j] - t));
+    const [from, to] = [load.drivesAt(begin).value, load.drivesAt(end).value];
+    return begin.map((t, j) => (to[j] - from[j]) / (end[j] - t));
   }
   const first = load.driveIntegrals(begin);
   const last = load.driveIntegrals(end);
   return begin.map((t, j) => (last[j] - first[j]) / (end[j] - t));
 }
 
-function instantSupport(member: WaveMember, load: AppliedLoad, kind: FieldKind, t: number): number {
+function instantSupport(
+  member: WaveMember,
+  load: AppliedLoad,
+  kind: FieldKind,
+  times: Float64Array,
+): Float64Array {
   const { motion } = load.support as NonNullable<AppliedLoad['support']>;
-  const state = motion.at(t);
+  const { position, velocity, acceleration } = motion.table(times);
+  const beta = member.damping.stiffnessCoefficient;
   switch (kind) {
     case 'velocity':
-      return state.velocity;
+      return velocity;
     case 'acceleration':
-      return state.acceleration;
+      return acceleration;
     case 'force':
-      return state.position + member.damping.stiffnessCoefficient * state.velocity;
+      return position.map((place, j) => place + beta * velocity[j]);
     default:
-      return state.position;
+      return position;
   }
 }
 
@@ -116,18 +122,18 @@ function averagedSupport(
 ): Float64Array {
   const { motion } = load.support as NonNullable<AppliedLoad['support']>;
   const beta = member.damping.stiffnessCoefficient;
+  const [from, to] = [motion.table(begin), motion.table(end)];
   if (kind === 'force') {
     const first = motion.integrals(begin);
     const last = motion.integrals(end);
     return begin.map((t, j) => {
-      const change = motion.at(end[j]).position - motion.at(t).position;
+      const change = to.position[j] - from.position[j];
       return (last[j] - first[j] + beta * change) / (end[j] - t);
     });
   }
   return begin.map((t, j) => {
-    const from = motion.at(t);
-    const to = motion.at(end[j]);
-    const change = kind === 'velocity' ? to.position - from.position : to.velocity - from.velocity;
+    const change =
+      kind === 'velocity' ? to.position[j] - from.position[j] : to.velocity[j] - from.velocity[j];
     return change / (end[j] - t);
   });
 }

@@ -1,4 +1,4 @@
-import { GAUSS_20, gaussLegendre, type QuadratureRule } from '../numerics/gauss-legendre.ts';
+import { GAUSS_20, GAUSS_8, type QuadratureRule } from '../numerics/gauss-legendre.ts';
 import { sinc } from '../numerics/wave-functions.ts';
 import { derivedPowers, horner, waveSlope, waveValue, type Piece, type WaveTerm } from './piecewise-field.ts';
 
@@ -6,7 +6,6 @@ import { derivedPowers, horner, waveSlope, waveValue, type Piece, type WaveTerm 
 const PANEL = 3;
 /** Phase below which 8 points are as good as 20 for a polynomial of degree up to 3. */
 const SHORT = 0.5;
-const GAUSS_8 = gaussLegendre(8);
 
 /**
  * ∫₀ʰ f y over a cell, f a piece and y a solution of y″ + κ² y = 0 given at both ends of the cell.

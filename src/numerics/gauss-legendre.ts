@@ -39,3 +39,6 @@ export function gaussLegendre(n: number): QuadratureRule {
 
 /** The 20-point rule: rounding accuracy for entire functions of phase up to about 4 a panel. */
 export const GAUSS_20 = gaussLegendre(20);
+
+/** The 8-point rule: exact for polynomials of degree up to 15. */
+export const GAUSS_8 = gaussLegendre(8);

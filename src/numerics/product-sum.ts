@@ -1,7 +1,6 @@
 import { PRODUCT_KERNEL } from './product-kernel.ts';
+import { growTo, WasmKernel, type KernelMemory } from './wasm-kernel.ts';
 
-/** Bytes of one page of the kernel's memory. */
-const PAGE = 65536;
 /** Rows and columns are handled in panels of four. */
 const PANEL = 4;
 /** Panels of rows packed at once, so that they stay in the cache and are not fetched anew for every sum. */
@@ -10,11 +9,11 @@ const PACKED_PANELS = 128;
 const FEW_ROWS = 3;
 
 interface Kernel {
-  readonly memory: { readonly buffer: ArrayBuffer; grow(pages: number): number };
+  readonly memory: KernelMemory;
   addProduct(n: number, a: number, rowPanels: number, b: number, columnPanels: number, c: number): void;
 }
 
-let module: object | null = null;
+const product = new WasmKernel<Kernel>(PRODUCT_KERNEL);
 
 /**
  * Running sum C += Aᵀ B of table products, rows × columns, in double precision by a SIMD kernel on
@@ -51,13 +50,12 @@ export class ProductSum {
       this.packedA = this.packedB = this.packedC = this.plain;
       return;
     }
-    this.kernel = instantiate();
+    this.kernel = product.instantiate();
     const sizeA = depth * PANEL * Math.min(PACKED_PANELS, this.rowPanels);
     const sizeB = depth * PANEL * this.columnPanels;
     const sizeC = PANEL * PANEL * this.rowPanels * this.columnPanels;
     const { memory } = this.kernel;
-    const pages = Math.ceil((8 * (sizeA + sizeB + sizeC)) / PAGE) - memory.buffer.byteLength / PAGE;
-    if (pages > 0) memory.grow(pages);
+    growTo(memory, 8 * (sizeA + sizeB + sizeC));
     this.packedA = new Float64Array(memory.buffer, 0, sizeA);
     this.packedB = new Float64Array(memory.buffer, 8 * sizeA, sizeB);
     this.packedC = new Float64Array(memory.buffer, 8 * (sizeA + sizeB), sizeC);
@@ -138,33 +136,4 @@ function pack(
       }
     }
   }
-}
-
-function instantiate(): Kernel {
-  const { Module, Instance } = (globalThis as unknown as { WebAssembly: WasmApi }).WebAssembly;
-  module ??= new Module(decodeBase64(PRODUCT_KERNEL.join('')));
-  return new Instance(module, {}).exports;
-}
-
-/** What is used of the WebAssembly interface, which the compiler's library for ES2023 does not declare. */
-interface WasmApi {
-  readonly Module: new (bytes: Uint8Array) => object;
-  readonly Instance: new (module: object, imports: object) => { readonly exports: Kernel };
-}
-
-function decodeBase64(text: string): Uint8Array {
-  const digits = 'ABCDEFGHIJKLMNOPQRSTUVWXYZabcdefghijklmnopqrstuvwxyz0123456789+/';
-  const bytes: number[] = [];
-  let bits = 0;
-  let held = 0;
-  for (const digit of text) {
-    if (digit === '=') break;
-    bits = ((bits << 6) | digits.indexOf(digit)) & 0xffff;
-    held += 6;
-    if (held >= 8) {
-      held -= 8;
-      bytes.push((bits >> held) & 0xff);
-    }
-  }
-  return Uint8Array.from(bytes);
 }

@@ -114,17 +114,17 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
       loads,
       wholeFlexibility,
     );
-    const values = rowsOf(sums.get(kinds[index]) as Float64Array, stations.position.length, factor);
+    const data = scaled(sums.get(kinds[index]) as Float64Array, factor);
     fields[quantity] = {
       unit: unitOf(quantity, member.kind),
-      values,
+      values: rowsOf(data, stations.position.length),
       bound: certificate.bound,
       boundKind: certificate.kind,
       ...(certificate.rms !== null && { rms: certificate.rms }),
       verdict: certificate.verdict,
     };
-    const sampled = largestWithBound(values, certificate.bound);
-    peaks[quantity] = sampledPeak(values, stations, times, peakLimit(quantity, basis, sampled));
+    const sampled = largestWithBound(data, certificate.bound);
+    peaks[quantity] = sampledPeak(data, stations, times, peakLimit(quantity, basis, sampled));
   });
 
   const total = state.energies[0] + state.rigidEnergy;
@@ -187,44 +187,52 @@ function sampledKind(quantity: Quantity): FieldKind {
   return quantity === 'stress' ? 'force' : quantity;
 }
 
-/** Rows of a table, one a time, times a factor a column. */
-function rowsOf(data: Float64Array, columns: number, factor: Float64Array | null): Float64Array[] {
-  const rows: Float64Array[] = [];
-  for (let from = 0; from < data.length; from += columns) {
-    const row = data.subarray(from, from + columns);
-    rows.push(factor ? row.map((value, q) => value * factor[q]) : row);
-  }
-  return rows;
+/** A table times a factor a column. */
+function scaled(data: Float64Array, factor: Float64Array | null): Float64Array {
+  return factor ? data.map((value, at) => value * factor[at % factor.length]) : data;
+}
+
+/** Rows of a table, one a time. */
+function rowsOf(data: Float64Array, columns: number): Float64Array[] {
+  return Array.from({ length: data.length / columns }, (_, row) =>
+    data.subarray(row * columns, (row + 1) * columns),
+  );
 }
 
 /** Largest |value| + bound of the samples; infinite without a bound. */
-function largestWithBound(values: Float64Array[], bound: Float64Array | null): number {
+function largestWithBound(data: Float64Array, bound: Float64Array | null): number {
   if (bound === null) return Number.POSITIVE_INFINITY;
   let largest = 0;
-  for (const row of values)
-    row.forEach((value, q) => (largest = Math.max(largest, Math.abs(value) + bound[q])));
+  for (let at = 0; at < data.length;) {
+    for (let q = 0; q < bound.length; q++, at++) {
+      const size = Math.abs(data[at]) + bound[q];
+      if (size > largest) largest = size;
+    }
+  }
   return largest;
 }
 
 function sampledPeak(
-  values: Float64Array[],
+  data: Float64Array,
   stations: Stations,
   times: Float64Array,
   upper: number | null,
 ): Peak {
   let value = 0;
-  let at = stations.position[0];
-  let time = times[0];
-  values.forEach((row, j) => {
-    for (let q = 0; q < row.length; q++) {
-      if (Math.abs(row[q]) > Math.abs(value)) {
-        value = row[q];
-        at = stations.position[q];
-        time = times[j];
-      }
+  let place = 0;
+  for (let at = 0; at < data.length; at++) {
+    if (Math.abs(data[at]) > Math.abs(value)) {
+      value = data[at];
+      place = at;
     }
-  });
-  return { value, at, time, upper };
+  }
+  const columns = stations.position.length;
+  return {
+    value,
+    at: stations.position[place % columns],
+    time: times[Math.floor(place / columns)],
+    upper,
+  };
 }
 
 /** A number, or null where none exists. */

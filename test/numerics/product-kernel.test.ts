@@ -1,27 +1,11 @@
-import { readFileSync, writeFileSync } from 'node:fs';
 import { expect, it } from 'vitest';
-import wabt from 'wabt';
 import { addProduct } from '../../src/numerics/dense-product.ts';
 import { ProductSum } from '../../src/numerics/product-sum.ts';
+import { kernelTexts } from './kernel-source.ts';
 
-const source = new URL('../../src/numerics/product-kernel.wat', import.meta.url);
-const generated = new URL('../../src/numerics/product-kernel.ts', import.meta.url);
-
-/** Run with WRITE_KERNEL=1 to write the generated file after a change of the source. */
 it('the committed kernel is what its source assembles to', async () => {
-  const tools = await wabt();
-  const module = tools.parseWat('product-kernel.wat', readFileSync(source, 'utf8'), { simd: true });
-  const bytes = Buffer.from(module.toBinary({}).buffer);
-  const lines = (bytes.toString('base64').match(/.{1,100}/g) ?? []).map((line) => `  '${line}',`);
-  const text = [
-    '/** product-kernel.wat assembled: do not edit, run the kernel test with WRITE_KERNEL=1. */',
-    'export const PRODUCT_KERNEL: readonly string[] = [',
-    ...lines,
-    '];',
-    '',
-  ].join('\n');
-  if (process.env['WRITE_KERNEL'] === '1') writeFileSync(generated, text);
-  expect(readFileSync(generated, 'utf8')).toBe(text);
+  const { committed, assembled } = await kernelTexts('product-kernel', 'PRODUCT_KERNEL');
+  expect(committed).toBe(assembled);
 });
 
 /** Deterministic values of mixed sign and size. */
