@@ -182,7 +182,8 @@ export function keepModes(
       energies: {
         energy: energy.energy(nextLambda),
         first: energy.first(nextLambda),
-        second: energy.second(),
+        // a rigid-body motion alone is as smooth as any: what its elastic modes show is rounding
+        second: whole.silent && Number.isFinite(energy.second()) ? 0 : energy.second(),
         nextOmega,
       },
       member: memberTail(member, flexibility, nextLambda),

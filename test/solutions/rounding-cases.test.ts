@@ -198,3 +198,27 @@ it('the compliance of a balanced load on a nearly free member rounds as the whol
   const solve = (modes: number) => solveResponses({ ...request, series: { modes } });
   expect(compareSeries(solve(35), solve(175)).violations).toEqual([]);
 });
+
+it('a rigid-body motion alone is smooth with many modes too, stiffness-proportional damping or not', () => {
+  const request: Unloaded = {
+    member: {
+      kind: 'wave',
+      segments: [
+        segment(36.34608599844699, 0.5193606315318128, 0.24652984047848636),
+        segment(6.049254357940623, 6.6004711937586436, 0.7273425677707089),
+        segment(66.79109, 47.05262363413672, 2.1725538657169525),
+      ],
+      ends: {
+        near: { type: 'attached', mass: 7725.500340837425, spring: 0, dashpot: 0 },
+        far: { type: 'attached', mass: 1304.2368132915205, spring: 0, dashpot: 0 },
+      },
+      attachments: [{ at: 42.395340356387614, mass: 16889.41100972642, spring: 0, dashpot: 0 }],
+      damping: { type: 'rayleigh', massCoefficient: 0.0005, stiffnessCoefficient: 0.17 },
+    },
+    initial: { velocity: { type: 'uniform', value: 0.001352071180414089, from: 0 } },
+    sample: { positions: [0, 24.7, 65.8], times: [0, 3, 300], quantities: [...QUANTITIES], gaugeTime: 0 },
+  };
+  expect(violations(request, 1, 400)).toEqual([]);
+  const { fields } = solveResponses({ ...request, loads: [], series: { modes: 400 }, checks: false });
+  expect(fields.acceleration!.boundKind).toBe('pointwise');
+});
