@@ -1,3 +1,4 @@
+import { criterionFaultWordings } from './criterion-faults.ts';
 import { formFaultWordings } from './form-faults.ts';
 import { loadFaultWordings } from './load-faults.ts';
 import { memberFaultWordings } from './member-faults.ts';
@@ -14,6 +15,7 @@ export const catalogue = {
   ...senseFaultWordings,
   ...memberFaultWordings,
   ...loadFaultWordings,
+  ...criterionFaultWordings,
   ...serviceFaultWordings,
   ...representationFaultWordings,
 

@@ -1,4 +1,5 @@
 import type { FaultCode } from '../faults/catalogue.ts';
+import { criterionFaultWordings } from '../faults/criterion-faults.ts';
 import { formFaultWordings } from '../faults/form-faults.ts';
 import { loadFaultWordings } from '../faults/load-faults.ts';
 import { memberFaultWordings } from '../faults/member-faults.ts';
@@ -20,6 +21,7 @@ export const statusOfFault: Readonly<Partial<Record<FaultCode, number>>> = {
   ...every(senseFaultWordings, 422),
   ...every(memberFaultWordings, 422),
   ...every(loadFaultWordings, 422),
+  ...every(criterionFaultWordings, 422),
   // Stands last in a list that was cut short, and leaves the status to the faults before it.
   'more-faults': 422,
 
