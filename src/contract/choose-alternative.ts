@@ -36,7 +36,9 @@ export function describeAlternatives(branches: readonly Schema[]): Alternative[]
  */
 export function chooseAlternative(alternatives: readonly Alternative[], value: unknown): number {
   const type = value === null ? 'null' : Array.isArray(value) ? 'array' : typeof value;
-  const fitting = alternatives.map((_, index) => index).filter((index) => alternatives[index].types.includes(type));
+  const fitting = alternatives
+    .map((_, index) => index)
+    .filter((index) => alternatives[index].types.includes(type));
   if (fitting.length === 0) return noSuchType;
   if (fitting.length === 1) return fitting[0];
 

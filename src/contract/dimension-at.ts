@@ -49,7 +49,11 @@ export function dimensionAt(name: DimensionName, context: DimensionContext, poin
     return measured === 'factor' ? plainNumber : dimensionAt(measured, context, pointer);
   }
   if (name === 'peak') {
-    return dimensionAt(nameOfQuantity[peakQuantity(context.document, pointer) ?? 'displacement'], context, '');
+    return dimensionAt(
+      nameOfQuantity[peakQuantity(context.document, pointer) ?? 'displacement'],
+      context,
+      '',
+    );
   }
   if (name === 'transfer') {
     const [output, input] = transferQuantities(context.document, pointer) ?? ['displacement', 'displacement'];

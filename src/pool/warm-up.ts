@@ -18,8 +18,8 @@ const member = {
   damping: { type: 'ratio', value: 0.01 },
 };
 
-/** A small request of every operation. */
-const requests: Readonly<Record<string, object>> = {
+/** A small request of every operation that solves one member. */
+const solves = {
   modes: {
     member,
     series: { modes: 24 },
@@ -57,6 +57,21 @@ const requests: Readonly<Record<string, object>> = {
     frequencies: { from: 20, to: 900, count: 60, spacing: 'logarithmic' },
     refine: true,
     series: { modes: 12 },
+  },
+};
+
+/** A small request of every operation. */
+const requests: Readonly<Record<string, object>> = {
+  ...solves,
+  checks: {
+    operation: 'responses',
+    request: { ...solves.responses, loads: [] },
+    criteria: [
+      { id: 'displacement', type: 'peak', quantity: 'displacement', limit: '2 mm' },
+      { id: 'force', type: 'peak', quantity: 'force', limit: '900 kN', at: '1 m' },
+      { id: 'separation', type: 'separation', bands: [['20 Hz', '25 Hz']], margin: 0.1 },
+      { id: 'damping', type: 'damping', minimum: 0.005, upTo: '900 Hz' },
+    ],
   },
 };
 

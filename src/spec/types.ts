@@ -1612,7 +1612,7 @@ export interface SampledHistory {
   name?: string;
 }
 /**
- * Every natural frequency keeps a margin from bands of excitation and their multiples; rigid-body modes are left out.
+ * Every natural frequency, and the multiples named of it, keeps a margin from bands of excitation; rigid-body modes are left out.
  */
 export interface SeparationCriterion {
   /**
@@ -1632,9 +1632,9 @@ export interface SeparationCriterion {
    */
   margin: number;
   /**
-   * Multiples of the bands that excite too, 1 to 20: 1 for forced, 2 for parametric excitation. Default: 1 alone.
+   * Multiples of the natural frequencies at which excitation acts, 1 to 20 of them: 1 for forced excitation, 2 for parametric excitation (the band at twice a natural frequency). Default: 1 alone.
    *
-   * Items: Multiple, above 0.
+   * Items: Multiple, 0.01 to 100.
    */
   multiples: number[];
 }

@@ -31,6 +31,7 @@ const highestPureRank = 7;
 export const homesOfPackage: Readonly<Record<string, readonly string[]>> = {
   ajv: ['contract'],
   'apache-arrow': ['encoding'],
+  xmlbuilder2: ['encoding'],
   'd3-array': ['figures'],
   'd3-format': ['figures'],
   'd3-scale': ['figures'],
