@@ -27,11 +27,13 @@ import { solveTransferFunctions } from './transfer-functions.ts';
  * true of the member as it is described, whatever a longer series would show.
  *
  * Faults: those of the solve, and `mode-out-of-reach` of a criterion. Pointers lead into the whole request.
+ *
+ * @param mostWork multiplications that more modes and samples may cost; by default some seconds of them
  * Cost: that of the solve; criteria on peaks and transfer functions add up to some seconds.
  */
-export function solveChecks(checks: ChecksRequest): ChecksAnswer {
+export function solveChecks(checks: ChecksRequest, mostWork?: number): ChecksAnswer {
   const { convergence, notices } = within(() => solved(checks));
-  const peaks = within(() => peaksOf(checks));
+  const peaks = within(() => peaksOf(checks, mostWork));
   const modes = new KnownModes(
     readMember(checks.request.member, checks.operation === 'transfer-functions' ? 'steady' : 'time'),
   );
@@ -63,12 +65,12 @@ function solved(checks: ChecksRequest): Pick<ChecksAnswer, 'convergence' | 'noti
 type Peaks = Map<PeakCriterion, { readonly outcome: Outcome; readonly longest: Longest }>;
 type Longest = Extract<ChecksAnswer['convergence'], { balance: unknown }>;
 
-function peaksOf(checks: ChecksRequest): Peaks {
+function peaksOf(checks: ChecksRequest, mostWork?: number): Peaks {
   if (checks.operation !== 'responses') return new Map();
   const wanted = checks.criteria.filter((one): one is PeakCriterion => one.type === 'peak');
   const { request } = checks;
   return new Map(
-    [...settlePeaks(request, wanted)].map(([criterion, finding]) => [
+    [...settlePeaks(request, wanted, mostWork)].map(([criterion, finding]) => [
       criterion,
       { outcome: peakOutcome(criterion, request, finding), longest: finding.run.answer.convergence },
     ]),

@@ -67,7 +67,7 @@ export function checkSeparation(
     bound: near.error,
     limit: margin,
     utilisation: ratio(margin, near.separation),
-    statement: `${means} All ${shownCount(known, highest)} up to ${shown(highest)} Hz were counted.`,
+    statement: `${means} ${counted(known, highest)}`,
     remedy: 'Move the bands or the margin by more than rounding.',
     modes: concerned,
     frequency: near.mode.frequency,
@@ -103,7 +103,9 @@ function capital(text: string): string {
   return text[0].toUpperCase() + text.slice(1);
 }
 
-function shownCount(known: readonly EnclosedFrequency[], highest: number): string {
+function counted(known: readonly EnclosedFrequency[], highest: number): string {
   const count = known.filter(({ frequency }) => frequency <= highest).length;
-  return `${count} natural ${count === 1 ? 'frequency' : 'frequencies'}`;
+  const up = `up to ${shown(highest)} Hz`;
+  if (count === 0) return `No natural frequency lies ${up}: they were counted.`;
+  return `${count === 1 ? 'The one natural frequency' : `All ${count} natural frequencies`} ${up} ${count === 1 ? 'was' : 'were'} counted.`;
 }

@@ -8,8 +8,8 @@ import { readPeak, requestOf, valuesOf, type PeakReading, type RunPlan } from '.
 const USUAL_LIMIT = 4096;
 /** Sampled values of one run. */
 const MOST_VALUES = 1_000_000;
-/** Multiplications that the runs of one request may cost, tuned to a few seconds. */
-const MOST_WORK = 2e9;
+/** Multiplications that the runs beyond the first may cost all together, tuned by trial to about two seconds. */
+const MOST_WORK = 1e9;
 /** Share of what is unsettled from which the modes left out are the matter, else the samples. */
 const TAIL_SHARE = 0.25;
 /** More modes must make the bound smaller than this share of it, or rounding rules. */
@@ -40,6 +40,7 @@ interface Work {
 export function settlePeaks(
   request: ResponsesRequest,
   criteria: readonly PeakCriterion[],
+  mostWork = MOST_WORK,
 ): Map<PeakCriterion, PeakFinding> {
   const groups = new Map<string, PeakCriterion[]>();
   for (const criterion of criteria) {
@@ -47,7 +48,7 @@ export function settlePeaks(
     groups.set(key, [...(groups.get(key) ?? []), criterion]);
   }
   const found = new Map<PeakCriterion, PeakFinding>();
-  const work: Work = { left: MOST_WORK };
+  const work: Work = { left: mostWork };
   for (const group of groups.values()) settleGroup(request, group, work, found);
   return found;
 }
@@ -86,7 +87,7 @@ function settleGroup(
       const earlier = runs.get(quantity);
       const reading = joined(before, fresh);
       const verdict = verdictBelow(reading.lower, reading.upper, limit);
-      const lacking = verdict === 'undetermined' ? lackOf(fresh, run, earlier, mostModes) : null;
+      const lacking = verdict === 'undetermined' ? lackOf(fresh, run, earlier) : null;
       found.set(criterion, { ...reading, verdict, modesUsed: used, mostModes, lacking, run });
       if (verdict !== 'undetermined') continue;
       open.push(criterion);
@@ -119,7 +120,6 @@ function lackOf(
   { upper, lower, bound }: PeakReading,
   run: MovedMember,
   earlier: { reading: PeakReading; modes: number } | undefined,
-  mostModes: number,
 ): NonNullable<PeakFinding['lacking']> {
   if (bound === null || upper === null) return 'limit';
   const used = run.basis.series.modes.length;
@@ -127,7 +127,7 @@ function lackOf(
   const grew = earlier !== undefined && used > earlier.modes;
   const stuck = grew && earlier.reading.bound !== null && bound > LEAST_GAIN * earlier.reading.bound;
   if (2 * bound < TAIL_SHARE * (upper - lower)) return 'samples';
-  return complete || stuck ? 'rounding' : used < mostModes ? 'modes' : 'modes';
+  return complete || stuck ? 'rounding' : 'modes';
 }
 
 /** The next run for a criterion, or null where none would help or the work would be too much. */
@@ -151,8 +151,9 @@ function nextPlan(
 }
 
 function workOf(request: ResponsesRequest, modes: number): number {
-  const perTime = request.loads.length > 0 ? 40 : 4;
-  const { times } = request.sample;
+  const { times, gaugeTime } = request.sample;
+  // a modal coordinate at an instant, in multiplications; twice more for both sides of a gauge
+  const perTime = (request.loads.length > 0 ? 40 : 20) * (gaugeTime > 0 ? 3 : 1);
   const instants = Array.isArray(times) ? times.length : times.count;
   return modes * (2 * valuesOf(request) + perTime * instants + 100 * request.member.segments.length);
 }

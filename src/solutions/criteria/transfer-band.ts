@@ -65,8 +65,8 @@ export class TransferBand {
         flux: modulus(stiffness),
       }).flux;
       const nearest = joined - soft - 0.5 * (stretch.to - stretch.from) * input.impedance;
-      if (!(nearest > 0)) return Number.POSITIVE_INFINITY;
-      base = (stretch.to * input.impedance) / nearest;
+      // the member takes power from its base, so Im K ≥ 0 and the base moves no more than the outcrop
+      if (nearest > 0) base = Math.min(1, (stretch.to * input.impedance) / nearest);
     }
     const spread = this.spread(output, stretch, { displacement: own, flux: own });
     const reach = own + (flux ? spread.flux : spread.displacement);
