@@ -34,13 +34,15 @@ export function checkCriteria(request: ChecksRequest, formFaults: readonly Fault
   const isSound = soundness(formFaults);
   if (!isSound('') || !Array.isArray(request.criteria)) return [];
   const seen = new Map<string, number>();
+  const repeated = ({ id }: Criterion, index: number, pointer: string): FaultRecord[] => {
+    const other = seen.get(id);
+    if (other === undefined) seen.set(id, index);
+    return other === undefined ? [] : [faultRecord('criterion-repeated', `${pointer}/id`, { id, other })];
+  };
   return request.criteria.flatMap((criterion, index) => {
     const pointer = `/criteria/${index}`;
-    if (!isSound(pointer)) return [];
-    const faults: FaultRecord[] = [];
-    const other = seen.get(criterion.id);
-    if (other === undefined) seen.set(criterion.id, index);
-    else faults.push(faultRecord('criterion-repeated', `${pointer}/id`, { id: criterion.id, other }));
+    const faults = isSound(`${pointer}/id`) ? repeated(criterion, index, pointer) : [];
+    if (!isSound(pointer)) return faults;
     for (const range of rangesOf(criterion)) faults.push(...checkRange(range, pointer));
     if (criterion.type === 'frequency-range' && criterion.min === undefined && criterion.max === undefined) {
       faults.push(faultRecord('criterion-without-limit', pointer));

@@ -63,13 +63,15 @@ export function negotiateFormat(
   return fitting.find((one) => mediaTypeOf[one] === type)!;
 }
 
-/** The formats that the parameters leave; where they contradict each other, those of the first. */
+/** The formats that the parameters leave; where they contradict each other, those of the first, or all. */
 function fittingFormats(
   bindings: ReturnType<typeof bindingsOf>,
   offered: readonly Format[],
 ): readonly Format[] {
   const all = offered.filter((format) => bindings.every(([, applicable]) => applicable.includes(format)));
-  return all.length > 0 ? all : bindings[0][1];
+  if (all.length > 0) return all;
+  const first = offered.filter((format) => bindings[0][1].includes(format));
+  return first.length > 0 ? first : offered;
 }
 
 /**

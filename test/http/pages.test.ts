@@ -79,7 +79,8 @@ describe('the start page', () => {
       const views = figureLinksOf(example, '/r').flatMap(({ drawings }) =>
         drawings.map(({ url }) => new URL(url, service.url).searchParams.get('view')),
       );
-      expect(viewsOf[example.operation]).toEqual(expect.arrayContaining(views));
+      const own: readonly string[] = example.operation === 'checks' ? [] : viewsOf[example.operation];
+      expect(own).toEqual(expect.arrayContaining(views));
       return views;
     });
     expect(new Set(shown)).toEqual(new Set(Object.values(viewsOf).flat()));

@@ -117,7 +117,7 @@ describe('no verdict on a transfer function is turned by a denser look', () => {
         const look = { from, to, count: 400, spacing: 'linear' as const };
         const dense = solveTransferFunctions({ ...request, frequencies: look, refine: true });
         const [{ magnitude }] = dense.outputs;
-        const most = magnitude.reduce((a, b) => Math.max(a, b), 0);
+        const most = Math.max(...magnitude);
         if (!(most > 0)) continue;
         const limit = most * random.pick([0.5, 0.98, 1.02, 1.1, 2]);
         const answer = solveChecks({
