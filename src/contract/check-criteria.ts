@@ -64,7 +64,7 @@ function rangesOf(criterion: Criterion): Range[] {
     case 'separation':
       return criterion.bands.map((one, index) => band(`bands/${index}`, one, 'Hz'));
     case 'vortex':
-      return [band('wind', criterion.wind as FrequencyBand, 'm/s')];
+      return [band('wind', criterion.wind, 'm/s')];
     case 'transfer':
       return [band('band', criterion.band, 'Hz')];
     default:

@@ -26,37 +26,29 @@ export function checkEffectiveMass(
   ends: MovingEnds,
   count: number,
 ): Outcome {
-  const inertia = movingInertia(member, ends);
-  const series = new ModeSeries(member);
-  const time = travelTime(member);
-  let fraction = 0;
-  let error = 4 * EPS;
-  let taken = 0;
-  const takeOne = (): boolean => {
-    const mode = series.next();
-    if (mode === null) return false;
-    const factor = participationFactor(member, mode.shape, ends);
-    const part = inertia > 0 ? (factor * factor) / inertia : 0;
-    const shape = shapeRounding(mode, time, member.segmentCount) + 8 * EPS;
-    fraction += part;
-    error += 2 * Math.sqrt(part) * shape + shape * shape + EPS;
-    taken++;
-    return true;
-  };
-  while (taken < count && takeOne());
-  const demand = fraction;
-  const bound = error;
-  const verdict = verdictAbove(demand - bound, demand + bound, minimum);
-  const used = taken;
-  let more = true;
-  if (verdict === 'fail')
-    while (fraction - error < minimum && taken < used + FARTHEST && more) more = takeOne();
+  let asked: Captured = { modes: 0, fraction: 0, error: 0 };
+  let last = asked;
+  let verdict = verdictAbove(0, 0, minimum);
+  let complete = true;
+  for (const captured of captureBy(member, ends)) {
+    last = captured;
+    if (captured.modes <= count) {
+      asked = captured;
+      verdict = verdictAbove(asked.fraction - asked.error, asked.fraction + asked.error, minimum);
+    }
+    const settled = verdict !== 'fail' || last.fraction - last.error >= minimum;
+    if (last.modes >= count && (settled || last.modes >= count + FARTHEST)) {
+      complete = false;
+      break;
+    }
+  }
+  const { modes: used, fraction: demand, error: bound } = asked;
   const needed =
-    fraction - error >= minimum
-      ? `${taken} modes reach it`
-      : more
-        ? `${taken} modes do not reach it either (${shown(fraction)})`
-        : `all ${taken} modes of the member do not reach it (${shown(fraction)})`;
+    last.fraction - last.error >= minimum
+      ? `${last.modes} modes reach it`
+      : complete
+        ? `all ${last.modes} modes of the member do not reach it (${shown(last.fraction)})`
+        : `${last.modes} modes do not reach it either (${shown(last.fraction)})`;
   const statement = {
     pass: `The ${used} modes of the request carry ${shown(demand)} of the inertia that moves with the ends, at least ${shown(minimum)}.`,
     fail: `The ${used} modes of the request carry ${shown(demand)} of the inertia that moves with the ends, less than ${shown(minimum)}; ${needed}.`,
@@ -71,4 +63,29 @@ export function checkEffectiveMass(
     statement,
     remedy: 'Ask for one more mode, or move the minimum by more than rounding.',
   };
+}
+
+/** The fraction that the first so many modes carry, with its error. */
+interface Captured {
+  readonly modes: number;
+  readonly fraction: number;
+  readonly error: number;
+}
+
+function* captureBy(member: WaveMember, ends: MovingEnds): Generator<Captured> {
+  const inertia = movingInertia(member, ends);
+  const series = new ModeSeries(member);
+  const time = travelTime(member);
+  let modes = 0;
+  let fraction = 0;
+  let error = 4 * EPS;
+  for (let mode = series.next(); mode !== null; mode = series.next()) {
+    const factor = participationFactor(member, mode.shape, ends);
+    const part = inertia > 0 ? (factor * factor) / inertia : 0;
+    const shape = shapeRounding(mode, time, member.segmentCount) + 8 * EPS;
+    modes++;
+    fraction += part;
+    error += 2 * Math.sqrt(part) * shape + shape * shape + EPS;
+    yield { modes, fraction, error };
+  }
 }
