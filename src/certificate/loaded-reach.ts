@@ -1,5 +1,5 @@
 import type { WaveMember } from '../members/wave-member.ts';
-import { peakDisplacement, peakFlux, peakSlope } from '../modes/shape-figures.ts';
+import { peakDisplacement, peakSlope } from '../modes/shape-figures.ts';
 import type { AppliedLoad } from '../motion/applied-loads.ts';
 import { changeWithin, historyAmount } from '../motion/history-measures.ts';
 import { dampingRate } from '../motion/modal-damping.ts';
@@ -121,8 +121,11 @@ export function reachOfMode(
   return { ...shared, position, velocity: omega * position };
 }
 
-/** Largest |φ_n(x) × coordinate of a quantity| of a mode over the member. */
-export function peakOfMode(
+/**
+ * Largest |coordinate| of a quantity of a mode: what φ_n(x), or p_n(x) for the flux, is multiplied by. Of
+ * the flux of a rigid-body mode 0.
+ */
+export function coordinateReach(
   quantity: Quantity,
   member: WaveMember,
   kept: KeptMode,
@@ -131,34 +134,33 @@ export function peakOfMode(
 ): number {
   const { mode } = kept;
   const { omega, position, velocity, push, rate, gauged, kicked } = reach;
-  const height = peakDisplacement(member, mode.shape);
   const flux = quantity === 'force' || quantity === 'stress';
   const gauge = gaugeTime > 0 ? 1 / gaugeTime : 0;
   if (omega === 0) {
     if (flux) return 0;
-    if (quantity === 'velocity') return height * velocity;
-    if (quantity !== 'acceleration') return height * position;
-    return height * (velocity * member.damping.massCoefficient + push + kicked * gauge);
+    if (quantity === 'velocity') return velocity;
+    if (quantity !== 'acceleration') return position;
+    return velocity * member.damping.massCoefficient + push + kicked * gauge;
   }
   const soft = 1 / (omega * omega);
   const damped = dampingRate(member.damping, mode.frequency.order, omega) / omega;
   switch (quantity) {
     case 'displacement':
     case 'relativeDisplacement':
-      return height * position;
+      return position;
     case 'velocity':
       return gaugeTime > 0
-        ? height * Math.min(2 * position * gauge, velocity + soft * gauged * gauge)
-        : height * (velocity + soft * rate);
+        ? Math.min(2 * position * gauge, velocity + soft * gauged * gauge)
+        : velocity + soft * rate;
     case 'acceleration': {
       const instant = omega * velocity * Math.hypot(1, damped);
-      return height * (gaugeTime > 0 ? Math.min(2 * velocity * gauge, instant + kicked * gauge) : instant);
+      return gaugeTime > 0 ? Math.min(2 * velocity * gauge, instant + kicked * gauge) : instant;
     }
     case 'force':
     case 'stress': {
       const average = kicked * gauge * soft;
       const total = Math.hypot(1, member.damping.stiffnessCoefficient * omega);
-      return peakFlux(member, mode.shape) * (position * total + average);
+      return position * total + average;
     }
   }
 }

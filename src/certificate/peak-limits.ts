@@ -7,9 +7,9 @@ import type { Quantity } from '../spec/types.ts';
 import { loadedPlace, rigidRounding, roundingFactors } from './field-bounds.ts';
 import type { KeptSeries } from './kept-modes.ts';
 import { loadRounding } from './load-rounding.ts';
-import { peakOfMode, type ModeReach } from './loaded-reach.ts';
+import { coordinateReach, type ModeReach } from './loaded-reach.ts';
 import { tailFactors } from './quantity-bounds.ts';
-import { riseBetween, type SampledGrid } from './sampled-limit.ts';
+import { freeRiseBetween, riseBetween, type SampledGrid } from './sampled-limit.ts';
 
 /** What the peak limits of all quantities need. */
 export interface PeakBasis {
@@ -29,27 +29,64 @@ export interface PeakBasis {
   readonly span: number;
 }
 
+/** Where a peak is looked for: by default anywhere on the member. */
+export interface PeakPlace {
+  /** G and H of the whole elastic motion there, m/N and kg. */
+  readonly flexibility: number;
+  readonly fluxInertia: number;
+  /** ΔG and ΔH there. */
+  readonly tailFlexibility: number;
+  readonly tailFlux: number;
+  /** Stress per force there. */
+  readonly stressFactor: number;
+  /** |φ_n| and |p_n| of the n-th kept mode there. */
+  readonly displacementOf: (n: number) => number;
+  readonly fluxOf: (n: number) => number;
+  /** Whether it is a single place, where nothing rises between stations. */
+  readonly single: boolean;
+}
+
+function anywhere({ member, series, flexibility }: PeakBasis): PeakPlace {
+  const { tail, modes } = series;
+  return {
+    flexibility,
+    fluxInertia: tail.whole.member.fluxInertia,
+    tailFlexibility: tail.member.flexibility,
+    tailFlux: tail.member.fluxInertia,
+    stressFactor: Math.max(...member.stressFactor),
+    displacementOf: (n) => peakDisplacement(member, modes[n].mode.shape),
+    fluxOf: (n) => peakFlux(member, modes[n].mode.shape),
+    single: false,
+  };
+}
+
 /**
- * An upper limit on |quantity| over the whole member and all times up to the span: the smaller of
+ * An upper limit on |quantity| over the whole member, or at one place, and all times up to the span: the smaller of
  * the ceiling known from the energies alone and the sum of the kept modes' amplitudes plus the tail
  * bound. Under loads the amplitudes are those seen at the samples and what the loads can add from one to
  * the next, and the limit of a displacement may come from the samples themselves; the times are those from
  * the first sample on. Of averages where a gauge time is given. Null where no limit exists.
  *
- * @param sampled largest |value| + bound on the sampled grid
+ * @param sampled largest |value| + bound on the sampled grid, or of the samples at the place
+ * @param place by default the whole member
  */
-export function peakLimit(quantity: Quantity, basis: PeakBasis, sampled: number): number | null {
+export function peakLimit(
+  quantity: Quantity,
+  basis: PeakBasis,
+  sampled: number,
+  place: PeakPlace = anywhere(basis),
+): number | null {
   const { member, series, gaugeTime, released, span, loads = [] } = basis;
   const { rigid } = series.tail;
   const { damping } = member;
   const flux = quantity === 'force' || quantity === 'stress';
-  const scale = quantity === 'stress' ? Math.max(...member.stressFactor) : 1;
+  const scale = quantity === 'stress' ? place.stressFactor : 1;
 
   const { whole } = series.tail;
   const all = tailFactors(quantity, whole.energies, damping, 0, gaugeTime, released, whole.loads);
   const ceiling = all.exists
-    ? product(all.onFlexibility, Math.sqrt(basis.flexibility)) +
-      product(all.onFluxInertia, Math.sqrt(whole.member.fluxInertia))
+    ? product(all.onFlexibility, Math.sqrt(place.flexibility)) +
+      product(all.onFluxInertia, Math.sqrt(place.fluxInertia))
     : Number.POSITIVE_INFINITY;
 
   const { tail } = series;
@@ -58,10 +95,10 @@ export function peakLimit(quantity: Quantity, basis: PeakBasis, sampled: number)
     series.verdict === 'complete'
       ? 0
       : rest.exists
-        ? product(rest.onFlexibility, Math.sqrt(tail.member.flexibility)) +
-          product(rest.onFluxInertia, Math.sqrt(tail.member.fluxInertia))
+        ? product(rest.onFlexibility, Math.sqrt(place.tailFlexibility)) +
+          product(rest.onFluxInertia, Math.sqrt(place.tailFlux))
         : Number.POSITIVE_INFINITY;
-  const modal = left + (loads.length > 0 ? loadedSum(quantity, basis) : freeSum(quantity, basis));
+  const modal = left + modalSum(quantity, basis, place);
   const still = stillPeak(
     member,
     loads,
@@ -93,46 +130,57 @@ export function peakLimit(quantity: Quantity, basis: PeakBasis, sampled: number)
     );
   // the modes under loads hold the rigid-body mode already
   const moving = loads.length > 0 ? Math.min(ceiling + drift, modal) : Math.min(ceiling, modal) + drift;
-  const known = Math.min((moving + still + rounding) * scale, sampledLimit(quantity, basis, sampled, left));
+  const known = Math.min(
+    (moving + still + rounding) * scale,
+    sampledLimit(quantity, basis, sampled, left, place),
+  );
   const limit = known * (1 + 1e-12);
   return Number.isFinite(limit) ? limit : null;
 }
 
-/** Amplitudes of the kept modes of free motion, added up. */
-function freeSum(quantity: Quantity, { member, series }: PeakBasis): number {
+/** Amplitudes of the kept modes, added up: those of free motion, or under loads how far they were seen to go. */
+function modalSum(quantity: Quantity, basis: PeakBasis, place: PeakPlace): number {
+  const { member, series, reaches, gaugeTime, loads = [] } = basis;
   const flux = quantity === 'force' || quantity === 'stress';
-  let sum = 0;
-  for (const { mode, start } of series.modes) {
-    const { omega, order } = mode.frequency;
-    if (omega === 0) continue;
-    const shape = flux ? peakFlux(member, mode.shape) : peakDisplacement(member, mode.shape);
-    sum += shape * modalAmplitude(quantity, omega, Math.sqrt(2 * start.energy), member, order);
-  }
-  return sum;
-}
-
-/** The same under loads, from how far the modes were seen to go. */
-function loadedSum(quantity: Quantity, { member, series, reaches, gaugeTime }: PeakBasis): number {
-  return series.modes.reduce(
-    (sum, kept, n) => sum + peakOfMode(quantity, member, kept, reaches[n], gaugeTime),
-    0,
-  );
+  return series.modes.reduce((sum, kept, n) => {
+    const { omega, order } = kept.mode.frequency;
+    const loaded = loads.length > 0;
+    if (omega === 0 && (!loaded || flux)) return sum;
+    const amplitude = loaded
+      ? coordinateReach(quantity, member, kept, reaches[n], gaugeTime)
+      : modalAmplitude(quantity, omega, Math.sqrt(2 * kept.start.energy), member, order);
+    return sum + (flux ? place.fluxOf(n) : place.displacementOf(n)) * amplitude;
+  }, 0);
 }
 
 /**
- * Limit of a displacement from its samples: the largest with its bound, what the kept modes and the supports
+ * Limit from the samples, of a displacement and in free motion of velocity, force and stress: the largest with its bound, what the kept modes and the supports
  * rise between the samples, and twice what the modes left out have, their quasi-static part included.
  */
-function sampledLimit(quantity: Quantity, basis: PeakBasis, sampled: number, left: number): number {
-  const { member, series, reaches, grid, loads = [], span } = basis;
-  if (quantity !== 'displacement' && quantity !== 'relativeDisplacement') return Number.POSITIVE_INFINITY;
+function sampledLimit(
+  quantity: Quantity,
+  basis: PeakBasis,
+  sampled: number,
+  left: number,
+  place: PeakPlace,
+): number {
+  const { member, series, reaches, grid, loads = [], span, gaugeTime } = basis;
+  const flux = quantity === 'force' || quantity === 'stress';
+  if (quantity !== 'displacement' && quantity !== 'relativeDisplacement') {
+    if (loads.length > 0) return Number.POSITIVE_INFINITY;
+    const heightAt = place.single ? (flux ? place.fluxOf : place.displacementOf) : null;
+    const rise = freeRiseBetween(quantity, member, series.modes, reaches, grid, gaugeTime, heightAt);
+    const scale = quantity === 'stress' ? place.stressFactor : 1;
+    return sampled + (rise + 2 * left) * scale;
+  }
   // a massless stretch has a quasi-static part of its own beside the modes
   if (loads.length > 0 && member.inertia.some((rho) => rho === 0)) return Number.POSITIVE_INFINITY;
   const { tail } = series;
-  const still = product(tail.loads.still, Math.sqrt(tail.member.flexibility));
-  const distance = Math.max(0.5 * grid.spacing, grid.edge);
+  const still = product(tail.loads.still, Math.sqrt(place.tailFlexibility));
+  const distance = place.single ? 0 : Math.max(0.5 * grid.spacing, grid.edge);
   const supported = quantity === 'displacement' ? supportRise(member, loads, grid.step, distance, span) : 0;
-  return sampled + riseBetween(member, series.modes, reaches, grid) + supported + 2 * (left + still);
+  const rise = riseBetween(member, series.modes, reaches, grid, place.single ? place.displacementOf : null);
+  return sampled + rise + supported + 2 * (left + still);
 }
 
 /** Largest acceleration of the rigid-body mode under the loads, m/s². */

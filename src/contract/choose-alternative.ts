@@ -2,8 +2,8 @@ import { resolveSchema, type Schema } from './schema-files.ts';
 
 /** One alternative of a `oneOf` without a discriminator. */
 export interface Alternative {
-  /** JSON type: `object`, `array`, `null`, … */
-  readonly type: string;
+  /** JSON types: `object`, `array`, `null`, … */
+  readonly types: readonly string[];
   /** Keys it needs, those that all alternatives need left out. */
   readonly required: readonly string[];
   /** Keys that not all alternatives have. */
@@ -22,7 +22,7 @@ export function describeAlternatives(branches: readonly Schema[]): Alternative[]
   const inAll = (key: string): boolean =>
     objects.every(({ properties }) => Object.hasOwn(properties ?? {}, key));
   return resolved.map(({ type, properties = {}, required = [] }) => ({
-    type: String(type),
+    types: [type ?? []].flat(),
     required: required.filter((key) => !objects.every((other) => other.required?.includes(key))),
     own: Object.keys(properties).filter((key) => !inAll(key)),
   }));
@@ -36,7 +36,9 @@ export function describeAlternatives(branches: readonly Schema[]): Alternative[]
  */
 export function chooseAlternative(alternatives: readonly Alternative[], value: unknown): number {
   const type = value === null ? 'null' : Array.isArray(value) ? 'array' : typeof value;
-  const fitting = alternatives.map((_, index) => index).filter((index) => alternatives[index].type === type);
+  const fitting = alternatives
+    .map((_, index) => index)
+    .filter((index) => alternatives[index].types.includes(type));
   if (fitting.length === 0) return noSuchType;
   if (fitting.length === 1) return fitting[0];
 

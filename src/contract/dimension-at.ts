@@ -1,5 +1,5 @@
-import type { Load, Member } from '../spec/types.ts';
-import { type Dimension, dimensions, plainNumber } from './dimensions.ts';
+import type { Load, Member, PeakCriterion, Quantity, TransferFunctionsRequest } from '../spec/types.ts';
+import { type Dimension, dimensions, plainNumber, quotient } from './dimensions.ts';
 
 /** Dimensions that depend on what the member carries: [any other member, shaft]. */
 const byKind = {
@@ -14,13 +14,17 @@ const byKind = {
 
 /**
  * Everything that `x-dimension` may say. `shape` is the dimension of the field that the shape
- * describes, `history` that of the load whose history it is.
+ * describes, `history` that of the load whose history it is, `peak` that of the quantity of a
+ * criterion, `transfer` that of an output over the input.
  */
-export type DimensionName = keyof typeof dimensions | keyof typeof byKind | 'shape' | 'history';
+export type DimensionName =
+  keyof typeof dimensions | keyof typeof byKind | 'shape' | 'history' | 'peak' | 'transfer';
 
 export function isDimensionName(name: string): name is DimensionName {
   return (
-    name === 'shape' || name === 'history' || Object.hasOwn(byKind, name) || Object.hasOwn(dimensions, name)
+    ['shape', 'history', 'peak', 'transfer'].includes(name) ||
+    Object.hasOwn(byKind, name) ||
+    Object.hasOwn(dimensions, name)
   );
 }
 
@@ -43,6 +47,17 @@ export function dimensionAt(name: DimensionName, context: DimensionContext, poin
   if (name === 'history') {
     const measured = historyField(context.document, pointer) ?? 'displacement';
     return measured === 'factor' ? plainNumber : dimensionAt(measured, context, pointer);
+  }
+  if (name === 'peak') {
+    return dimensionAt(
+      nameOfQuantity[peakQuantity(context.document, pointer) ?? 'displacement'],
+      context,
+      '',
+    );
+  }
+  if (name === 'transfer') {
+    const [output, input] = transferQuantities(context.document, pointer) ?? ['displacement', 'displacement'];
+    return quotient(dimensionAt(output, context, ''), dimensionAt(input, context, ''));
   }
   if (Object.hasOwn(byKind, name)) {
     return byKind[name as keyof typeof byKind][context.kind === 'shaft' ? 1 : 0];
@@ -82,7 +97,43 @@ function historyField(
   }
 }
 
+const nameOfQuantity = {
+  displacement: 'displacement',
+  relativeDisplacement: 'displacement',
+  velocity: 'velocity',
+  acceleration: 'acceleration',
+  force: 'flux',
+  stress: 'modulus',
+} as const satisfies Readonly<Record<Quantity, DimensionName>>;
+
+function criterionAt(document: unknown, pointer: string): { quantity?: unknown; output?: unknown } | null {
+  const index = Number(pointer.split('/')[2]);
+  return (document as { criteria?: PeakCriterion[] } | null)?.criteria?.[index] ?? null;
+}
+
+function quantityOf(value: unknown): Quantity | null {
+  return typeof value === 'string' && Object.hasOwn(nameOfQuantity, value) ? (value as Quantity) : null;
+}
+
+/** The quantity that a criterion of peaks names; null where it names none. */
+function peakQuantity(document: unknown, pointer: string): Quantity | null {
+  return quantityOf(criterionAt(document, pointer)?.quantity);
+}
+
+/** What a criterion of transfer functions divides by what; null where the request does not say it. */
+function transferQuantities(document: unknown, pointer: string): [DimensionName, DimensionName] | null {
+  const request = (document as { request?: Partial<TransferFunctionsRequest> } | null)?.request;
+  const index = Number(criterionAt(document, pointer)?.output ?? 0);
+  const output = quantityOf(request?.outputs?.[index]?.quantity);
+  const input = request?.input as { type?: unknown; quantity?: unknown } | undefined;
+  const moved = quantityOf(input?.quantity);
+  const driver = input?.type === 'point-force' ? 'flux' : moved === null ? null : nameOfQuantity[moved];
+  return output === null || driver === null ? null : [nameOfQuantity[output], driver];
+}
+
 /** Whether a dimension at this place follows from the request, the kind of its member aside. */
-export function isHistoryKnown(document: unknown, pointer: string): boolean {
-  return !/^\/loads\/\d+\/history\//.test(pointer) || historyField(document, pointer) !== null;
+export function isDimensionKnown(document: unknown, pointer: string): boolean {
+  if (/^\/loads\/\d+\/history\//.test(pointer)) return historyField(document, pointer) !== null;
+  if (!/^\/criteria\/\d+\/limit$/.test(pointer)) return true;
+  return peakQuantity(document, pointer) !== null || transferQuantities(document, pointer) !== null;
 }

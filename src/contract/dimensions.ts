@@ -71,6 +71,26 @@ export function perLength(of: Dimension, power: number): Dimension {
   return { name: `${of.name} per ${divisor}`, unit, examples, exponents };
 }
 
+/** One dimension over another; a plain number where both are the same. */
+export function quotient(of: Dimension, by: Dimension): Dimension {
+  const [top, bottom] = [of.exponents, by.exponents];
+  const exponents = {
+    m: top.m - bottom.m,
+    kg: top.kg - bottom.kg,
+    s: top.s - bottom.s,
+    rad: top.rad - bottom.rad,
+    cycle: top.cycle - bottom.cycle,
+  };
+  if (of.unit === by.unit) return plainNumber;
+  const over = (unit: string, divisor: string): string => `(${unit})/(${divisor})`;
+  return {
+    name: `${of.name} per ${by.name.replace(/^an? /, '')}`,
+    unit: over(of.unit, by.unit),
+    examples: [over(of.examples[0], by.unit)],
+    exponents,
+  };
+}
+
 /**
  * Whether a unit measures a dimension. Angles count as 1, except that a frequency is not measured
  * in rad/s, and Hz measures nothing but a frequency.

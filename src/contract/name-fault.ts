@@ -206,7 +206,11 @@ function noAlternative(pointer: string, schema: Schema, data: unknown, chosen: n
       found: found.length === 0 ? 'nothing' : found.slice(0, 10).join(', '),
     });
   }
-  const types = new Set(branches.map((branch) => typeNames[String(resolveSchema(branch).type)]));
+  const types = new Set(
+    branches
+      .map(resolveSchema)
+      .map(({ type, ...rest }) => typeNames[rest['x-dimension'] === undefined ? String(type) : 'number']),
+  );
   const about = schema.description === undefined ? '' : ` ${schema.description}`;
   return faultRecord('wrong-type', pointer, {
     key: placeName(pointer),

@@ -1,24 +1,34 @@
 import type { ErrorObject } from 'ajv/dist/2020.js';
 import { Fault, faultRecord, type FaultRecord } from '../faults/fault.ts';
-import type { Member, ModesRequest, ResponsesRequest, TransferFunctionsRequest } from '../spec/types.ts';
+import type {
+  ChecksRequest,
+  Member,
+  ModesRequest,
+  ResponsesRequest,
+  TransferFunctionsRequest,
+} from '../spec/types.ts';
+import { checkCriteria } from './check-criteria.ts';
 import { checkModesRequest, checkResponsesRequest, checkTransferFunctionsRequest } from './check-sense.ts';
 import { copyDocument } from './copy-document.ts';
-import { isHistoryKnown } from './dimension-at.ts';
+import { isDimensionKnown } from './dimension-at.ts';
 import { formsWithin } from './forms.ts';
 import { nameFault, type NamingContext } from './name-fault.ts';
 import { isWithin } from './pointer.ts';
 import { validatorOf } from './validators.ts';
 
+/** The operations that solve one member. */
+export type MemberOperation = 'modes' | 'responses' | 'transfer-functions';
+
 /** The operations that take a request. */
-export type Operation = 'modes' | 'responses' | 'transfer-functions';
+export type Operation = MemberOperation | 'checks';
 
 /** The canonical request of any operation. */
-export type AnyRequest = ModesRequest | ResponsesRequest | TransferFunctionsRequest;
+export type AnyRequest = ModesRequest | ResponsesRequest | TransferFunctionsRequest | ChecksRequest;
 
 /** Most faults that are listed at once. */
 export const mostFaults = 50;
 
-const readers = {
+const memberReaders = {
   modes: readerOf<ModesRequest>('ModesRequest', checkModesRequest),
   responses: readerOf<ResponsesRequest>('ResponsesRequest', checkResponsesRequest),
   'transfer-functions': readerOf<TransferFunctionsRequest>(
@@ -26,6 +36,8 @@ const readers = {
     checkTransferFunctionsRequest,
   ),
 };
+
+const readers = { ...memberReaders, checks: checksReader() };
 
 /**
  * The canonical request that a parsed body means: validated, in SI, defaults filled in, positions
@@ -40,6 +52,7 @@ const readers = {
 export function readRequest(operation: 'modes', body: unknown): ModesRequest;
 export function readRequest(operation: 'responses', body: unknown): ResponsesRequest;
 export function readRequest(operation: 'transfer-functions', body: unknown): TransferFunctionsRequest;
+export function readRequest(operation: 'checks', body: unknown): ChecksRequest;
 export function readRequest(operation: Operation, body: unknown): AnyRequest;
 export function readRequest(operation: Operation, body: unknown): AnyRequest {
   return readers[operation](body);
@@ -65,6 +78,49 @@ function readerOf<Request>(
   };
 }
 
+/**
+ * Reads a request of checks: first the request within, as its own operation reads it, then what is
+ * around it. Faults of the request within are told once, with pointers into the whole.
+ */
+function checksReader(): (body: unknown) => ChecksRequest {
+  const validate = validatorOf('ChecksRequest');
+  const forms = formsWithin('ChecksRequest');
+  return (body) => {
+    const { copy, faults, fatal } = copyDocument(body);
+    if (fatal) throw capped(faults);
+    const inner = readWithin(copy);
+    const kind = kindOf((copy as { request?: unknown } | null)?.request);
+    const context: NamingContext = { kind: kind ?? 'cable', document: copy, originals: new Map(), forms };
+    const around = validate.call(context, copy) ? [] : named(validate.errors ?? [], context, kind !== null);
+    const form = firstAtEachPlace([
+      ...faults.filter(({ pointer }) => inner === null || !isWithin(pointer, '/request')),
+      ...(inner ?? []),
+      ...around.filter(({ pointer }) => inner === null || !isWithin(pointer, '/request')),
+    ]);
+    const all = [...form, ...checkCriteria(copy as ChecksRequest, form)];
+    if (all.length > 0) throw capped(all);
+    return copy as ChecksRequest;
+  };
+}
+
+/**
+ * Puts the canonical request in the place of the request within.
+ *
+ * @returns the faults of that request; null where it is not known what it is a request of
+ */
+function readWithin(copy: unknown): FaultRecord[] | null {
+  const { operation, request } = (copy ?? {}) as { operation?: unknown; request?: unknown };
+  if (typeof operation !== 'string' || !Object.hasOwn(memberReaders, operation)) return null;
+  if (request === undefined) return null;
+  try {
+    (copy as { request: unknown }).request = memberReaders[operation as MemberOperation](request);
+    return [];
+  } catch (error) {
+    if (!(error instanceof Fault)) throw error;
+    return error.records.map((record) => ({ ...record, pointer: `/request${record.pointer}` }));
+  }
+}
+
 const kinds: readonly string[] = ['cable', 'bar', 'shaft', 'shear-column', 'wave'];
 
 /** Kind of the member, null where the document does not say one. */
@@ -81,7 +137,7 @@ function named(errors: readonly ErrorObject[], context: NamingContext, kindKnown
       // Without a kind the dimensions outside the member are not known.
       ({ code, pointer }) =>
         code !== 'unit-dimension' ||
-        ((kindKnown || isWithin(pointer, '/member')) && isHistoryKnown(context.document, pointer)),
+        ((kindKnown || isWithin(pointer, '/member')) && isDimensionKnown(context.document, pointer)),
     );
 }
 

@@ -1,4 +1,5 @@
 import { figureFaultWordings } from './figure-faults.ts';
+import { criterionFaultWordings } from './criterion-faults.ts';
 import { formFaultWordings } from './form-faults.ts';
 import { loadFaultWordings } from './load-faults.ts';
 import { memberFaultWordings } from './member-faults.ts';
@@ -16,6 +17,7 @@ export const catalogue = {
   ...memberFaultWordings,
   ...loadFaultWordings,
   ...figureFaultWordings,
+  ...criterionFaultWordings,
   ...serviceFaultWordings,
   ...representationFaultWordings,
 

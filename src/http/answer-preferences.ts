@@ -26,13 +26,18 @@ export function addAnswerPreferences(app: FastifyInstance): void {
 /**
  * Reads what a client wants of an answer, before anything is spent on it.
  *
+ * @param operation null where it is not known yet; then it is read again once it is
  * @throws Fault of the query, of Accept or of Accept-Encoding
  */
-export function readPreferences(request: FastifyRequest, reply: FastifyReply): void {
+export function readPreferences(
+  request: FastifyRequest,
+  reply: FastifyReply,
+  operation: Operation | null = null,
+): void {
   // Problems too depend on both headers.
   reply.header('vary', 'Accept, Accept-Encoding');
   const query = readAnswerQuery(request.query as Record<string, string | string[]>);
-  const format = negotiateFormat(request, query);
+  const format = negotiateFormat(request, query, operation);
   request.answerPreferences = { query, format, codings: negotiateCodings(request, format) };
 }
 

@@ -99,6 +99,7 @@ export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
   addSolveResource(app, '/v1/modes', 'modes', solving);
   addSolveResource(app, '/v1/responses', 'responses', solving);
   addSolveResource(app, '/v1/transfer-functions', 'transfer-functions', solving);
+  addSolveResource(app, '/v1/checks', 'checks', solving);
   addResultResource(app, solving);
   addHealthResources(app, pool);
   await app.register(async (pages) => {

@@ -1,10 +1,10 @@
 import type { FastifyRequest } from 'fastify';
 import type { Operation } from '../contract/read-request.ts';
 import type { ContentCoding } from '../encoding/compress.ts';
-import { tablesOf } from '../encoding/tables.ts';
+import { tablesOf, type TabulatedOperation } from '../encoding/tables.ts';
 import { fault, Fault, faultRecord, type FaultRecord } from '../faults/fault.ts';
 import { viewsOf } from '../figures/views.ts';
-import { formats, type AnswerForm, type Format } from '../pool/answer-form.ts';
+import { formats, formatsOf, type AnswerForm, type Format } from '../pool/answer-form.ts';
 import { acceptedCodings } from './accept-encoding.ts';
 import { figureParameters, shownText, type AnswerQuery } from './answer-query.ts';
 import { requireAcceptable } from './media.ts';
@@ -16,6 +16,7 @@ export const mediaTypeOf: Readonly<Record<Format, string>> = {
   arrow: 'application/vnd.apache.arrow.stream',
   svg: 'image/svg+xml',
   png: 'image/png',
+  xml: 'application/xml',
 };
 
 const tableFormats: readonly Format[] = ['csv', 'arrow'];
@@ -35,12 +36,19 @@ function bindingsOf(query: AnswerQuery): readonly (readonly [name: string, forma
  * The format of an answer: that of the query, else the one that the Accept header likes best among
  * those to which the other parameters of the query apply; JSON where it likes several.
  *
- * @throws Fault `parameter-without-use`, `not-acceptable`
+ * @param operation null where it is not known yet: then the formats of all are offered
+ * @throws Fault `parameter-without-use`, `parameter-value`, `not-acceptable`
  */
-export function negotiateFormat(request: FastifyRequest, query: AnswerQuery): Format {
+export function negotiateFormat(
+  request: FastifyRequest,
+  query: AnswerQuery,
+  operation: Operation | null = null,
+): Format {
   const bindings = bindingsOf(query);
   const { format } = query;
-  const fitting = format === undefined ? fittingFormats(bindings) : [format];
+  const offered: readonly Format[] = operation === null ? formats : formatsOf[operation];
+  if (format !== undefined) chosen('format', format, offered, operation ?? 'a result');
+  const fitting = format === undefined ? fittingFormats(bindings, offered) : [format];
   const faults = bindings
     .filter(([, applicable]) => !fitting.some((one) => applicable.includes(one)))
     .map(([name, applicable]) =>
@@ -55,10 +63,15 @@ export function negotiateFormat(request: FastifyRequest, query: AnswerQuery): Fo
   return fitting.find((one) => mediaTypeOf[one] === type)!;
 }
 
-/** The formats that the parameters leave; where they contradict each other, those of the first. */
-function fittingFormats(bindings: ReturnType<typeof bindingsOf>): readonly Format[] {
-  const all = formats.filter((format) => bindings.every(([, applicable]) => applicable.includes(format)));
-  return all.length > 0 ? all : bindings[0][1];
+/** The formats that the parameters leave; where they contradict each other, those of the first, or all. */
+function fittingFormats(
+  bindings: ReturnType<typeof bindingsOf>,
+  offered: readonly Format[],
+): readonly Format[] {
+  const all = offered.filter((format) => bindings.every(([, applicable]) => applicable.includes(format)));
+  if (all.length > 0) return all;
+  const first = offered.filter((format) => bindings[0][1].includes(format));
+  return first.length > 0 ? first : offered;
 }
 
 /**
@@ -86,14 +99,18 @@ export function negotiateCodings(request: FastifyRequest, format: Format): reado
 export function formOf(operation: Operation, format: Format, query: AnswerQuery): AnswerForm {
   switch (format) {
     case 'json':
+    case 'xml':
       return { format };
     case 'csv':
     case 'arrow':
-      return { format, table: chosen('table', query.table, tablesOf[operation], operation) };
+      return {
+        format,
+        table: chosen('table', query.table, tablesOf[operation as TabulatedOperation], operation),
+      };
     case 'svg':
     case 'png': {
       const { format: _format, table: _table, ...options } = query;
-      const view = chosen('view', query.view, viewsOf[operation], operation);
+      const view = chosen('view', query.view, viewsOf[operation as TabulatedOperation], operation);
       return { format, figure: { ...defaultSize, theme: 'light', ...options, view } };
     }
   }
@@ -103,7 +120,7 @@ function chosen<Name extends string>(
   parameter: string,
   name: Name | undefined,
   offered: readonly Name[],
-  operation: Operation,
+  operation: string,
 ): Name {
   if (name === undefined) return offered[0];
   if (offered.includes(name)) return name;

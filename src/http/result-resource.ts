@@ -17,12 +17,13 @@ const cacheControl = 'max-age=31536000, immutable';
 export function addResultResource(app: FastifyInstance, { answers, solveDeadline }: SolveOptions): void {
   addResource(app, {
     url: '/v1/results/:digest',
-    offers: readPreferences,
+    offers: (request, reply) => readPreferences(request, reply),
     get: async (request, reply) => {
       const limits = limitsOf(request, reply, solveDeadline);
       const { digest } = request.params as { digest: string };
       const result = await answers.find(digest);
       if (result === null) throw fault('result-not-kept', '', { digest: shownText(digest) });
+      readPreferences(request, reply, result.operation as Operation);
       const wanted = wantedAnswer(request, result.operation as Operation);
       // Pages of other origins may show the figures of a result.
       reply.header('cross-origin-resource-policy', 'cross-origin');

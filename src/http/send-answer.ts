@@ -48,6 +48,7 @@ function sendAnswer(reply: FastifyReply, format: Format, answered: Answered): Fa
     .header('content-length', byteLength)
     .header('content-location', resultPath(answered.digest))
     .header('etag', entityTag(answered.key));
+  if (answered.verdict !== undefined) reply.header('verdict', answered.verdict);
   if (answered.coding !== 'identity') reply.header('content-encoding', answered.coding);
   if (format === 'svg') reply.header('content-security-policy', drawingPolicy);
   return reply.send(inPieces(Buffer.from(buffer, byteOffset, byteLength)));

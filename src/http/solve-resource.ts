@@ -45,7 +45,7 @@ export function addSolveResource(
   addResource(app, {
     url,
     offers: (request, reply) => {
-      readPreferences(request, reply);
+      readPreferences(request, reply, operation);
       wantedAnswer(request, operation);
     },
     post: async (request, reply) => {

@@ -1,5 +1,6 @@
 import type { FaultCode } from '../faults/catalogue.ts';
 import { figureFaultWordings } from '../faults/figure-faults.ts';
+import { criterionFaultWordings } from '../faults/criterion-faults.ts';
 import { formFaultWordings } from '../faults/form-faults.ts';
 import { loadFaultWordings } from '../faults/load-faults.ts';
 import { memberFaultWordings } from '../faults/member-faults.ts';
@@ -24,6 +25,7 @@ export const statusOfFault: Readonly<Partial<Record<FaultCode, number>>> = {
   ...every(figureFaultWordings, 422),
   // No such size exists for any answer.
   'figure-size': 400,
+  ...every(criterionFaultWordings, 422),
   // Stands last in a list that was cut short, and leaves the status to the faults before it.
   'more-faults': 422,
 

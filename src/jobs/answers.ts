@@ -16,7 +16,12 @@ export interface Answered {
   readonly coding: ContentCoding;
   readonly digest: string;
   readonly key: string;
+  /** What it says in one word, where its operation judges. */
+  readonly verdict?: string;
 }
+
+/** Operations whose answers have a verdict, which is kept beside their bytes. */
+const judging: ReadonlySet<string> = new Set(['checks']);
 
 export type AnswerOutcome = Answered | Exclude<SolveOutcome, { kind: 'answer' }>;
 
@@ -65,8 +70,7 @@ export class Answers {
     wanted: WantedAnswer,
     limits: SolveLimits,
   ): Promise<AnswerOutcome> {
-    const outcome =
-      (await this.#keptAnswer(result.digest, wanted)) ?? (await this.#solve(result, wanted, limits));
+    const outcome = (await this.#keptAnswer(result, wanted)) ?? (await this.#solve(result, wanted, limits));
     if (outcome.kind === 'answered') await this.#safely(this.#store.keep(result));
     return outcome;
   }
@@ -92,7 +96,7 @@ export class Answers {
     wanted: WantedAnswer,
     limits: SolveLimits,
   ): Promise<AnswerOutcome> {
-    const kept = await this.#keptAnswer(result.digest, wanted);
+    const kept = await this.#keptAnswer(result, wanted);
     if (kept !== null) return kept;
     const key = answerKey(result.digest, wanted.form, 'identity') + wanted.codings.join();
     for (;;) {
@@ -120,15 +124,25 @@ export class Answers {
   async #keepAnswer(
     digest: string,
     { form }: WantedAnswer,
-    { bytes, coding }: { bytes: Uint8Array<ArrayBuffer>; coding: ContentCoding },
+    { bytes, coding, verdict }: { bytes: Uint8Array<ArrayBuffer>; coding: ContentCoding; verdict?: string },
   ): Promise<Answered> {
     const key = answerKey(digest, form, coding);
     await this.#safely(this.#store.keepAnswer(key, bytes));
-    return { kind: 'answered', bytes, coding, digest, key };
+    if (verdict === undefined) return { kind: 'answered', bytes, coding, digest, key };
+    await this.#safely(this.#store.keepAnswer(verdictKey(digest), new TextEncoder().encode(verdict)));
+    return { kind: 'answered', bytes, coding, digest, key, verdict };
   }
 
-  /** The bytes that a solver would give: in the first coding, or small ones without any. */
-  async #keptAnswer(digest: string, { form, codings }: WantedAnswer): Promise<Answered | null> {
+  /** The bytes that a solver would give, with their verdict: where that has gone, neither is. */
+  async #keptAnswer(result: IdentifiedRequest, wanted: WantedAnswer): Promise<Answered | null> {
+    const answered = await this.#keptForm(result.digest, wanted);
+    if (answered === null || !judging.has(result.operation)) return answered;
+    const verdict = await this.#safely(this.#store.findAnswer(verdictKey(result.digest)));
+    return verdict == null ? null : { ...answered, verdict: new TextDecoder().decode(verdict) };
+  }
+
+  /** In the first coding, or small ones without any. */
+  async #keptForm(digest: string, { form, codings }: WantedAnswer): Promise<Answered | null> {
     const first = await this.#keptBytes(digest, form, codings[0]);
     if (first !== null || !codings.includes('identity')) return first;
     const plain = await this.#keptBytes(digest, form, 'identity');
@@ -161,6 +175,11 @@ export class Answers {
       return undefined;
     }
   }
+}
+
+/** No key of an answer has a colon. */
+function verdictKey(digest: string): string {
+  return `${digest}:verdict`;
 }
 
 function timeLeft({ arrived, deadline }: SolveLimits): number {

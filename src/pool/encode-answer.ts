@@ -2,10 +2,12 @@ import { encodeArrow } from '../encoding/arrow.ts';
 import { asRead } from '../encoding/as-read.ts';
 import { compress, type ContentCoding } from '../encoding/compress.ts';
 import { encodeCsv } from '../encoding/csv.ts';
+import { encodeJunit } from '../encoding/junit.ts';
 import { encodeJson } from '../encoding/json.ts';
 import { tableOf, type TabulatedOperation } from '../encoding/tables.ts';
 import { drawFigure } from '../figures/draw-figure.ts';
 import { rasterise } from '../figures/rasterise.ts';
+import type { ChecksAnswer, ChecksRequest } from '../spec/types.ts';
 import type { AnswerForm, WantedAnswer } from './answer-form.ts';
 
 /**
@@ -34,6 +36,8 @@ function encodeForm(
   form: Exclude<AnswerForm, { format: 'json' }>,
 ): Uint8Array<ArrayBuffer> {
   switch (form.format) {
+    case 'xml':
+      return encodeJunit(request as ChecksRequest, answer as ChecksAnswer);
     case 'csv':
       return encodeCsv(tableOf(operation, request, answer, form.table));
     case 'arrow':

@@ -1,8 +1,15 @@
 import { readRequest } from '../contract/read-request.ts';
+import { solveChecks } from '../solutions/checks.ts';
 import { solveModes } from '../solutions/modes.ts';
 import { solveResponses } from '../solutions/responses.ts';
 import { solveTransferFunctions } from '../solutions/transfer-functions.ts';
-import type { ModesRequest, ResponsesRequest, TransferFunctionsRequest } from '../spec/types.ts';
+import type {
+  ChecksAnswer,
+  ChecksRequest,
+  ModesRequest,
+  ResponsesRequest,
+  TransferFunctionsRequest,
+} from '../spec/types.ts';
 import type { SolverOperations } from './task.ts';
 
 /** Every operation that a worker solves: how its body is read, how its request is solved. */
@@ -18,5 +25,10 @@ export const operations: SolverOperations = {
   'transfer-functions': {
     read: (body) => readRequest('transfer-functions', body),
     solve: (request) => solveTransferFunctions(request as TransferFunctionsRequest),
+  },
+  checks: {
+    read: (body) => readRequest('checks', body),
+    solve: (request) => solveChecks(request as ChecksRequest),
+    verdictOf: (answer) => (answer as ChecksAnswer).verdict,
   },
 };

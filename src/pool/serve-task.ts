@@ -37,17 +37,30 @@ function answerBody(operations: SolverOperations, task: Extract<SolveTask, { kin
   const identified = identifyRequest(operation, operations[operation].read(readJson(body)), version);
   // From the canonical text, as for any other request: equal requests are solved from equal objects.
   const request = parse(identified.request);
-  const encoded = encodeAnswer(operation, request, operations[operation].solve(request), wanted);
-  return { ...encoded, identified: { digest: identified.digest, request: identified.request } };
+  const answer = operations[operation].solve(request);
+  const encoded = encodeAnswer(operation, request, answer, wanted);
+  return {
+    ...encoded,
+    ...verdictIn(operations, operation, answer),
+    identified: { digest: identified.digest, request: identified.request },
+  };
 }
 
 function answerRequest(operations: SolverOperations, task: Extract<SolveTask, { kind: 'request' }>) {
   const { operation, kept, wanted } = task;
   const json = kept === undefined ? null : decompress(kept.bytes, kept.coding);
-  if (json !== null && wanted.form.format === 'json') return compress(new Uint8Array(json), wanted.codings);
+  const judges = operations[operation].verdictOf !== undefined;
+  if (json !== null && wanted.form.format === 'json' && !judges) {
+    return compress(new Uint8Array(json), wanted.codings);
+  }
   const request = parse(task.request);
   const answer = json === null ? operations[operation].solve(request) : parse(json);
-  return encodeAnswer(operation, request, answer, wanted);
+  return { ...encodeAnswer(operation, request, answer, wanted), ...verdictIn(operations, operation, answer) };
+}
+
+function verdictIn(operations: SolverOperations, operation: string, answer: unknown): { verdict?: string } {
+  const { verdictOf } = operations[operation];
+  return verdictOf === undefined ? {} : { verdict: verdictOf(answer) };
 }
 
 function parse(bytes: Uint8Array): unknown {

@@ -42,6 +42,8 @@ export interface SolvedAnswer {
   readonly coding: ContentCoding;
   /** Time of the worker, s. */
   readonly seconds: number;
+  /** What the answer says in one word, where its operation judges. */
+  readonly verdict?: string;
   /** Canonical text of the request and digest of its result, where the worker has read a body. */
   readonly identified?: { readonly digest: string; readonly request: OwnBytes };
 }
@@ -62,6 +64,8 @@ export interface SolverOperation {
   readonly read: (body: unknown) => unknown;
   /** Solves a canonical request; pure and synchronous; throws Fault. */
   readonly solve: (request: unknown) => unknown;
+  /** What an answer says in one word, for the header; of operations that judge. */
+  readonly verdictOf?: (answer: unknown) => string;
 }
 
 export type SolverOperations = Readonly<Record<string, SolverOperation>>;

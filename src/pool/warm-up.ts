@@ -18,8 +18,8 @@ const member = {
   damping: { type: 'ratio', value: 0.01 },
 };
 
-/** A small request of every operation. */
-const requests: Readonly<Record<string, object>> = {
+/** A small request of every operation that solves one member. */
+const solves = {
   modes: {
     member,
     series: { modes: 24 },
@@ -63,6 +63,21 @@ const requests: Readonly<Record<string, object>> = {
 const picture: WantedAnswer = {
   form: { format: 'png', figure: { view: 'history', width: 320, height: 240, theme: 'light' } },
   codings: ['identity'],
+};
+
+/** A small request of every operation. */
+const requests: Readonly<Record<string, object>> = {
+  ...solves,
+  checks: {
+    operation: 'responses',
+    request: { ...solves.responses, loads: [] },
+    criteria: [
+      { id: 'displacement', type: 'peak', quantity: 'displacement', limit: '2 mm' },
+      { id: 'force', type: 'peak', quantity: 'force', limit: '900 kN', at: '1 m' },
+      { id: 'separation', type: 'separation', bands: [['20 Hz', '25 Hz']], margin: 0.1 },
+      { id: 'damping', type: 'damping', minimum: 0.005, upTo: '900 Hz' },
+    ],
+  },
 };
 
 /** The body of a small request of an operation. */

@@ -15,7 +15,7 @@ import { evenPositions, placeStations, type Stations } from '../modes/stations.t
 import { stressFactors } from '../modes/stress-factors.ts';
 import { readLoads, type AppliedLoad } from '../motion/applied-loads.ts';
 import type { StartedSupport } from '../motion/initial-displacement.ts';
-import { readInitialState } from '../motion/initial-state.ts';
+import { readInitialState, type InitialState } from '../motion/initial-state.ts';
 import { stillPeak } from '../motion/still-peaks.ts';
 import type { FieldKind } from '../motion/field-kind.ts';
 import type { SampledReach } from '../motion/instant.ts';
@@ -46,6 +46,21 @@ import { noticesOf } from './response-notices.ts';
  * Cost: O(modes · (segments + stations + times)) + 2 flops a mode and sampled value.
  */
 export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
+  return moveMember(request).answer;
+}
+
+/** An answer with what it was made of, so that more can be said of the same motion. */
+export interface MovedMember {
+  readonly answer: ResponsesAnswer;
+  readonly basis: PeakBasis;
+  readonly stations: Stations;
+  /** What the kept modes leave of the flexibilities at the stations. */
+  readonly tails: TailFlexibility;
+  readonly state: InitialState;
+}
+
+/** {@link solveResponses} with what the answer was made of. */
+export function moveMember(request: ResponsesRequest): MovedMember {
   const member = readMember(request.member);
   const { quantities, gaugeTime } = request.sample;
   const stations = sampledStations(member, request);
@@ -130,7 +145,7 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
   const total = state.energies[0] + state.rigidEnergy;
   const captured = series.modes.reduce((sum, kept) => sum + kept.start.energy, 0);
   const checks = request.checks ? checkIndependently(member, series.modes, times, total, loads) : null;
-  return {
+  const answer: ResponsesAnswer = {
     coefficients: series.modes.map(({ mode, start }) => ({
       order: mode.frequency.order,
       angularFrequency: mode.frequency.omega,
@@ -167,6 +182,7 @@ export function solveResponses(request: ResponsesRequest): ResponsesAnswer {
     },
     notices: noticesOf(request, member, state, series, loads, times),
   };
+  return { answer, basis, stations, tails, state };
 }
 
 function sampledStations(member: WaveMember, request: ResponsesRequest): Stations {

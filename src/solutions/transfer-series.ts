@@ -10,7 +10,7 @@ import { steadyFactors } from '../steady/steady-member.ts';
 import { SteadyResponse, type BoundedState, type SteadyState } from '../steady/steady-response.ts';
 import { placeOf, stateUnder, type Place } from '../steady/transfer-state.ts';
 import { inputFactor, isIdle } from './transfer-input.ts';
-import { transferModes } from './transfer-modes.ts';
+import { transferModes, type TransferModes } from './transfer-modes.ts';
 import { truncatedState } from './transfer-truncated.ts';
 
 /** States of a truncated series, input scale 1 (unit force or unit end displacement). */
@@ -23,6 +23,35 @@ export interface SeriesState {
 export interface SeriesSource {
   readonly modesUsed: number;
   at(output: number, omega: number): SeriesState;
+}
+
+/** The first modes at the stations with their factors of the input, and what they leave out. */
+export function modesUnder(
+  member: WaveMember,
+  input: TransferInput,
+  stations: Stations,
+  count: number,
+): TransferModes {
+  const force = input.type === 'point-force';
+  const load = force ? placeOf(member, input.at) : { segment: 0, distance: 0 };
+  const all: Stations = {
+    position: Float64Array.from([...stations.position, 0]),
+    segment: Int32Array.from([...stations.segment, load.segment]),
+    distance: Float64Array.from([...stations.distance, load.distance]),
+  };
+  const last = stations.segment.length;
+  const source = force ? 0 : movingInertia(member, input.end);
+  return transferModes(
+    member,
+    all,
+    count,
+    (mode) => inputFactor(member, input, mode.shape),
+    (mode, factor) => isIdle(member, input, mode.shape, mode.frequency.order, factor),
+    (tails, squares, nextLambda) =>
+      force
+        ? tails.flexibilityTail(last, nextLambda)
+        : Math.max(0, source - squares) + 64 * Number.EPSILON * source,
+  );
 }
 
 /**
@@ -38,25 +67,7 @@ export function seriesSource(
   lossFactor: number,
 ): SeriesSource {
   const force = input.type === 'point-force';
-  const load = force ? placeOf(member, input.at) : { segment: 0, distance: 0 };
-  const all: Stations = {
-    position: Float64Array.from([...stations.position, 0]),
-    segment: Int32Array.from([...stations.segment, load.segment]),
-    distance: Float64Array.from([...stations.distance, load.distance]),
-  };
-  const last = stations.segment.length;
-  const source = force ? 0 : movingInertia(member, input.end);
-  const modes = transferModes(
-    member,
-    all,
-    count,
-    (mode) => inputFactor(member, input, mode.shape),
-    (mode, factor) => isIdle(member, input, mode.shape, mode.frequency.order, factor),
-    (tails, squares, nextLambda) =>
-      force
-        ? tails.flexibilityTail(last, nextLambda)
-        : Math.max(0, source - squares) + 64 * Number.EPSILON * source,
-  );
+  const modes = modesUnder(member, input, stations, count);
   const stills = Array.from(stations.segment, (segment, q) =>
     stillState(member, input, { segment, distance: stations.distance[q] }),
   );

@@ -11,6 +11,30 @@ export type Numbers = readonly number[] | Float64Array;
  */
 export type BarSegment = BarStiffnessSegment | BarMaterialSegment;
 /**
+ * pass: certainly met; fail: certainly not met; undetermined: the certificate decides neither.
+ */
+export type CheckVerdict = 'pass' | 'fail' | 'undetermined';
+/**
+ * A solve and the criteria that its answer is held to.
+ */
+export type ChecksRequest = ModesChecksRequest | ResponsesChecksRequest | TransferFunctionsChecksRequest;
+/**
+ * What is demanded of a solve.
+ */
+export type Criterion =
+  | PeakCriterion
+  | FrequencyRangeCriterion
+  | SeparationCriterion
+  | DampingCriterion
+  | VortexCriterion
+  | EffectiveMassCriterion
+  | TransferCriterion;
+/**
+ * Type of a criterion.
+ */
+export type CriterionType =
+  'peak' | 'frequency-range' | 'separation' | 'damping' | 'vortex' | 'effective-mass' | 'transfer';
+/**
  * Damping of the whole member. Absent: undamped.
  */
 export type Damping = RatioDamping | RatiosDamping | RayleighDamping | LossFactorDamping;
@@ -22,6 +46,15 @@ export type End = FixedEnd | FreeEnd | AttachedEnd;
  * At which frequencies: a number of them between two, or a list.
  */
 export type Frequencies = FrequencyGrid | number[];
+/**
+ * First and last frequency of a band, Hz, ascending.
+ *
+ * @minItems 2
+ * @maxItems 2
+ *
+ * Items: Frequency, Hz.
+ */
+export type FrequencyBand = [number, number];
 /**
  * A function of time, zero before its start, continuous from the right.
  */
@@ -89,6 +122,15 @@ export type Shapes = Shape | Shape[];
  */
 export type ShearColumnSegment = ShearStiffnessSegment | ShearModulusSegment | ShearWaveSpeedSegment;
 /**
+ * Lowest and highest speed, m/s, ascending.
+ *
+ * @minItems 2
+ * @maxItems 2
+ *
+ * Items: Speed, m/s.
+ */
+export type SpeedRange = [number, number];
+/**
  * The end that moves, or both by the same amount; a fixed end is a support.
  */
 export type SupportEnds = 'near' | 'far' | 'both';
@@ -104,6 +146,10 @@ export type TransferInput = PointForceInput | EndMotionInput | OutcropMotionInpu
  * What a transfer function gives: displacement, velocity, acceleration, force or stress (where the section is known).
  */
 export type TransferQuantity = 'displacement' | 'velocity' | 'acceleration' | 'force' | 'stress';
+/**
+ * What an undetermined criterion is in the XML report: a failure, or skipped.
+ */
+export type UndeterminedReport = 'fail' | 'skip';
 /**
  * converged: the bound meets the tolerance; mode-limit: it does not with the modes allowed; irregular-data: no pointwise bound exists for these data; rounding-limit: rounding hides the rest; complete: the member has no more modes.
  */
@@ -302,6 +348,27 @@ export interface CableSegment {
   name?: string;
 }
 /**
+ * Verdicts on criteria.
+ */
+export interface ChecksAnswer {
+  /**
+   * fail where a criterion fails, else undetermined where one is, else pass.
+   */
+  verdict: CheckVerdict;
+  /**
+   * What became of each criterion, in the order of the request.
+   */
+  criteria: CriterionResult[];
+  /**
+   * What is certain about the series, of the longest one that was solved.
+   */
+  convergence: ModesConvergence | ResponsesConvergence | TransferConvergence;
+  /**
+   * What the reader of this answer should know, cautions included.
+   */
+  notices: Notice[];
+}
+/**
  * Complex numbers, one per frequency.
  */
 export interface ComplexNumbers {
@@ -313,6 +380,82 @@ export interface ComplexNumbers {
    * Imaginary parts.
    */
   imaginary: Numbers;
+}
+/**
+ * What became of a criterion.
+ */
+export interface CriterionResult {
+  /**
+   * Name of the criterion.
+   */
+  id: string;
+  type: CriterionType;
+  verdict: CheckVerdict;
+  /**
+   * What is held against the limit, as computed, SI: peak magnitude; frequency, Hz; smallest separation, a fraction; smallest damping ratio; speed of the wind, m/s, at which the mode nearest to the range is excited; cumulative fraction; largest magnitude found. null where there is none.
+   */
+  demand: number | null;
+  /**
+   * By how much the demand can be worse than stated at most, in its unit: above it where the limit is an upper one, below it where it is a lower one; null where no bound exists.
+   */
+  bound: number | null;
+  /**
+   * The limit that governs, SI.
+   */
+  limit: number | null;
+  /**
+   * Demand over limit, or limit over demand where the limit is a lower one: above 1 it is exceeded. null where there is none.
+   */
+  utilisation: number | null;
+  /**
+   * A sentence or two that a report can print.
+   */
+  statement: string;
+  /**
+   * What would settle an undetermined criterion.
+   */
+  remedy?: string;
+  /**
+   * Orders of the modes concerned: those that vortices excite, those within a band of excitation, the one that governs.
+   */
+  modes?: number[];
+  /**
+   * Where the demand was found, m from the near end.
+   */
+  at?: number;
+  /**
+   * When the demand was found, s.
+   */
+  time?: number;
+  /**
+   * At which frequency the demand was found, Hz.
+   */
+  frequency?: number;
+  /**
+   * Fronts that are known to start in the motion, at which the force jumps at once while a gauge average does not.
+   */
+  fronts?: FrontJump[];
+}
+/**
+ * The damping ratio of every mode up to a frequency reaches a minimum; rigid-body modes are left out.
+ */
+export interface DampingCriterion {
+  /**
+   * Name of the criterion in the answer and the report, each once; 1 to 200 characters.
+   */
+  id: string;
+  /**
+   * A minimum of damping.
+   */
+  type: 'damping';
+  /**
+   * Smallest damping ratio allowed, above 0.
+   */
+  minimum: number;
+  /**
+   * Highest natural frequency that counts, Hz. Default: all modes that a request of modes asks for; other requests need it.
+   */
+  upTo?: number;
 }
 /**
  * A force per length: the profile times the history.
@@ -330,6 +473,23 @@ export interface DistributedForce {
    * A plain factor of the profile.
    */
   history: History;
+}
+/**
+ * The modes that the request asks for carry at least a fraction of the inertia that moves with the ends; of modes with participation.
+ */
+export interface EffectiveMassCriterion {
+  /**
+   * Name of the criterion in the answer and the report, each once; 1 to 200 characters.
+   */
+  id: string;
+  /**
+   * Effective mass of the modes asked for.
+   */
+  type: 'effective-mass';
+  /**
+   * Smallest cumulative fraction allowed, above 0, at most 1.
+   */
+  minimum: number;
 }
 /**
  * A prescribed motion of a fixed end: the support moves. Each end is moved by at most one load.
@@ -509,6 +669,44 @@ export interface FrequencyGrid {
    * linear: equal differences; logarithmic: equal ratios. Default linear.
    */
   spacing: 'linear' | 'logarithmic';
+}
+/**
+ * A natural frequency lies within a range, its ends included; at least one of min and max is given.
+ */
+export interface FrequencyRangeCriterion {
+  /**
+   * Name of the criterion in the answer and the report, each once; 1 to 200 characters.
+   */
+  id: string;
+  /**
+   * A natural frequency within a range.
+   */
+  type: 'frequency-range';
+  /**
+   * Number of the mode from 1, 1 to 20,000.
+   */
+  order: number;
+  /**
+   * Lowest frequency allowed, Hz.
+   */
+  min?: number;
+  /**
+   * Highest frequency allowed, Hz.
+   */
+  max?: number;
+}
+/**
+ * A sudden change of the force where a front passes.
+ */
+export interface FrontJump {
+  /**
+   * Position where the front starts, m from the near end.
+   */
+  at: number;
+  /**
+   * Jump of the force there, impedance times jump of the velocity, N (N·m for a shaft).
+   */
+  force: number;
 }
 /**
  * amplitude·sin(π·(t − start)/duration) over the duration; zero after it.
@@ -808,6 +1006,27 @@ export interface ModesByFrequency {
   upTo: number;
 }
 /**
+ * Criteria on natural modes.
+ */
+export interface ModesChecksRequest {
+  /**
+   * What is solved.
+   */
+  operation: 'modes';
+  /**
+   * What is solved, as it would be sent to the operation by itself.
+   */
+  request: ModesRequest;
+  /**
+   * What is demanded, 1 to 200 criteria.
+   */
+  criteria: Criterion[];
+  /**
+   * What an undetermined criterion is in the XML report: fail, a failure, or skip, skipped. Default fail.
+   */
+  undetermined: UndeterminedReport;
+}
+/**
  * What is certain about the spectrum.
  */
 export interface ModesConvergence {
@@ -932,6 +1151,35 @@ export interface Peak {
    * Certified upper limit of the magnitude over the member and the sampled time span; null where none exists.
    */
   upper: number | null;
+}
+/**
+ * The largest magnitude of a quantity over the sampled time span stays at or below a limit; of responses.
+ */
+export interface PeakCriterion {
+  /**
+   * Name of the criterion in the answer and the report, each once; 1 to 200 characters.
+   */
+  id: string;
+  /**
+   * A peak of the motion.
+   */
+  type: 'peak';
+  /**
+   * Which quantity; it must be among those that the request samples.
+   */
+  quantity: Quantity;
+  /**
+   * Largest magnitude allowed, in the unit of the quantity, above 0.
+   */
+  limit: number;
+  /**
+   * Where: a position or a list of them, m from the near end, whether sampled or not. Default: anywhere on the member.
+   */
+  at?: number | number[];
+  /**
+   * Length of time over which a gauge averages velocity, acceleration, force or stress, s. Default: that of the sample.
+   */
+  gaugeTime?: number;
 }
 /**
  * The peak of every sampled quantity.
@@ -1230,6 +1478,27 @@ export interface ResponsesAnswer {
   notices: Notice[];
 }
 /**
+ * Criteria on a motion.
+ */
+export interface ResponsesChecksRequest {
+  /**
+   * What is solved.
+   */
+  operation: 'responses';
+  /**
+   * What is solved, as it would be sent to the operation by itself.
+   */
+  request: ResponsesRequest;
+  /**
+   * What is demanded, 1 to 200 criteria.
+   */
+  criteria: Criterion[];
+  /**
+   * What an undetermined criterion is in the XML report: fail, a failure, or skip, skipped. Default fail.
+   */
+  undetermined: UndeterminedReport;
+}
+/**
  * What is certain about the series.
  */
 export interface ResponsesConvergence {
@@ -1341,6 +1610,33 @@ export interface SampledHistory {
    * A name of your own for this part; it changes no result.
    */
   name?: string;
+}
+/**
+ * Every natural frequency, and the multiples named of it, keeps a margin from bands of excitation; rigid-body modes are left out.
+ */
+export interface SeparationCriterion {
+  /**
+   * Name of the criterion in the answer and the report, each once; 1 to 200 characters.
+   */
+  id: string;
+  /**
+   * Natural frequencies apart from excitation.
+   */
+  type: 'separation';
+  /**
+   * Bands of excitation, 1 to 100.
+   */
+  bands: FrequencyBand[];
+  /**
+   * Distance kept, as a fraction of the edge of the band: below it edge × (1 − margin), above it edge × (1 + margin); 0 to below 1.
+   */
+  margin: number;
+  /**
+   * Multiples of the natural frequencies at which excitation acts, 1 to 20 of them: 1 for forced excitation, 2 for parametric excitation (the band at twice a natural frequency). Default: 1 alone.
+   *
+   * Items: Multiple, 0.01 to 100.
+   */
+  multiples: number[];
 }
 /**
  * As many modes as a relative tolerance on the displacement needs.
@@ -1714,6 +2010,31 @@ export interface TransferConvergence {
   largestBound: number;
 }
 /**
+ * The magnitude of a transfer function stays at or below a limit at every frequency of a band, not only at those of the request; of transfer functions.
+ */
+export interface TransferCriterion {
+  /**
+   * Name of the criterion in the answer and the report, each once; 1 to 200 characters.
+   */
+  id: string;
+  /**
+   * A transfer function below a limit.
+   */
+  type: 'transfer';
+  /**
+   * Lowest and highest frequency, Hz, ascending.
+   */
+  band: FrequencyBand;
+  /**
+   * Largest magnitude allowed, in the unit of the output per unit of the input, above 0.
+   */
+  limit: number;
+  /**
+   * Index of the output in the request, from 0. Default: all outputs, which then have one quantity.
+   */
+  output?: number;
+}
+/**
  * A quantity at a place per unit of the input.
  */
 export interface TransferFunction {
@@ -1765,6 +2086,27 @@ export interface TransferFunctionsAnswer {
    * What the reader of this answer should know, cautions included.
    */
   notices: Notice[];
+}
+/**
+ * Criteria on a steady state.
+ */
+export interface TransferFunctionsChecksRequest {
+  /**
+   * What is solved.
+   */
+  operation: 'transfer-functions';
+  /**
+   * What is solved, as it would be sent to the operation by itself.
+   */
+  request: TransferFunctionsRequest;
+  /**
+   * What is demanded, 1 to 200 criteria.
+   */
+  criteria: Criterion[];
+  /**
+   * What an undetermined criterion is in the XML report: fail, a failure, or skip, skipped. Default fail.
+   */
+  undetermined: UndeterminedReport;
 }
 /**
  * A member, what drives it and what is wanted of its steady state.
@@ -1837,6 +2179,31 @@ export interface UniformShape {
    * End of the stretch, m. Default: the far end.
    */
   to?: number;
+}
+/**
+ * No natural frequency lies where vortices are shed, f = strouhal · speed / diameter (V. Strouhal, 1878), for any speed within a range of wind.
+ */
+export interface VortexCriterion {
+  /**
+   * Name of the criterion in the answer and the report, each once; 1 to 200 characters.
+   */
+  id: string;
+  /**
+   * Vortex shedding.
+   */
+  type: 'vortex';
+  /**
+   * Width of the section across the wind, m, above 0.
+   */
+  diameter: number;
+  /**
+   * Strouhal number of the section, above 0; 0.18 is the usual value for circular cylinders (EN 1991-1-4, Annex E).
+   */
+  strouhal: number;
+  /**
+   * Lowest and highest speed of the wind, m/s, ascending.
+   */
+  wind: SpeedRange;
 }
 /**
  * Anything else that obeys inertia·u_tt = (stiffness·u_x)_x − foundation·u. Unit strings are read as for a cable (stiffness N, inertia kg/m, u in m); for another physics use plain numbers of one coherent system of units.

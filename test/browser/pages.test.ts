@@ -91,6 +91,7 @@ describe.runIf(browserIsHere)('the pages in a browser', { timeout: 300_000 }, ()
       modes: page.locator('#operations-solves-solveModes'),
       responses: page.locator('#operations-solves-solveResponses'),
       'transfer-functions': page.locator('#operations-solves-solveTransferFunctions'),
+      checks: page.locator('#operations-solves-solveChecks'),
     };
     for (const block of Object.values(blockOf)) await block.locator('.opblock-summary-control').click();
     for (const { operation, title, text } of examples) {

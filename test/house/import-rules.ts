@@ -31,6 +31,7 @@ const highestPureRank = 7;
 export const homesOfPackage: Readonly<Record<string, readonly string[]>> = {
   ajv: ['contract'],
   'apache-arrow': ['encoding'],
+  xmlbuilder2: ['encoding'],
   piscina: ['pool'],
   'lru-cache': ['jobs'],
   fastify: ['http', 'main.ts'],

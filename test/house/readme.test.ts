@@ -28,7 +28,7 @@ describe('the README', () => {
     expect(shown.modes).toHaveLength(2);
   });
 
-  it.each(['responses', 'transfer-functions'])(
+  it.each(['responses', 'transfer-functions', 'checks'])(
     'shows in four digits what its request of %s gives',
     (operation) => {
       const shown = new RegExp(

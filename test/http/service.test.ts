@@ -185,6 +185,7 @@ describe('the service as it is started', () => {
       '/health/ready',
       '/openapi.json',
       '/openapi.yaml',
+      '/v1/checks',
       '/v1/modes',
       '/v1/responses',
       '/v1/results/{digest}',

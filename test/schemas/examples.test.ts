@@ -34,7 +34,7 @@ describe('the examples', () => {
     const texts = files.map((file) => readFileSync(new URL(file, folder), 'utf8'));
     expect(texts.some((text) => /"\d[\d.]* [A-Za-z]/.test(text))).toBe(true);
     expect(texts.some((text) => !/"\d[\d.]* [A-Za-z]/.test(text))).toBe(true);
-    expect(files).toHaveLength(9);
+    expect(files).toHaveLength(11);
   });
 
   it('the record of the shaken soil column is the one that its script makes, and says that it is made up', () => {

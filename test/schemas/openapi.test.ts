@@ -11,7 +11,7 @@ import { readAnswerQuery } from '../../src/http/answer-query.ts';
 import { formOf, mediaTypeOf } from '../../src/http/negotiate-answer.ts';
 import type { Example } from '../../src/http/pages/example.ts';
 import { statusOfFault } from '../../src/http/statuses.ts';
-import { formats } from '../../src/pool/answer-form.ts';
+import { formats, formatsOf } from '../../src/pool/answer-form.ts';
 
 interface Reply {
   $ref?: string;
@@ -128,6 +128,7 @@ describe('the served document', () => {
       'post /v1/modes',
       'post /v1/responses',
       'post /v1/transfer-functions',
+      'post /v1/checks',
       'get /v1/results/{digest}',
       'get /',
       'get /docs',
@@ -217,7 +218,9 @@ describe('the served document', () => {
   it('offers every form of an answer wherever there is one', () => {
     for (const [path, , { responses }] of operations()) {
       if (!path.startsWith('/v1/')) continue;
-      expect(Object.keys(responses['200'].content!)).toEqual(formats.map((format) => mediaTypeOf[format]));
+      const operation = path.split('/').at(-1)!;
+      const offered = Object.hasOwn(formatsOf, operation) ? formatsOf[operation as Operation] : formats;
+      expect(Object.keys(responses['200'].content!)).toEqual(offered.map((format) => mediaTypeOf[format]));
       expect(Object.keys(responses['200'].headers!)).toEqual(
         expect.arrayContaining(['Content-Location', 'ETag', 'Vary']),
       );

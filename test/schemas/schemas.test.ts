@@ -36,6 +36,7 @@ const rootOf = {
   modes: 'ModesRequest',
   responses: 'ResponsesRequest',
   'transfer-functions': 'TransferFunctionsRequest',
+  checks: 'ChecksRequest',
 };
 
 /** Every schema within a schema, itself included, with the path to it. */
@@ -122,10 +123,15 @@ describe('dimensions', () => {
   it('every number of a request has one, or is one of the plain numbers listed here', () => {
     const plain = numbers.filter(({ schema }) => schema['x-dimension'] === undefined).map(({ path }) => path);
     expect(plain.toSorted()).toEqual([
+      'DampingCriterion/properties/minimum',
+      'EffectiveMassCriterion/properties/minimum',
       'LossFactorDamping/properties/value',
       'RatioDamping/properties/value',
       'RatiosDamping/properties/values/items',
+      'SeparationCriterion/properties/margin',
+      'SeparationCriterion/properties/multiples/items',
       'SeriesByRelativeTolerance/properties/relativeTolerance',
+      'VortexCriterion/properties/strouhal',
     ]);
   });
 

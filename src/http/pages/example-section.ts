@@ -1,3 +1,4 @@
+import { formatsOf, type Format } from '../../pool/answer-form.ts';
 import { exampleUrl, solveUrl, type Example } from './example.ts';
 import { figureLinksOf, type FigureLink } from './example-figures.ts';
 import { html, type Markup } from './markup.ts';
@@ -5,8 +6,15 @@ import { html, type Markup } from './markup.ts';
 /** Figures at the top are fetched at once, the rest when they come near. */
 export type Loading = 'eager' | 'lazy';
 
-/** Forms of an answer that a link can ask for. */
-const forms = ['JSON', 'CSV', 'Arrow', 'SVG', 'PNG'];
+/** What the forms of an answer are called in its links. */
+const nameOfForm: Readonly<Record<Format, string>> = {
+  json: 'JSON',
+  csv: 'CSV',
+  arrow: 'Arrow',
+  svg: 'SVG',
+  png: 'PNG',
+  xml: 'XML',
+};
 
 /**
  * One example: its figures, links to its answer, the command that solves it, its request.
@@ -22,6 +30,7 @@ export function exampleSection(
 ): Markup {
   const { name, title, text } = example;
   const [source, target] = [exampleUrl(example), solveUrl(example)];
+  const figures = figureLinksOf(example, resultUrl);
   const command = [
     `curl -s ${origin}${source} |`,
     `  curl -s ${origin}${target} -H 'content-type: application/json' -d @-`,
@@ -32,10 +41,12 @@ export function exampleSection(
         <h4 id="${name}-title">${title}</h4>
         <p class="operation"><code>POST ${target}</code></p>
       </header>
-      <div class="figures">${figureLinksOf(example, resultUrl).map((link) => figure(link, loading))}</div>
+      ${figures.length > 0 ? html`<div class="figures">${figures.map((link) => figure(link, loading))}</div>` : ''}
       <p class="forms">
         The answer:
-        ${forms.map((form) => html`<a href="${resultUrl}?format=${form.toLowerCase()}">${form}</a> `)}
+        ${formatsOf[example.operation].map(
+          (form) => html`<a href="${resultUrl}?format=${form}">${nameOfForm[form]}</a> `,
+        )}
       </p>
       <p class="label" id="${name}-command">Solve it from a shell</p>
       <pre tabindex="0" role="region" aria-labelledby="${name}-command"><code>${command}</code></pre>

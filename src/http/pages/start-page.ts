@@ -38,6 +38,7 @@ const headingOfOperation: Readonly<Record<Operation, string>> = {
   modes: 'Natural modes',
   responses: 'Motion',
   'transfer-functions': 'Steady state over frequency',
+  checks: 'Checks',
 };
 
 /** Examples whose figures are fetched at once. */
