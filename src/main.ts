@@ -5,6 +5,7 @@ import { pino } from 'pino';
 import { readRequest } from './contract/read-request.ts';
 import { buildApp } from './http/app.ts';
 import type { Example } from './http/pages/example.ts';
+import { EmbeddedJobs } from './jobs/embedded-jobs.ts';
 import { EmbeddedResults } from './jobs/embedded-results.ts';
 import { SolverPool } from './pool/solver-pool.ts';
 import { readSettings, type Settings } from './settings.ts';
@@ -30,6 +31,17 @@ const app = await buildApp({
     requestBytes: settings.RESULTS_MEMORY * mebibyte,
     answerBytes: settings.ANSWERS_MEMORY * mebibyte,
   }),
+  batchLimit: settings.BATCH_LIMIT,
+  makeJobs: (solver, onError) =>
+    new EmbeddedJobs({
+      bounds: {
+        count: settings.JOBS_COUNT,
+        bytes: settings.JOBS_MEMORY * mebibyte,
+        age: settings.JOBS_AGE,
+      },
+      solver,
+      onError,
+    }),
   version: (JSON.parse(document.json) as { info: { version: string } }).info.version,
   readRequest,
   solveDeadline: settings.SOLVE_DEADLINE,

@@ -1,5 +1,6 @@
 import { figureFaultWordings } from './figure-faults.ts';
 import { formFaultWordings } from './form-faults.ts';
+import { jobFaultWordings } from './job-faults.ts';
 import { loadFaultWordings } from './load-faults.ts';
 import { memberFaultWordings } from './member-faults.ts';
 import { representationFaultWordings } from './representation-faults.ts';
@@ -18,6 +19,7 @@ export const catalogue = {
   ...figureFaultWordings,
   ...serviceFaultWordings,
   ...representationFaultWordings,
+  ...jobFaultWordings,
 
   'pull-without-restraint': {
     title: 'A pull needs a restraint',

@@ -19,10 +19,16 @@ import { addHealthResources } from './health-resources.ts';
 import { addProblemReplies, pathOf, sendProblem } from './problem-replies.ts';
 import { requestId } from './request-id.ts';
 import { Answers } from '../jobs/answers.ts';
+import type { JobEngine } from '../jobs/job.ts';
+import { JobSolver } from '../jobs/job-solver.ts';
+import { LineSolver } from '../jobs/line-solver.ts';
 import type { ResultStore } from '../jobs/result-store.ts';
 import { addAnswerPreferences } from './answer-preferences.ts';
+import { addBatchResource } from './batch-resource.ts';
+import { addJobResources } from './job-resources.ts';
 import { addPageResources, type PageOptions } from './page-resources.ts';
 import { pinRequests } from './pinned-results.ts';
+import { problemOf } from './problem.ts';
 import { addReferencePage, isPagePart } from './reference-page.ts';
 import { knowAllMethods, templateOf } from './resource.ts';
 import { addResultResource } from './result-resource.ts';
@@ -32,10 +38,14 @@ import { addSolveResource, type SolveOptions } from './solve-resource.ts';
 /** Time that a request may take to arrive, s. */
 const requestTimeout = 60;
 
-export interface AppOptions extends Omit<SolveOptions, 'answers'>, Omit<PageOptions, 'resultUrls'> {
+export interface AppOptions extends Omit<SolveOptions, 'answers' | 'jobs'>, Omit<PageOptions, 'resultUrls'> {
   readonly pool: SolverPool;
   /** Where results are kept under their digests. */
   readonly results: ResultStore;
+  /** Batches that may be answered at the same time. */
+  readonly batchLimit: number;
+  /** Where jobs wait and run. */
+  readonly makeJobs: (solver: JobSolver, onError: (error: unknown) => void) => JobEngine;
   /** Seconds that work under way may take once the service is being stopped. */
   readonly stopGrace: number;
   readonly logger?: FastifyBaseLogger;
@@ -48,11 +58,12 @@ export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
     ...(logger === undefined ? {} : { loggerInstance: logger }),
     logController: new LogController({ disableRequestLogging: true }),
     genReqId: requestId,
-    requestTimeout: requestTimeout * 1000,
+    // A batch may take longer, so bodies have their own time (body.ts, line-source.ts).
+    requestTimeout: 0,
+    // Without a Host header Node itself would answer, and without a problem document.
+    http: { requireHostHeader: false, headersTimeout: requestTimeout * 1000 },
     // A request that meets a stopping service gets a problem document from the pool instead.
     return503OnClosing: false,
-    // Node itself would answer without a problem document.
-    http: { requireHostHeader: false },
     clientErrorHandler: clientErrorHandler(requestTimeout),
     frameworkErrors: (error, request, reply) => {
       const reason = error.code === 'FST_ERR_BAD_URL' ? 'the path is not percent-encoded' : error.message;
@@ -63,7 +74,12 @@ export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
   app.removeAllContentTypeParsers();
   app.addContentTypeParser('application/json', async (request: FastifyRequest, payload: IncomingMessage) => {
     const announced = request.headers['content-length'];
-    return readBody(payload, announced === undefined ? undefined : Number(announced), bodyLimit);
+    return readBody(
+      payload,
+      announced === undefined ? undefined : Number(announced),
+      bodyLimit,
+      requestTimeout,
+    );
   });
   await app.register(accepts);
   await app.register(helmet, {
@@ -94,12 +110,25 @@ export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
     longest: options.solveDeadline,
     onStoreError: (error) => app.log.error({ err: error }, 'result store failed'),
   });
-  const solving = { ...options, answers };
+  const lineSolver = new LineSolver({
+    pool,
+    deadline: options.solveDeadline,
+    lineLimit: bodyLimit,
+    problemOf,
+    onFailure: (cause, line) => app.log.error({ operation: 'batches', line, cause }, 'solver failed'),
+  });
+  const jobs = options.makeJobs(new JobSolver(answers, lineSolver, options.solveDeadline), (error) =>
+    app.log.error({ err: error }, 'jobs failed'),
+  );
+  addJobs(app, jobs);
+  const solving = { ...options, answers, jobs, lineSolver };
   addAnswerPreferences(app);
   addSolveResource(app, '/v1/modes', 'modes', solving);
   addSolveResource(app, '/v1/responses', 'responses', solving);
   addSolveResource(app, '/v1/transfer-functions', 'transfer-functions', solving);
   addResultResource(app, solving);
+  addBatchResource(app, solving);
+  addJobResources(app, solving);
   addHealthResources(app, pool);
   await app.register(async (pages) => {
     await addCompression(pages);
@@ -139,6 +168,12 @@ function addRequestLog(app: FastifyInstance): void {
       'request answered',
     );
   });
+}
+
+/** Jobs begin with the service, and stop taking work up before it ends. */
+function addJobs(app: FastifyInstance, jobs: JobEngine): void {
+  app.addHook('onReady', async () => jobs.start());
+  app.addHook('onClose', async () => jobs.stop());
 }
 
 /**

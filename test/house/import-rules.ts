@@ -33,6 +33,8 @@ export const homesOfPackage: Readonly<Record<string, readonly string[]>> = {
   'apache-arrow': ['encoding'],
   piscina: ['pool'],
   'lru-cache': ['jobs'],
+  bullmq: ['jobs'],
+  ioredis: ['jobs'],
   fastify: ['http', 'main.ts'],
   '@fastify/accepts': ['http'],
   '@fastify/compress': ['http'],
