@@ -19,6 +19,7 @@ import { addHealthResources } from './health-resources.ts';
 import { addProblemReplies, pathOf, sendProblem } from './problem-replies.ts';
 import { requestId } from './request-id.ts';
 import { Answers } from '../jobs/answers.ts';
+import { damped } from '../jobs/damped.ts';
 import type { JobEngine } from '../jobs/job.ts';
 import { JobSolver } from '../jobs/job-solver.ts';
 import { LineSolver } from '../jobs/line-solver.ts';
@@ -97,7 +98,6 @@ export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
   });
   addRequestLog(app);
   addProblemReplies(app, pool, () => [...paths]);
-  addGracefulStop(app, options);
   const digests = await pinRequests(
     options.results,
     examples.map(({ operation, text }) => ({ operation, body: JSON.parse(text) as unknown })),
@@ -108,7 +108,7 @@ export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
     store: options.results,
     version: options.version,
     longest: options.solveDeadline,
-    onStoreError: (error) => app.log.error({ err: error }, 'result store failed'),
+    onStoreError: damped((error) => app.log.error({ err: error }, 'result store failed')),
   });
   const lineSolver = new LineSolver({
     pool,
@@ -117,10 +117,12 @@ export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
     problemOf,
     onFailure: (cause, line) => app.log.error({ operation: 'batches', line, cause }, 'solver failed'),
   });
-  const jobs = options.makeJobs(new JobSolver(answers, lineSolver, options.solveDeadline), (error) =>
-    app.log.error({ err: error }, 'jobs failed'),
+  const jobs = options.makeJobs(
+    new JobSolver(answers, lineSolver, options.solveDeadline),
+    damped((error) => app.log.error({ err: error }, 'jobs failed')),
   );
-  addJobs(app, jobs);
+  app.addHook('onReady', async () => jobs.start());
+  addGracefulStop(app, options, jobs);
   const solving = { ...options, answers, jobs, lineSolver };
   addAnswerPreferences(app);
   addSolveResource(app, '/v1/modes', 'modes', solving);
@@ -170,20 +172,14 @@ function addRequestLog(app: FastifyInstance): void {
   });
 }
 
-/** Jobs begin with the service, and stop taking work up before it ends. */
-function addJobs(app: FastifyInstance, jobs: JobEngine): void {
-  app.addHook('onReady', async () => jobs.start());
-  app.addHook('onClose', async () => jobs.stop());
-}
-
 /**
  * Closing first stops the pool (work under way finishes or is refused), then the server. Answers
  * given meanwhile end their connections: an idle kept-alive one would hold the server open for its
  * whole time-out.
  */
-function addGracefulStop(app: FastifyInstance, { pool, stopGrace }: AppOptions): void {
+function addGracefulStop(app: FastifyInstance, { pool, stopGrace }: AppOptions, jobs: JobEngine): void {
   app.addHook('preClose', async () => {
-    await pool.stop(stopGrace);
+    await Promise.all([jobs.stop(), pool.stop(stopGrace)]);
   });
   app.addHook('onSend', async (_request, reply) => {
     if (pool.isStopping) reply.header('connection', 'close');

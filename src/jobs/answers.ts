@@ -59,6 +59,11 @@ export class Answers {
     return this.#store.find(digest);
   }
 
+  /** Makes sure that a request is kept; throws where the store fails. */
+  keep(result: IdentifiedRequest): Promise<void> {
+    return this.#store.keep(result);
+  }
+
   /** Answers a request that was read, and keeps it. */
   async toRequest(
     result: IdentifiedRequest,

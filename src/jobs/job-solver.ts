@@ -24,8 +24,8 @@ export class JobSolver {
     return this.#lines.lineLimit;
   }
 
-  /** The request of a result. */
-  get results(): Pick<Answers, 'find'> {
+  /** The requests of results. */
+  get results(): Pick<Answers, 'find' | 'keep'> {
     return this.#answers;
   }
 
