@@ -30,7 +30,8 @@ const sweepPeriod = 5000;
 
 /** Puts the chunks of jobs into the queue that the instances share. */
 export class ChunkQueue {
-  readonly #queue: Queue<ChunkTask>;
+  readonly #client: Redis;
+  #opened: Queue<ChunkTask> | null = null;
   readonly #store: SharedJobStore;
   readonly #onError: (error: unknown) => void;
   #timer: NodeJS.Timeout | undefined;
@@ -38,13 +39,7 @@ export class ChunkQueue {
   constructor(client: Redis, store: SharedJobStore, onError: (error: unknown) => void) {
     this.#store = store;
     this.#onError = onError;
-    this.#queue = new Queue(queueName, {
-      connection: client,
-      prefix: queuePrefix,
-      // Else an addition would wait for ever for a server that is away.
-      skipWaitingForReady: true,
-    });
-    this.#queue.on('error', onError);
+    this.#client = client;
   }
 
   /** From now on, jobs that another instance has taken and not queued are queued too. */
@@ -57,7 +52,7 @@ export class ChunkQueue {
 
   async stop(): Promise<void> {
     clearInterval(this.#timer);
-    await this.#queue.close().catch(this.#onError);
+    await this.#opened?.close().catch(this.#onError);
   }
 
   /**
@@ -69,11 +64,27 @@ export class ChunkQueue {
     const count = job?.chunks ?? 0;
     for (let first = 0; first < count; first += addedAtOnce) {
       const chunks = Array.from({ length: Math.min(addedAtOnce, count - first) }, (_, i) => first + i);
-      await fromShared(() =>
-        this.#queue.addBulk(chunks.map((chunk) => queued(id, chunk, job!.kind === 'solve'))),
-      );
+      const queue = await fromShared(() => this.#open());
+      await fromShared(() => queue.addBulk(chunks.map((chunk) => queued(id, chunk, job!.kind === 'solve'))));
     }
     await this.#store.markQueued(id);
+  }
+
+  /**
+   * The queue, opened when the server is first there: one that was opened without it stays unusable,
+   * because the library asks the server for its version only once.
+   */
+  async #open(): Promise<Queue<ChunkTask>> {
+    if (this.#opened !== null) return this.#opened;
+    const queue = new Queue<ChunkTask>(queueName, {
+      connection: this.#client,
+      prefix: queuePrefix,
+      // Else an addition would wait for ever for a server that is away.
+      skipWaitingForReady: true,
+    });
+    queue.on('error', this.#onError);
+    await queue.waitUntilReady();
+    return (this.#opened ??= queue);
   }
 
   async #sweep(): Promise<void> {
