@@ -1,7 +1,4 @@
-/**
- * Work that is done several pieces at a time and handed on in order, begun only as fast as it is
- * taken: pieces under way and those that are done but not taken are bounded together.
- */
+/** How much of some work may be under way, or done and not taken. */
 export interface WindowBounds<Result> {
   /** Most pieces that are under way or wait to be taken, ≥ 1. */
   readonly pieces: number;
@@ -10,67 +7,105 @@ export interface WindowBounds<Result> {
   readonly sizeOf: (result: Result) => number;
 }
 
+/** Begins the next piece of work when the window has room; null where there is no more. It may take its time. */
+export type BeginWork<Result> = () => Promise<{ readonly work: Promise<Result> } | null>;
+
 /**
- * The results of work in the order in which it was begun.
- *
- * @param begin begins the next piece of work when the window has room: null where there is no more; it
- *   may take its time, what is under way is handed on meanwhile
+ * The results of work that is done several pieces at a time, in the order in which it was begun, begun
+ * only as fast as they are taken: pieces under way and those that are done but not taken are bounded
+ * together. What is under way is handed on while the next piece cannot begin.
  */
 export async function* orderedWindow<Result>(
-  begin: () => Promise<{ readonly work: Promise<Result> } | null>,
-  { pieces, bytes, sizeOf }: WindowBounds<Result>,
+  begin: BeginWork<Result>,
+  bounds: WindowBounds<Result>,
 ): AsyncGenerator<Result> {
-  const window: Promise<Result>[] = [];
-  let waitingBytes = 0;
-  let wake: () => void = () => undefined;
-  let ended = false;
-  let closed = false;
-  const changed = (): Promise<void> => new Promise((resolve) => (wake = resolve));
-  let feedChanged: () => void = () => undefined;
-
-  const isOpen = (): boolean => window.length < pieces && (waitingBytes < bytes || window.length === 0);
-
-  async function feed(): Promise<void> {
-    try {
-      for (;;) {
-        while (!isOpen() && !closed) await new Promise<void>((resolve) => (feedChanged = resolve));
-        if (closed) return;
-        const begun = await begin();
-        if (begun === null) return;
-        const counted = begun.work.then((result) => {
-          waitingBytes += sizeOf(result);
-          return result;
-        });
-        // Who takes it sees the error; until then it is nobody's.
-        counted.catch(() => undefined);
-        window.push(counted);
-        wake();
-      }
-    } finally {
-      ended = true;
-      wake();
-    }
-  }
-
-  const feeding = feed();
+  const window = new Window(bounds);
+  const feeding = feed(begin, window);
+  // Told when all that was begun before has been taken.
   feeding.catch(() => undefined);
   try {
     for (;;) {
-      if (window.length === 0) {
-        if (ended) break;
-        await changed();
-        continue;
-      }
-      const result = await window[0];
-      window.shift();
-      // It counts until the next one is asked for: its reader may still hold it.
-      yield result;
-      waitingBytes -= sizeOf(result);
-      feedChanged();
+      const first = window.first;
+      if (first !== undefined) {
+        yield await first;
+        // It counts until the next one is asked for: its reader may still hold it.
+        window.drop(await first);
+      } else if (window.ended) break;
+      else await window.change();
     }
     await feeding;
   } finally {
-    closed = true;
-    feedChanged();
+    window.close();
+  }
+}
+
+async function feed<Result>(begin: BeginWork<Result>, window: Window<Result>): Promise<void> {
+  try {
+    for (;;) {
+      while (window.isFull) await window.change();
+      if (window.ended) return;
+      const begun = await begin();
+      if (begun === null) return;
+      window.add(begun.work);
+    }
+  } finally {
+    window.close();
+  }
+}
+
+class Window<Result> {
+  readonly #bounds: WindowBounds<Result>;
+  readonly #pieces: Promise<Result>[] = [];
+  #bytes = 0;
+  #ended = false;
+  #wake: (() => void)[] = [];
+
+  constructor(bounds: WindowBounds<Result>) {
+    this.#bounds = bounds;
+  }
+
+  /** Whether nothing more is added. */
+  get ended(): boolean {
+    return this.#ended;
+  }
+
+  get first(): Promise<Result> | undefined {
+    return this.#pieces[0];
+  }
+
+  get isFull(): boolean {
+    const { pieces, bytes } = this.#bounds;
+    return !this.#ended && this.#pieces.length > 0 && (this.#pieces.length >= pieces || this.#bytes >= bytes);
+  }
+
+  add(work: Promise<Result>): void {
+    const counted = work.then((result) => {
+      this.#bytes += this.#bounds.sizeOf(result);
+      return result;
+    });
+    // Who takes it sees the error; until then it is nobody's.
+    counted.catch(() => undefined);
+    this.#pieces.push(counted);
+    this.#changed();
+  }
+
+  /** Gives up the first piece, whose result has been used up. */
+  drop(result: Result): void {
+    void this.#pieces.shift();
+    this.#bytes -= this.#bounds.sizeOf(result);
+    this.#changed();
+  }
+
+  close(): void {
+    this.#ended = true;
+    this.#changed();
+  }
+
+  change(): Promise<void> {
+    return new Promise((resolve) => this.#wake.push(resolve));
+  }
+
+  #changed(): void {
+    for (const wake of this.#wake.splice(0)) wake();
   }
 }

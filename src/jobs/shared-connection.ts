@@ -48,7 +48,7 @@ export async function fromShared<Value>(work: () => Promise<Value>): Promise<Val
   } catch (error) {
     if (error instanceof Fault) throw error;
     // The server refuses what needs memory once it has reached its own limit (policy noeviction).
-    if (String((error as Error).message).startsWith('OOM')) {
+    if ((error as Error).message.startsWith('OOM')) {
       throw fault('jobs-full', '', { reason: 'The store that the instances share is full' });
     }
     throw fault('queue-unreachable', '');

@@ -170,13 +170,13 @@ describe('a batch', () => {
     for (let i = 0; i < 5; i++) expect((await post('/v1/modes', {})).status).toBe(200);
     // Each waits for one line at most, of the 60 that are there.
     expect(performance.now() - started).toBeLessThan(1000);
-    let open = true;
+    const state = { open: true };
     const flood = async (): Promise<void> => {
-      while (open) expect((await post('/v1/modes', { do: 'busy', milliseconds: 5 })).status).toBe(200);
+      while (state.open) expect((await post('/v1/modes', { do: 'busy', milliseconds: 5 })).status).toBe(200);
     };
     const floods = [flood(), flood()];
     expect(linesOf(await (await batch).text())).toHaveLength(60);
-    open = false;
+    state.open = false;
     await Promise.all(floods);
   });
 

@@ -69,6 +69,14 @@ async function reach(
   throw new Error(`the job stays ${seen}`);
 }
 
+async function until(condition: () => Promise<boolean>): Promise<void> {
+  const end = performance.now() + 30_000;
+  while (!(await condition())) {
+    if (performance.now() > end) throw new Error('the awaited state did not come');
+    await pause(5);
+  }
+}
+
 async function codeOf(response: Response): Promise<unknown[]> {
   return [response.status, ((await response.json()) as { code: string }).code];
 }
@@ -163,7 +171,7 @@ describe.runIf(redisIsHere)('jobs that instances share', { timeout: 300_000 }, (
     await redis.start();
     const [one, two] = await Promise.all([replica(redis.url), replica(redis.url)]);
     // Each line takes a second or more.
-    const heavy = Array.from({ length: 64 }, (_, i) => ({
+    const heavy = Array.from({ length: 320 }, (_, i) => ({
       id: `h${i}`,
       operation: 'modes',
       request: { member: member(i), series: { modes: 20_000 } },
@@ -173,11 +181,11 @@ describe.runIf(redisIsHere)('jobs that instances share', { timeout: 300_000 }, (
       const { running } = (await (await fetch(`${url}/health/ready`)).json()) as { running: number };
       return running > 0;
     };
-    while (!((await busy(one)) && (await busy(two)))) await pause(20);
+    await until(async () => (await busy(one)) && (await busy(two)));
     const asked = performance.now();
     const answer = await fetch(one.url + job.links.self, { method: 'DELETE' });
     expect(((await answer.json()) as JobAnswer).state).toBe('cancelled');
-    while ((await busy(one)) || (await busy(two))) await pause(5);
+    await until(async () => !(await busy(one)) && !(await busy(two)));
     expect(performance.now() - asked).toBeLessThan(200);
     expect(await codeOf(await fetch(two.url + job.links.result))).toEqual([404, 'job-cancelled']);
   });

@@ -1,6 +1,7 @@
 import { mostValues as mostSamples } from '../../contract/check-sample.ts';
 import { mostFaults } from '../../contract/read-request.ts';
 import { nestingLimit } from '../../encoding/json-syntax.ts';
+import { mostLines } from '../../jobs/split-lines.ts';
 import { FREQUENCY_LIMIT } from '../../solutions/refine-frequencies.ts';
 import { MOST_VALUES as mostTransferValues } from '../../solutions/transfer-functions.ts';
 
@@ -45,7 +46,8 @@ export function serviceLimits(schemas: Schemas, bodyLimit: number): ServiceLimit
     { what: 'outputs of one request', limit: most('TransferFunctionsRequest', 'outputs') },
     { what: 'frequencies; refined ones included', limit: grouped(FREQUENCY_LIMIT) },
     { what: 'outputs × frequencies', limit: grouped(mostTransferValues) },
-    { what: 'body', limit: byteText(bodyLimit) },
+    { what: 'body; line of a batch', limit: byteText(bodyLimit) },
+    { what: 'lines of a batch', limit: grouped(mostLines) },
     { what: 'nesting of a body', limit: `${nestingLimit} levels` },
     { what: 'faults listed at once', limit: String(mostFaults) },
   ];
