@@ -20,7 +20,7 @@ const stalledInterval = 5000;
 const mostStalls = 20;
 
 /** How often it is looked whether work under way is still wanted, ms. */
-const watchPeriod = 50;
+const watchPeriod = 25;
 
 export interface ChunkWorkerOptions {
   readonly url: string;

@@ -76,7 +76,7 @@ interface Job {
 const patience = 250;
 
 /** The same for work that was cancelled, which happens rarely: it must stop at once. */
-const backgroundPatience = 50;
+const backgroundPatience = 20;
 
 /**
  * A fixed number of worker threads behind a bounded line of waiting requests, first come, first

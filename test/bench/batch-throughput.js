@@ -76,7 +76,7 @@ async function runBatch(url, sent, onLine = async () => undefined) {
 
 /** Loops of the same work in one process and in two at once: what the machine has to give at this moment. */
 async function ceiling() {
-  const loop = 'let s=0;for(let i=1;i<3e8;i++)s+=Math.sqrt(i);';
+  const loop = 'let s=0;for(let i=1;i<5e7;i++)s+=Math.sqrt(i);';
   const run = async (count) => {
     const started = performance.now();
     await Promise.all(

