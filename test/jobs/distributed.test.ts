@@ -6,7 +6,7 @@ import { batchOf, linesOf, postBatch } from '../http/batch-client.ts';
 import { startServiceProcess, type ServiceProcess } from '../http/service-process.ts';
 import { howToInstall, redisIsHere, RedisServer } from './redis-server.ts';
 
-if (!redisIsHere) console.warn(`Skipped: jobs that instances share. ${howToInstall}`);
+if (!redisIsHere) process.stderr.write(`\nSKIPPED: jobs that instances share. ${howToInstall}\n`);
 
 const later = { prefer: 'respond-async' };
 const member = (i: number): object => ({
