@@ -5,7 +5,12 @@ import { pino } from 'pino';
 import { readRequest } from './contract/read-request.ts';
 import { buildApp } from './http/app.ts';
 import type { Example } from './http/pages/example.ts';
+import { damped } from './jobs/damped.ts';
+import { DistributedJobs } from './jobs/distributed-jobs.ts';
+import { EmbeddedJobs } from './jobs/embedded-jobs.ts';
 import { EmbeddedResults } from './jobs/embedded-results.ts';
+import { sharedConnection } from './jobs/shared-connection.ts';
+import { SharedResults } from './jobs/shared-results.ts';
 import { SolverPool } from './pool/solver-pool.ts';
 import { readSettings, type Settings } from './settings.ts';
 
@@ -23,13 +28,39 @@ const pool = new SolverPool({
 });
 const document = { yaml: readBeside('openapi.yaml'), json: readBeside('openapi.json') };
 const mebibyte = 1024 * 1024;
+const embeddedResults = new EmbeddedResults({
+  requests: settings.RESULTS_COUNT,
+  requestBytes: settings.RESULTS_MEMORY * mebibyte,
+  answerBytes: settings.ANSWERS_MEMORY * mebibyte,
+});
+const url = settings.QUEUE_URL;
+const shared =
+  url === ''
+    ? null
+    : sharedConnection(
+        url,
+        damped((error) => logger.error({ err: error }, 'queue away')),
+      );
+const jobsBytes = settings.JOBS_MEMORY * mebibyte;
 const app = await buildApp({
   pool,
-  results: new EmbeddedResults({
-    requests: settings.RESULTS_COUNT,
-    requestBytes: settings.RESULTS_MEMORY * mebibyte,
-    answerBytes: settings.ANSWERS_MEMORY * mebibyte,
-  }),
+  results: shared === null ? embeddedResults : new SharedResults({ client: shared, near: embeddedResults }),
+  batchLimit: settings.BATCH_LIMIT,
+  makeJobs: (solver, onError) =>
+    url === ''
+      ? new EmbeddedJobs({
+          bounds: { count: settings.JOBS_COUNT, bytes: jobsBytes, age: settings.JOBS_AGE },
+          solver,
+          onError,
+        })
+      : new DistributedJobs({
+          url,
+          age: settings.JOBS_AGE,
+          bytes: jobsBytes,
+          workers: settings.WORKERS,
+          solver,
+          onError,
+        }),
   version: (JSON.parse(document.json) as { info: { version: string } }).info.version,
   readRequest,
   solveDeadline: settings.SOLVE_DEADLINE,
@@ -44,12 +75,13 @@ closeWithGrace({ delay: (settings.STOP_GRACE + closingTime) * 1000, logger }, as
   if (err) logger.fatal({ err }, 'stopping after an error');
   else logger.info({ signal }, 'stopping');
   await app.close();
+  shared?.disconnect();
 });
 
 try {
-  const url = await app.listen({ host: settings.HOST, port: settings.PORT });
+  const address = await app.listen({ host: settings.HOST, port: settings.PORT });
   await pool.start();
-  logger.info({ url, workers: settings.WORKERS }, 'ready');
+  logger.info({ url: address, workers: settings.WORKERS }, 'ready');
 } catch (error) {
   exit(wordingOf(error));
 }

@@ -19,6 +19,14 @@ export interface Settings {
   readonly RESULTS_MEMORY: number;
   /** MiB */
   readonly ANSWERS_MEMORY: number;
+  readonly BATCH_LIMIT: number;
+  readonly JOBS_COUNT: number;
+  /** MiB */
+  readonly JOBS_MEMORY: number;
+  /** s */
+  readonly JOBS_AGE: number;
+  /** Address of the shared queue; empty for jobs in this process. */
+  readonly QUEUE_URL: string;
   readonly LOG_LEVEL: string;
 }
 
@@ -48,6 +56,11 @@ const properties: Readonly<Record<keyof Settings, object>> = {
   RESULTS_COUNT: integer(1, 10_000_000, 10_000),
   RESULTS_MEMORY: integer(1, 65_536, 64),
   ANSWERS_MEMORY: integer(0, 65_536, 128),
+  BATCH_LIMIT: integer(1, 10_000, 16),
+  JOBS_COUNT: integer(1, 1_000_000, 1000),
+  JOBS_MEMORY: integer(1, 65_536, 256),
+  JOBS_AGE: integer(1, 7 * 86_400, 3600),
+  QUEUE_URL: { type: 'string', pattern: '^(rediss?://.+)?$', default: '' },
   LOG_LEVEL: { enum: ['fatal', 'error', 'warn', 'info', 'debug', 'trace', 'silent'], default: 'info' },
 };
 

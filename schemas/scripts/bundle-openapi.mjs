@@ -56,7 +56,7 @@ function inlineExamples(value) {
 function listExamples() {
   const { paths } = parse(readFileSync(new URL('openapi.yaml', top), 'utf8'));
   return Object.entries(paths).flatMap(([url, { post }]) =>
-    Object.values(post?.requestBody.content['application/json'].examples ?? {}).map(
+    Object.values(post?.requestBody.content['application/json']?.examples ?? {}).map(
       ({ summary, externalValue }) => ({
         name: basename(externalValue, '.json'),
         title: summary,

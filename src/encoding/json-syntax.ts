@@ -40,10 +40,11 @@ class KeySet {
  * the line and column of an error, keys that stand twice, the key `__proto__`, numbers beyond
  * double precision, nesting beyond 64 levels.
  *
+ * @param firstLine number of the first line of the text
  * @returns records with RFC 6901 pointers, at most 50; empty when JSON.parse reads the text faithfully
  * Cost: one pass over the characters, O(length).
  */
-export function findJsonFaults(text: string): FaultRecord[] {
+export function findJsonFaults(text: string, firstLine = 1): FaultRecord[] {
   const faults: FaultRecord[] = [];
   const open: Container[] = [];
   let at = skipBlank(text, 0);
@@ -74,6 +75,7 @@ export function findJsonFaults(text: string): FaultRecord[] {
             text,
             ~end,
             ~end === at ? 'a value' : first === 0x22 ? 'the rest of a string' : 'a digit',
+            firstLine,
           ),
         ];
       at = end;
@@ -83,7 +85,7 @@ export function findJsonFaults(text: string): FaultRecord[] {
       at = skipBlank(text, at);
       const container = open.at(-1);
       if (container === undefined) {
-        return at === text.length ? faults : [syntaxFault(text, at, 'the end of the text')];
+        return at === text.length ? faults : [syntaxFault(text, at, 'the end of the text', firstLine)];
       }
       const next = text.charCodeAt(at);
       if (next === 0x2c) {
@@ -98,7 +100,7 @@ export function findJsonFaults(text: string): FaultRecord[] {
       }
       const isArray = container.keys === null;
       if (next !== (isArray ? 0x5d : 0x7d))
-        return [syntaxFault(text, at, isArray ? '"," or "]"' : '"," or "}"')];
+        return [syntaxFault(text, at, isArray ? '"," or "]"' : '"," or "}"', firstLine)];
       open.pop();
       at++;
     }
@@ -106,9 +108,9 @@ export function findJsonFaults(text: string): FaultRecord[] {
 
   /** Reads `"key" :` and stops before the value. */
   function readKey(): FaultRecord[] | null {
-    if (text.charCodeAt(at) !== 0x22) return [syntaxFault(text, at, 'a key in double quotes')];
+    if (text.charCodeAt(at) !== 0x22) return [syntaxFault(text, at, 'a key in double quotes', firstLine)];
     const end = stringEnd(text, at);
-    if (end < 0) return [syntaxFault(text, ~end, 'the rest of a key')];
+    if (end < 0) return [syntaxFault(text, ~end, 'the rest of a key', firstLine)];
     const raw = text.slice(at + 1, end - 1);
     const key = raw.includes('\\') ? (JSON.parse(text.slice(at, end)) as string) : raw;
     const container = open[open.length - 1];
@@ -116,7 +118,7 @@ export function findJsonFaults(text: string): FaultRecord[] {
     if (!container.keys?.add(key)) report('duplicate-key', { key: JSON.stringify(key) });
     if (key === '__proto__') report('reserved-key', { key: JSON.stringify(key) });
     at = skipBlank(text, end);
-    if (text.charCodeAt(at) !== 0x3a) return [syntaxFault(text, at, '":"')];
+    if (text.charCodeAt(at) !== 0x3a) return [syntaxFault(text, at, '":"', firstLine)];
     at = skipBlank(text, at + 1);
     return null;
   }

@@ -63,9 +63,9 @@ function digitsEnd(text: string, at: number): number {
 }
 
 /** A syntax error at a position: line and column from 1, what stands there, what should. */
-export function syntaxFault(text: string, at: number, expected: string): FaultRecord {
+export function syntaxFault(text: string, at: number, expected: string, firstLine: number): FaultRecord {
   const before = text.slice(0, at);
-  const line = before.split('\n').length;
+  const line = firstLine + before.split('\n').length - 1;
   const column = at - before.lastIndexOf('\n');
   const code = text.codePointAt(at);
   const found =

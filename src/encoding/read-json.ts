@@ -6,20 +6,21 @@ const decoder = new TextDecoder('utf-8', { fatal: true, ignoreBOM: true });
 /**
  * The value of a JSON text (RFC 8259) in UTF-8.
  *
- * @param bytes the whole body of a request
+ * @param bytes the whole body of a request, or a line of a batch
+ * @param firstLine number of its first line, for the places in faults
  * @throws Fault with every fault of the text and its place: `empty-body`, `not-utf8`, `malformed-json`,
  *   `duplicate-key`, `reserved-key`, `nested-too-deep`, `number-out-of-range`
  *
  * Cost: two passes over the text, O(bytes).
  */
-export function readJson(bytes: Uint8Array): unknown {
+export function readJson(bytes: Uint8Array, firstLine = 1): unknown {
   if (bytes.byteLength === 0) throw fault('empty-body', '');
   const text = decode(bytes);
   if (text.charCodeAt(0) === 0xfeff) {
     const reason = 'found a byte order mark, which JSON must not start with';
-    throw fault('malformed-json', '', { line: 1, column: 1, reason });
+    throw fault('malformed-json', '', { line: firstLine, column: 1, reason });
   }
-  const faults = findJsonFaults(text);
+  const faults = findJsonFaults(text, firstLine);
   if (faults.length > 0) throw new Fault(faults);
   return JSON.parse(text);
 }

@@ -1,6 +1,7 @@
 import { figureFaultWordings } from './figure-faults.ts';
 import { criterionFaultWordings } from './criterion-faults.ts';
 import { formFaultWordings } from './form-faults.ts';
+import { jobFaultWordings } from './job-faults.ts';
 import { loadFaultWordings } from './load-faults.ts';
 import { memberFaultWordings } from './member-faults.ts';
 import { representationFaultWordings } from './representation-faults.ts';
@@ -20,6 +21,7 @@ export const catalogue = {
   ...criterionFaultWordings,
   ...serviceFaultWordings,
   ...representationFaultWordings,
+  ...jobFaultWordings,
 
   'pull-without-restraint': {
     title: 'A pull needs a restraint',

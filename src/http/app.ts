@@ -19,10 +19,17 @@ import { addHealthResources } from './health-resources.ts';
 import { addProblemReplies, pathOf, sendProblem } from './problem-replies.ts';
 import { requestId } from './request-id.ts';
 import { Answers } from '../jobs/answers.ts';
+import { damped } from '../jobs/damped.ts';
+import type { JobEngine } from '../jobs/job.ts';
+import { JobSolver } from '../jobs/job-solver.ts';
+import { LineSolver } from '../jobs/line-solver.ts';
 import type { ResultStore } from '../jobs/result-store.ts';
 import { addAnswerPreferences } from './answer-preferences.ts';
+import { addBatchResource } from './batch-resource.ts';
+import { addJobResources } from './job-resources.ts';
 import { addPageResources, type PageOptions } from './page-resources.ts';
 import { pinRequests } from './pinned-results.ts';
+import { problemOf } from './problem.ts';
 import { addReferencePage, isPagePart } from './reference-page.ts';
 import { knowAllMethods, templateOf } from './resource.ts';
 import { addResultResource } from './result-resource.ts';
@@ -32,10 +39,14 @@ import { addSolveResource, type SolveOptions } from './solve-resource.ts';
 /** Time that a request may take to arrive, s. */
 const requestTimeout = 60;
 
-export interface AppOptions extends Omit<SolveOptions, 'answers'>, Omit<PageOptions, 'resultUrls'> {
+export interface AppOptions extends Omit<SolveOptions, 'answers' | 'jobs'>, Omit<PageOptions, 'resultUrls'> {
   readonly pool: SolverPool;
   /** Where results are kept under their digests. */
   readonly results: ResultStore;
+  /** Batches that may be answered at the same time. */
+  readonly batchLimit: number;
+  /** Where jobs wait and run. */
+  readonly makeJobs: (solver: JobSolver, onError: (error: unknown) => void) => JobEngine;
   /** Seconds that work under way may take once the service is being stopped. */
   readonly stopGrace: number;
   readonly logger?: FastifyBaseLogger;
@@ -48,11 +59,12 @@ export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
     ...(logger === undefined ? {} : { loggerInstance: logger }),
     logController: new LogController({ disableRequestLogging: true }),
     genReqId: requestId,
-    requestTimeout: requestTimeout * 1000,
+    // A batch may take longer, so bodies have their own time (body.ts, line-source.ts).
+    requestTimeout: 0,
+    // Without a Host header Node itself would answer, and without a problem document.
+    http: { requireHostHeader: false, headersTimeout: requestTimeout * 1000 },
     // A request that meets a stopping service gets a problem document from the pool instead.
     return503OnClosing: false,
-    // Node itself would answer without a problem document.
-    http: { requireHostHeader: false },
     clientErrorHandler: clientErrorHandler(requestTimeout),
     frameworkErrors: (error, request, reply) => {
       const reason = error.code === 'FST_ERR_BAD_URL' ? 'the path is not percent-encoded' : error.message;
@@ -63,7 +75,12 @@ export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
   app.removeAllContentTypeParsers();
   app.addContentTypeParser('application/json', async (request: FastifyRequest, payload: IncomingMessage) => {
     const announced = request.headers['content-length'];
-    return readBody(payload, announced === undefined ? undefined : Number(announced), bodyLimit);
+    return readBody(
+      payload,
+      announced === undefined ? undefined : Number(announced),
+      bodyLimit,
+      requestTimeout,
+    );
   });
   await app.register(accepts);
   await app.register(helmet, {
@@ -81,7 +98,6 @@ export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
   });
   addRequestLog(app);
   addProblemReplies(app, pool, () => [...paths]);
-  addGracefulStop(app, options);
   const digests = await pinRequests(
     options.results,
     examples.map(({ operation, text }) => ({ operation, body: JSON.parse(text) as unknown })),
@@ -92,15 +108,30 @@ export async function buildApp(options: AppOptions): Promise<FastifyInstance> {
     store: options.results,
     version: options.version,
     longest: options.solveDeadline,
-    onStoreError: (error) => app.log.error({ err: error }, 'result store failed'),
+    onStoreError: damped((error) => app.log.error({ err: error }, 'result store failed')),
   });
-  const solving = { ...options, answers };
+  const lineSolver = new LineSolver({
+    pool,
+    deadline: options.solveDeadline,
+    lineLimit: bodyLimit,
+    problemOf,
+    onFailure: (cause, line) => app.log.error({ operation: 'batches', line, cause }, 'solver failed'),
+  });
+  const jobs = options.makeJobs(
+    new JobSolver(answers, lineSolver, options.solveDeadline),
+    damped((error) => app.log.error({ err: error }, 'jobs failed')),
+  );
+  app.addHook('onReady', async () => jobs.start());
+  addGracefulStop(app, options, jobs);
+  const solving = { ...options, answers, jobs, lineSolver };
   addAnswerPreferences(app);
   addSolveResource(app, '/v1/modes', 'modes', solving);
   addSolveResource(app, '/v1/responses', 'responses', solving);
   addSolveResource(app, '/v1/transfer-functions', 'transfer-functions', solving);
   addSolveResource(app, '/v1/checks', 'checks', solving);
   addResultResource(app, solving);
+  addBatchResource(app, solving);
+  addJobResources(app, solving);
   addHealthResources(app, pool);
   await app.register(async (pages) => {
     await addCompression(pages);
@@ -147,9 +178,9 @@ function addRequestLog(app: FastifyInstance): void {
  * given meanwhile end their connections: an idle kept-alive one would hold the server open for its
  * whole time-out.
  */
-function addGracefulStop(app: FastifyInstance, { pool, stopGrace }: AppOptions): void {
+function addGracefulStop(app: FastifyInstance, { pool, stopGrace }: AppOptions, jobs: JobEngine): void {
   app.addHook('preClose', async () => {
-    await pool.stop(stopGrace);
+    await Promise.all([jobs.stop(), pool.stop(stopGrace)]);
   });
   app.addHook('onSend', async (_request, reply) => {
     if (pool.isStopping) reply.header('connection', 'close');

@@ -11,17 +11,22 @@ const firstCapacity = 64 * 1024;
  * @param payload the stream of the body
  * @param announced Content-Length, or undefined for a chunked body
  * @param limit largest body in bytes
- * @throws Fault `body-too-large`, as early as it is known, and `malformed-http` for a broken body
+ * @param seconds time that the body may take
+ * @throws Fault `body-too-large`, as early as it is known, `request-timeout`, and `malformed-http` for a
+ *   broken body
  */
 export async function readBody(
   payload: Readable,
   announced: number | undefined,
   limit: number,
+  seconds: number,
 ): Promise<Uint8Array<ArrayBuffer>> {
   const tooLarge = (): Error => fault('body-too-large', '', { limit });
   if (announced !== undefined && announced > limit) throw tooLarge();
   let bytes = new Uint8Array(new ArrayBuffer(Math.min(announced ?? firstCapacity, firstCapacity)));
   let length = 0;
+  const tooSlow = fault('request-timeout', '', { seconds });
+  const timer = setTimeout(() => payload.destroy(tooSlow), seconds * 1000);
   try {
     const chunks: AsyncIterable<Buffer> = payload.iterator({ destroyOnReturn: false });
     for await (const chunk of chunks) {
@@ -39,6 +44,8 @@ export async function readBody(
   } catch (error) {
     if ((error as NodeJS.ErrnoException).code !== 'ECONNRESET') throw error;
     throw fault('malformed-http', '', { reason: 'the connection broke off inside the body' });
+  } finally {
+    clearTimeout(timer);
   }
   return bytes.subarray(0, length);
 }

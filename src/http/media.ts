@@ -1,7 +1,8 @@
-import type { FastifyRequest } from 'fastify';
+import type { FastifyReply, FastifyRequest } from 'fastify';
 import { fault } from '../faults/fault.ts';
 
-const wanted = 'as application/json in UTF-8, without a content coding';
+/** The media type of batches: one JSON text a line. */
+export const linesMediaType = 'application/x-ndjson';
 
 /**
  * The media type among those offered that the Accept header likes best (RFC 9110, section 12.5.1);
@@ -14,21 +15,31 @@ export function requireAcceptable(request: FastifyRequest, offered: readonly str
   throw fault('not-acceptable', '', { accept, offered: offered.join(', ') });
 }
 
-/** Refuses a body that is not plain JSON: media type, charset and coding are taken at their word. */
-export function requireJsonBody(request: FastifyRequest): void {
-  const { 'content-type': type, 'content-encoding': coding } = request.headers;
-  if (type === undefined || type === '') throw wrongMedia('A body without Content-Type');
-  if (!isJson(type)) throw wrongMedia(`Content-Type ${JSON.stringify(type)}`);
-  if (coding !== undefined && coding.toLowerCase() !== 'identity') {
-    throw wrongMedia(`Content-Encoding ${JSON.stringify(coding)}`);
-  }
+/**
+ * Refuses a body that is not of this plain type, and says in `Accept` what is taken: media type, charset
+ * and coding are taken at their word.
+ */
+export function requireBody(request: FastifyRequest, reply: FastifyReply, wanted: string): void {
+  const found = wrongBody(request.headers, wanted);
+  if (found === null) return;
+  reply.header('accept', wanted);
+  throw fault('unsupported-media-type', '', {
+    found,
+    wanted: `as ${wanted} in UTF-8, without a content coding`,
+  });
 }
 
-function wrongMedia(found: string): Error {
-  return fault('unsupported-media-type', '', { found, wanted });
+/** What is wrong with the body by its headers, or null. */
+function wrongBody(headers: FastifyRequest['headers'], wanted: string): string | null {
+  const { 'content-type': type, 'content-encoding': coding } = headers;
+  if (type === undefined || type === '') return 'A body without Content-Type';
+  if (!isPlain(type, wanted)) return `Content-Type ${JSON.stringify(type)}`;
+  const isCoded = coding !== undefined && coding.toLowerCase() !== 'identity';
+  return isCoded ? `Content-Encoding ${JSON.stringify(coding)}` : null;
 }
 
-/** `application/json`, with no parameter but `charset=utf-8`, which changes nothing. */
-function isJson(contentType: string): boolean {
-  return /^application\/json[ \t]*(;[ \t]*charset=("utf-8"|utf-8)[ \t]*)?;?[ \t]*$/i.test(contentType);
+/** The media type, with no parameter but `charset=utf-8`, which changes nothing. */
+function isPlain(contentType: string, wanted: string): boolean {
+  const [type, ...parameters] = contentType.split(';').map((part) => part.trim().toLowerCase());
+  return type === wanted && parameters.every((part) => /^(?:charset=(?:"utf-8"|utf-8))?$/.test(part));
 }

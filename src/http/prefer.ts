@@ -27,6 +27,11 @@ export function preferredWait(header: string | string[] | undefined): number | n
   return wait !== undefined && /^\d{1,9}$/.test(wait) ? Number(wait) : null;
 }
 
+/** Whether a `Prefer` header asks to be answered later: `respond-async` (RFC 7240, section 4.1). */
+export function prefersAsync(header: string | string[] | undefined): boolean {
+  return header !== undefined && parsePrefer(String(header)).has('respond-async');
+}
+
 function splitAtCommas(header: string): string[] {
   return header.match(/(?:[^",]|"(?:[^"\\]|\\.)*"?)+/g) ?? [];
 }

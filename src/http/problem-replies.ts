@@ -36,7 +36,6 @@ export function sendProblem(
 ): FastifyReply {
   const problem = problemOf(records, request.id);
   if (problem.status === 503) reply.header('retry-after', String(pool.retryAfter));
-  if (problem.status === 415) reply.header('accept', 'application/json');
   return reply
     .code(problem.status)
     .header('cache-control', 'no-store')

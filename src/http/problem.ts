@@ -11,9 +11,10 @@ export const problemMediaType = 'application/problem+json';
  * fault with that status.
  *
  * @param records at least one
- * @param requestId names this occurrence
+ * @param occurrence id of the request, or number of the line in a batch: lines name nothing that differs
+ *   from one time to another, so that equal lines have equal answers
  */
-export function problemOf(records: readonly FaultRecord[], requestId: string): ProblemDocument {
+export function problemOf(records: readonly FaultRecord[], occurrence: string | number): ProblemDocument {
   const leading = records.reduce((first, record) =>
     statusOf(record.code) < statusOf(first.code) ? record : first,
   );
@@ -25,8 +26,9 @@ export function problemOf(records: readonly FaultRecord[], requestId: string): P
       records.length === 1
         ? leading.detail
         : `${records.length} faults were found. The first: ${leading.detail}`,
-    instance: `urn:uuid:${requestId}`,
+    ...(typeof occurrence === 'string' ? { instance: `urn:uuid:${occurrence}` } : {}),
     code: leading.code,
+    ...(typeof occurrence === 'number' ? { line: occurrence } : {}),
     errors: records.map(({ pointer, detail, code }) => ({ pointer, detail, code })),
   };
 }

@@ -1,7 +1,7 @@
 import { METHODS } from 'node:http';
 import type { FastifyInstance, FastifyReply, FastifyRequest, RouteHandlerMethod } from 'fastify';
 import { fault } from '../faults/fault.ts';
-import { requireAcceptable, requireJsonBody } from './media.ts';
+import { requireAcceptable, requireBody } from './media.ts';
 
 export interface Resource {
   readonly url: string;
@@ -11,16 +11,23 @@ export interface Resource {
    */
   readonly offers: readonly string[] | ((request: FastifyRequest, reply: FastifyReply) => void);
   readonly get?: RouteHandlerMethod;
-  /** Takes application/json. */
   readonly post?: RouteHandlerMethod;
+  /** Media type of what it takes; application/json where none is given. */
+  readonly takes?: string;
+  readonly delete?: RouteHandlerMethod;
 }
 
 /**
  * Adds a resource with the methods it has; every other method of HTTP is answered with 405 and
  * `Allow`, OPTIONS with `Allow` alone.
  */
-export function addResource(app: FastifyInstance, { url, offers, get, post }: Resource): void {
-  const methods = [...(get === undefined ? [] : ['GET', 'HEAD']), ...(post === undefined ? [] : ['POST'])];
+export function addResource(app: FastifyInstance, resource: Resource): void {
+  const { url, offers, get, post, takes = 'application/json' } = resource;
+  const methods = [
+    ...(get === undefined ? [] : ['GET', 'HEAD']),
+    ...(post === undefined ? [] : ['POST']),
+    ...(resource.delete === undefined ? [] : ['DELETE']),
+  ];
   const negotiate = async (request: FastifyRequest, reply: FastifyReply): Promise<void> => {
     if (typeof offers === 'function') offers(request, reply);
     else requireAcceptable(request, offers);
@@ -29,10 +36,11 @@ export function addResource(app: FastifyInstance, { url, offers, get, post }: Re
   if (post !== undefined) {
     const onRequest = async (request: FastifyRequest, reply: FastifyReply): Promise<void> => {
       await negotiate(request, reply);
-      requireJsonBody(request);
+      requireBody(request, reply, takes);
     };
     app.post(url, { onRequest }, post);
   }
+  if (resource.delete !== undefined) app.delete(url, { onRequest: negotiate }, resource.delete);
   refuseOtherMethods(app, url, methods);
 }
 

@@ -5,6 +5,8 @@ import { readJson } from '../encoding/read-json.ts';
 import type { Answers } from '../jobs/answers.ts';
 import { warmUpBody } from '../pool/warm-up.ts';
 import { readPreferences, wantedAnswer } from './answer-preferences.ts';
+import { submitJob, type JobOptions } from './job-submission.ts';
+import { prefersAsync } from './prefer.ts';
 import { addResource } from './resource.ts';
 import { sendOutcome } from './send-answer.ts';
 import { limitsOf } from './solve-limits.ts';
@@ -19,7 +21,7 @@ export const inlineBodyLimit = 8 * 1024;
 /** Readings before the first request, until the compiler has seen the reading often enough. */
 const warmUpRounds = 100;
 
-export interface SolveOptions {
+export interface SolveOptions extends JobOptions {
   readonly answers: Answers;
   /** Reads a parsed body of an operation into the canonical request; throws Fault. */
   readonly readRequest: (operation: Operation, body: unknown) => unknown;
@@ -34,8 +36,9 @@ export function addSolveResource(
   app: FastifyInstance,
   url: string,
   operation: Operation,
-  { answers, readRequest, version, solveDeadline }: SolveOptions,
+  options: SolveOptions,
 ): void {
+  const { answers, readRequest, version, solveDeadline } = options;
   app.addHook('onReady', async () => {
     const body = warmUpBody(operation);
     for (let round = 0; round < warmUpRounds; round++) {
@@ -52,14 +55,14 @@ export function addSolveResource(
       const limits = limitsOf(request, reply, solveDeadline);
       const wanted = wantedAnswer(request, operation);
       const body = (request.body as Uint8Array<ArrayBuffer> | undefined) ?? new Uint8Array(0);
+      const isLarge = body.byteLength > inlineBodyLimit;
+      const read = isLarge ? null : readRequest(operation, readJson(body));
+      if (prefersAsync(request.headers.prefer))
+        return submitJob(request, reply, { kind: 'solve', operation, body }, options);
       const outcome =
-        body.byteLength > inlineBodyLimit
+        read === null
           ? await answers.toBody(operation, body, wanted, limits)
-          : await answers.toRequest(
-              identifyRequest(operation, readRequest(operation, readJson(body)), version),
-              wanted,
-              limits,
-            );
+          : await answers.toRequest(identifyRequest(operation, read, version), wanted, limits);
       return sendOutcome(request, reply, operation, outcome, limits);
     },
   });

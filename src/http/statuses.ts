@@ -73,6 +73,21 @@ export const statusOfFault: Readonly<Partial<Record<FaultCode, number>>> = {
   'nothing-to-tabulate': 422,
   'result-not-kept': 404,
 
+  // Batches and jobs
+  'line-too-long': 413,
+  'too-many-lines': 413,
+  'too-many-batches': 503,
+  'batch-stalled': 408,
+  'job-not-found': 404,
+  'job-not-finished': 409,
+  'job-cancelled': 404,
+  'job-failed': 500,
+  'job-result-too-large': 422,
+  'jobs-full': 503,
+  'idempotency-key-malformed': 400,
+  'idempotency-key-reused': 422,
+  'queue-unreachable': 503,
+
   // The solver pool
   'internal-error': 500,
   'energy-inconsistent': 500,

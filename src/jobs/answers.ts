@@ -3,7 +3,7 @@ import type { IdentifiedRequest } from '../contract/identify-request.ts';
 import { isSmall, type ContentCoding } from '../encoding/compress.ts';
 import { faultRecord } from '../faults/fault.ts';
 import type { AnswerForm, WantedAnswer } from '../pool/answer-form.ts';
-import type { SolveLimits, SolveOutcome, SolverPool } from '../pool/solver-pool.ts';
+import type { BackgroundLimits, SolveLimits, SolveOutcome, SolverPool } from '../pool/solver-pool.ts';
 import type { KeptJson } from '../pool/task.ts';
 import { answerKey } from './answer-key.ts';
 import type { ResultStore } from './result-store.ts';
@@ -64,6 +64,11 @@ export class Answers {
     return this.#store.find(digest);
   }
 
+  /** Makes sure that a request is kept; throws where the store fails. */
+  keep(result: IdentifiedRequest): Promise<void> {
+    return this.#store.keep(result);
+  }
+
   /** Answers a request that was read, and keeps it. */
   async toRequest(
     result: IdentifiedRequest,
@@ -80,7 +85,7 @@ export class Answers {
     operation: string,
     body: Uint8Array<ArrayBuffer>,
     wanted: WantedAnswer,
-    limits: SolveLimits,
+    limits: SolveLimits | BackgroundLimits,
   ): Promise<AnswerOutcome> {
     const task = { kind: 'body', operation, body, wanted, version: this.#version } as const;
     const outcome = await this.#pool.run(task, limits);

@@ -5,7 +5,8 @@ import { compress, decompress } from '../encoding/compress.ts';
 import { readJson } from '../encoding/read-json.ts';
 import { Fault } from '../faults/fault.ts';
 import { encodeAnswer } from './encode-answer.ts';
-import { buffersOf, type SolveResult, type SolverOperations, type SolveTask } from './task.ts';
+import { answerLines } from './serve-lines.ts';
+import { buffersOf, type AnyTask, type SolveResult, type SolverOperations, type SolveTask } from './task.ts';
 
 /**
  * The worker's side of the thread boundary: reads where the event loop has not, solves, encodes, and
@@ -14,22 +15,27 @@ import { buffersOf, type SolveResult, type SolverOperations, type SolveTask } fr
  * @param operations what the worker can solve, by name
  * @returns the function that the pool calls with every task
  */
-export function serveTasks(operations: SolverOperations): (task: SolveTask) => unknown {
+export function serveTasks(operations: SolverOperations): (task: AnyTask) => unknown {
   return (task) => handOver(runTask(operations, task));
 }
 
 /** Runs one task and tags what comes of it; never throws. */
-export function runTask(operations: SolverOperations, task: SolveTask): SolveResult {
+export function runTask(operations: SolverOperations, task: AnyTask): SolveResult {
   if (task.kind === 'ready') return { kind: 'ready' };
   const started = performance.now();
   try {
+    if (task.kind === 'lines') return { ...answerLines(operations, task), seconds: secondsSince(started) };
     const answered = task.kind === 'body' ? answerBody(operations, task) : answerRequest(operations, task);
-    return { kind: 'answer', ...answered, seconds: (performance.now() - started) / 1000 };
+    return { kind: 'answer', ...answered, seconds: secondsSince(started) };
   } catch (error) {
     if (error instanceof Fault) return { kind: 'faults', records: error.records };
     const stack = error instanceof Error ? (error.stack ?? error.message) : String(error);
     return { kind: 'error', memory: isOutOfMemory(error), stack };
   }
+}
+
+function secondsSince(started: number): number {
+  return (performance.now() - started) / 1000;
 }
 
 function answerBody(operations: SolverOperations, task: Extract<SolveTask, { kind: 'body' }>) {

@@ -2,7 +2,16 @@ import { performance } from 'node:perf_hooks';
 import { Piscina } from 'piscina';
 import { faultRecord, type FaultRecord } from '../faults/fault.ts';
 import { LoadEstimate } from './load-estimate.ts';
-import { buffersOf, type SolvedAnswer, type SolveResult, type SolveTask } from './task.ts';
+import {
+  buffersOf,
+  type AnyTask,
+  type LinesTask,
+  type SolvedAnswer,
+  type SolvedLines,
+  type SolveResult,
+  type SolveTask,
+} from './task.ts';
+import { WaitingLine } from './waiting-line.ts';
 
 export interface SolverPoolOptions {
   /** Compiled module whose default export serves the tasks. */
@@ -26,18 +35,38 @@ export interface SolveLimits {
   readonly gone?: AbortSignal;
 }
 
+/**
+ * Limits of work for which nobody waits at the other end of a connection: it lets other requests pass
+ * and does not count against the line, so whoever hands it in bounds how much of it there is.
+ */
+export interface BackgroundLimits {
+  readonly background: true;
+  /** Seconds from the moment that a worker begins. */
+  readonly deadline: number;
+  /** Aborts when it is not wanted any more. */
+  readonly gone: AbortSignal;
+  /** Told when a worker begins. */
+  readonly onStart?: () => void;
+}
+
 /** What comes of one request; `cause` is for the log, not for the client. */
 export type SolveOutcome =
   | SolvedAnswer
   | { readonly kind: 'faults'; readonly records: readonly FaultRecord[]; readonly cause?: string }
   | { readonly kind: 'gone' };
 
+/** What comes of lines of a batch; faults are those of the pool, for all of them. */
+export type LinesOutcome = SolvedLines | Exclude<SolveOutcome, { kind: 'answer' }>;
+
 /** One request on its way through the pool. */
 interface Job {
-  readonly task: SolveTask;
+  readonly task: AnyTask;
   readonly stopper: AbortController;
+  /** Told that a worker begins. */
+  readonly begin: () => void;
   /** Settles the request; later calls do nothing. */
-  readonly settle: (outcome: SolveOutcome) => void;
+  readonly settle: (outcome: SolveOutcome | SolvedLines) => void;
+  readonly patience: number;
 }
 
 /**
@@ -45,6 +74,9 @@ interface Job {
  * takes about as long, so stopping at once would cost more than it saves where clients often leave.
  */
 const patience = 250;
+
+/** The same for work that was cancelled, which happens rarely: it must stop at once. */
+const backgroundPatience = 20;
 
 /**
  * A fixed number of worker threads behind a bounded line of waiting requests, first come, first
@@ -58,7 +90,7 @@ export class SolverPool {
   readonly #options: SolverPoolOptions;
   readonly #threads: Piscina;
   readonly #load = new LoadEstimate();
-  readonly #waiting: Job[] = [];
+  readonly #waiting = new WaitingLine<Job>();
   readonly #running = new Set<Job>();
   #stopping = false;
   #ready = false;
@@ -83,6 +115,10 @@ export class SolverPool {
 
   get isStopping(): boolean {
     return this.#stopping;
+  }
+
+  get workers(): number {
+    return this.#options.workers;
   }
 
   get running(): number {
@@ -113,8 +149,11 @@ export class SolverPool {
    * Faults of the pool itself: `queue-full`, `deadline-exceeded`, `solver-out-of-memory`,
    * `solver-crashed`, `internal-error`, `stopping`.
    */
-  run(task: SolveTask, limits: SolveLimits): Promise<SolveOutcome> {
+  run(task: SolveTask, limits: SolveLimits | BackgroundLimits): Promise<SolveOutcome>;
+  run(task: LinesTask, limits: BackgroundLimits): Promise<LinesOutcome>;
+  run(task: AnyTask, limits: SolveLimits | BackgroundLimits): Promise<SolveOutcome | LinesOutcome> {
     if (this.#stopping) return Promise.resolve(refusal('stopping'));
+    if ('background' in limits) return new Promise((resolve) => this.#admit(task, limits, resolve));
     if (this.#running.size >= this.#options.workers && this.#waiting.length >= this.#options.queueLimit) {
       return Promise.resolve(refusal('queue-full', { limit: this.#options.queueLimit }));
     }
@@ -132,44 +171,58 @@ export class SolverPool {
     await this.#threads.destroy();
   }
 
-  #admit(task: SolveTask, limits: SolveLimits, resolve: (outcome: SolveOutcome) => void): void {
-    const left = Math.max(0, limits.arrived + limits.deadline * 1000 - performance.now());
-    const timer = setTimeout(() => {
-      job.settle(refusal('deadline-exceeded', { seconds: limits.deadline }));
-      job.stopper.abort();
-    }, left);
+  #admit(
+    task: AnyTask,
+    limits: SolveLimits | BackgroundLimits,
+    resolve: (outcome: SolveOutcome | LinesOutcome) => void,
+  ): void {
+    const background = 'background' in limits;
+    let timer: NodeJS.Timeout | undefined;
+    const allow = (milliseconds: number): void => {
+      timer = setTimeout(() => {
+        job.settle(refusal('deadline-exceeded', { seconds: limits.deadline }));
+        job.stopper.abort();
+      }, milliseconds);
+    };
     const leave = (): void => job.settle({ kind: 'gone' });
     const job: Job = {
       task,
       stopper: new AbortController(),
+      begin: () => {
+        if (!background) return;
+        allow(limits.deadline * 1000);
+        limits.onStart?.();
+      },
       settle: (outcome) => {
         clearTimeout(timer);
         limits.gone?.removeEventListener('abort', leave);
         resolve(outcome);
         this.#leave(job);
       },
+      patience: background ? backgroundPatience : patience,
     };
     if (limits.gone?.aborted) return leave();
     limits.gone?.addEventListener('abort', leave, { once: true });
-    this.#waiting.push(job);
+    if (!background) allow(Math.max(0, limits.arrived + limits.deadline * 1000 - performance.now()));
+    this.#waiting.add(job, background);
     this.#next();
   }
 
   /** Takes a settled request out of the line, or bounds the time of a worker that is still at it. */
   #leave(job: Job): void {
     if (this.#running.has(job)) {
-      setTimeout(() => this.#running.has(job) && job.stopper.abort(), patience).unref();
+      setTimeout(() => this.#running.has(job) && job.stopper.abort(), job.patience).unref();
       return;
     }
-    const place = this.#waiting.indexOf(job);
-    if (place >= 0) this.#waiting.splice(place, 1);
+    this.#waiting.remove(job);
   }
 
   #next(): void {
     while (this.#running.size < this.#options.workers) {
-      const job = this.#waiting.shift();
+      const job = this.#waiting.take();
       if (job === undefined) return;
       this.#running.add(job);
+      job.begin();
       void this.#solve(job);
     }
   }
@@ -177,7 +230,7 @@ export class SolverPool {
   async #solve(job: Job): Promise<void> {
     const { task, stopper } = job;
     const transferList = buffersOf(task);
-    let outcome: SolveOutcome;
+    let outcome: SolveOutcome | LinesOutcome;
     try {
       const result = (await this.#threads.run(task, { signal: stopper.signal, transferList })) as SolveResult;
       outcome = this.#outcomeOf(result);
@@ -190,11 +243,12 @@ export class SolverPool {
     if (this.#running.size === 0) this.#drained();
   }
 
-  #outcomeOf(result: SolveResult): SolveOutcome {
+  #outcomeOf(result: SolveResult): SolveOutcome | LinesOutcome {
     switch (result.kind) {
       case 'answer':
         this.#load.record(result.seconds);
         return result;
+      case 'lines':
       case 'faults':
         return result;
       case 'error':
@@ -205,7 +259,7 @@ export class SolverPool {
   }
 
   #refuseAll(): void {
-    for (const job of [...this.#waiting, ...this.#running]) {
+    for (const job of [...this.#waiting.all(), ...this.#running]) {
       job.settle(refusal('stopping'));
       job.stopper.abort();
     }

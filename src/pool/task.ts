@@ -34,6 +34,17 @@ export type SolveTask =
     }
   | { readonly kind: 'ready' };
 
+/** Lines of a batch, one after another in one buffer. */
+export interface LinesTask {
+  readonly kind: 'lines';
+  readonly bytes: OwnBytes;
+  /** The number of every line in its batch, and where it ends in the bytes. */
+  readonly lines: readonly { readonly number: number; readonly end: number }[];
+}
+
+/** Whatever a worker may be given. */
+export type AnyTask = SolveTask | LinesTask;
+
 /** The answer to a task. */
 export interface SolvedAnswer {
   readonly kind: 'answer';
@@ -48,12 +59,28 @@ export interface SolvedAnswer {
   readonly identified?: { readonly digest: string; readonly request: OwnBytes };
 }
 
+/** What came of one line: the length of its answer, or faults; its id where that could be read. */
+export type SolvedLine =
+  | { readonly id: string; readonly length: number }
+  | { readonly id: string | null; readonly records: readonly FaultRecord[] };
+
+/** What came of the lines of a task, in their order. */
+export interface SolvedLines {
+  readonly kind: 'lines';
+  /** JSON of the answers, one after another. */
+  readonly bytes: OwnBytes;
+  readonly lines: readonly SolvedLine[];
+  /** Time of the worker, s. */
+  readonly seconds: number;
+}
+
 /**
  * What crosses it on the way back. Plain records, because structured clone drops the own fields
  * and the subclass of an Error.
  */
 export type SolveResult =
   | SolvedAnswer
+  | SolvedLines
   | { readonly kind: 'faults'; readonly records: readonly FaultRecord[] }
   | { readonly kind: 'error'; readonly memory: boolean; readonly stack: string }
   | { readonly kind: 'ready' };
@@ -71,7 +98,7 @@ export interface SolverOperation {
 export type SolverOperations = Readonly<Record<string, SolverOperation>>;
 
 /** The buffers of a task or a result, which move to the other thread. */
-export function buffersOf(message: SolveTask | SolveResult): ArrayBuffer[] {
+export function buffersOf(message: AnyTask | SolveResult): ArrayBuffer[] {
   switch (message.kind) {
     case 'request':
       return [message.request, ...(message.kept === undefined ? [] : [message.kept.bytes])].map(bufferOf);
@@ -81,6 +108,8 @@ export function buffersOf(message: SolveTask | SolveResult): ArrayBuffer[] {
       return [message.bytes, ...(message.identified === undefined ? [] : [message.identified.request])].map(
         bufferOf,
       );
+    case 'lines':
+      return [message.bytes.buffer];
     default:
       return [];
   }

@@ -287,6 +287,48 @@ export interface BarStiffnessSegment {
   name?: string;
 }
 /**
+ * What came of one line of a batch: an answer or a problem.
+ */
+export interface BatchLineAnswer {
+  /**
+   * Name of the line; null where the line has none that can be read.
+   */
+  id: string | null;
+  /**
+   * HTTP status that the same request would have had by itself.
+   */
+  status: number;
+  /**
+   * The answer, the same bytes as those of a single request; where the status is 200.
+   */
+  answer?: {
+    [k: string]: unknown;
+  };
+  /**
+   * What is wrong, with the number of the line; where the status is 400 or more. Its pointers lead into the line.
+   */
+  problem?: ProblemDocument;
+}
+/**
+ * One line of a batch.
+ */
+export interface BatchLineRequest {
+  /**
+   * A name of the caller for this line, which its answer bears too.
+   */
+  id: string;
+  /**
+   * What is asked for, as in the path of a single request: modes, responses, transfer-functions.
+   */
+  operation: string;
+  /**
+   * The request, as it would be sent to /v1/{operation}.
+   */
+  request: {
+    [k: string]: unknown;
+  };
+}
+/**
  * An acceleration that acts on all inertia, node masses included: a force of ρ times it per length.
  */
 export interface BodyForce {
@@ -810,6 +852,67 @@ export interface InitialMotion {
   impulses?: Impulse[];
 }
 /**
+ * A job and how far it is.
+ */
+export interface JobAnswer {
+  /**
+   * Name of the job.
+   */
+  id: string;
+  /**
+   * queued: no solver has begun; running; succeeded: the result is there; failed: the result is a problem document; cancelled.
+   */
+  state: 'queued' | 'running' | 'succeeded' | 'failed' | 'cancelled';
+  progress: JobProgress;
+  /**
+   * When the job was taken, RFC 3339, UTC.
+   */
+  submitted: string;
+  /**
+   * When a solver began.
+   */
+  started?: string;
+  /**
+   * When it succeeded, failed or was cancelled.
+   */
+  finished?: string;
+  links: JobLinks;
+}
+/**
+ * Where the parts of a job are.
+ */
+export interface JobLinks {
+  /**
+   * This document; DELETE cancels the job.
+   */
+  self: string;
+  /**
+   * Its progress as server-sent events.
+   */
+  events: string;
+  /**
+   * Its result, once it has succeeded.
+   */
+  result: string;
+}
+/**
+ * How much of a job is done. It never goes back.
+ */
+export interface JobProgress {
+  /**
+   * Lines of a batch that are answered; 0 or 1 of a single solve.
+   */
+  done: number;
+  /**
+   * Lines of the batch; 1 of a single solve.
+   */
+  total: number;
+  /**
+   * Estimate of the rest from the pace so far, s; while a batch is running.
+   */
+  secondsLeft?: number;
+}
+/**
  * The process answers.
  */
 export interface LiveAnswer {
@@ -1303,6 +1406,10 @@ export interface ProblemDocument {
    * Stable code.
    */
   code: string;
+  /**
+   * Number of the line in a batch, the first is 1; blank lines count.
+   */
+  line?: number;
   /**
    * Everything that is wrong with the request, at most 50 faults and a last entry that says how many more there are.
    */

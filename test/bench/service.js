@@ -1,6 +1,7 @@
 // The real app in front of the worker named on the command line; prints its address when it is ready.
 import { readRequest } from '../../dist/contract/read-request.js';
 import { buildApp } from '../../dist/http/app.js';
+import { EmbeddedJobs } from '../../dist/jobs/embedded-jobs.js';
 import { EmbeddedResults } from '../../dist/jobs/embedded-results.js';
 import { SolverPool } from '../../dist/pool/solver-pool.js';
 
@@ -23,7 +24,11 @@ const app = await buildApp({
   solveDeadline: 60,
   bodyLimit: 8 * 1024 * 1024,
   stopGrace: 1,
-  document: { yaml: '', json: '' },
+  batchLimit: 16,
+  makeJobs: (solver, onError) =>
+    new EmbeddedJobs({ bounds: { count: 100, bytes: 1e8, age: 60 }, solver, onError }),
+  document: { yaml: '', json: '{"components":{"schemas":{}}}' },
+  examples: [],
 });
 const url = await app.listen({ host: '127.0.0.1', port: 0 });
 await pool.start();

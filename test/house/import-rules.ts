@@ -34,6 +34,8 @@ export const homesOfPackage: Readonly<Record<string, readonly string[]>> = {
   xmlbuilder2: ['encoding'],
   piscina: ['pool'],
   'lru-cache': ['jobs'],
+  bullmq: ['jobs'],
+  ioredis: ['jobs'],
   fastify: ['http', 'main.ts'],
   '@fastify/accepts': ['http'],
   '@fastify/compress': ['http'],

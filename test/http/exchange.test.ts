@@ -69,7 +69,7 @@ describe('an exchange over HTTP', () => {
       status: 404,
       code: 'not-found',
       detail:
-        /\/v2\/modes\. .*\/v1\/modes, \/v1\/responses, \/v1\/transfer-functions, \/v1\/checks, \/v1\/results\/\{digest\}, \/health\/live/,
+        /\/v2\/modes\. .*\/v1\/modes, \/v1\/responses, \/v1\/transfer-functions, \/v1\/checks, \/v1\/results\/\{digest\}, \/v1\/batches, \/v1\/jobs\/\{id\}, .*\/health\/live/,
     });
     // Before the body: no media type is asked for where nothing is served.
     await expectProblem(await service.post('/nowhere', 'x', { 'content-type': 'text/xml' }), {

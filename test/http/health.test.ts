@@ -4,7 +4,7 @@ import { EmbeddedResults } from '../../src/jobs/embedded-results.ts';
 import { SolverPool } from '../../src/pool/solver-pool.ts';
 import { trialWorker } from '../pool/trial-pool.ts';
 import { trialPages } from './trial-pages.ts';
-import { startTrialService, type TrialService } from './trial-service.ts';
+import { trialJobs, startTrialService, type TrialService } from './trial-service.ts';
 
 let service: TrialService;
 beforeAll(async () => {
@@ -34,6 +34,7 @@ describe('the health of the service', () => {
       solveDeadline: 1,
       bodyLimit: 1024,
       stopGrace: 1,
+      ...trialJobs,
       ...trialPages,
     });
     const live = await app.inject('/health/live');

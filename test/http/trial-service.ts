@@ -2,6 +2,7 @@ import { connect, type AddressInfo } from 'node:net';
 import type { FastifyBaseLogger, FastifyInstance } from 'fastify';
 import { fault } from '../../src/faults/fault.ts';
 import { buildApp, type AppOptions } from '../../src/http/app.ts';
+import { EmbeddedJobs } from '../../src/jobs/embedded-jobs.ts';
 import { EmbeddedResults } from '../../src/jobs/embedded-results.ts';
 import type { SolverPool, SolverPoolOptions } from '../../src/pool/solver-pool.ts';
 import { startTrialPool } from '../pool/trial-pool.ts';
@@ -18,10 +19,27 @@ export interface TrialService {
 export interface TrialOptions {
   readonly pool?: Partial<SolverPoolOptions>;
   readonly app?: Partial<
-    Pick<AppOptions, 'solveDeadline' | 'bodyLimit' | 'stopGrace' | 'results' | 'version' | 'examples'>
+    Pick<
+      AppOptions,
+      | 'solveDeadline'
+      | 'bodyLimit'
+      | 'stopGrace'
+      | 'results'
+      | 'version'
+      | 'examples'
+      | 'batchLimit'
+      | 'makeJobs'
+    >
   >;
   readonly logger?: FastifyBaseLogger;
 }
+
+/** Batches and jobs of the tests. */
+export const trialJobs: Pick<AppOptions, 'batchLimit' | 'makeJobs'> = {
+  batchLimit: 4,
+  makeJobs: (solver, onError) =>
+    new EmbeddedJobs({ bounds: { count: 100, bytes: 1e7, age: 60 }, solver, onError }),
+};
 
 /** The real app on a free port, in front of the worker of the tests; `do` in a request says what it does. */
 export async function startTrialService(options: TrialOptions = {}): Promise<TrialService> {
@@ -34,6 +52,7 @@ export async function startTrialService(options: TrialOptions = {}): Promise<Tri
     solveDeadline: 30,
     bodyLimit: 8 * 1024 * 1024,
     stopGrace: 5,
+    ...trialJobs,
     ...trialPages,
     ...options.app,
     ...(options.logger === undefined ? {} : { logger: options.logger }),

@@ -1,5 +1,6 @@
 import { mostFaults } from '../../contract/read-request.ts';
 import { nestingLimit } from '../../encoding/json-syntax.ts';
+import { mostLines } from '../../jobs/split-lines.ts';
 import { ANSWER_VALUES, FREQUENCY_LIMIT } from '../../solutions/limits.ts';
 
 /** What a limit is read from: the schemas of the reference document. */
@@ -43,7 +44,8 @@ export function serviceLimits(schemas: Schemas, bodyLimit: number): ServiceLimit
     { what: 'outputs of one request', limit: most('TransferFunctionsRequest', 'outputs') },
     { what: 'frequencies; refined ones included', limit: grouped(FREQUENCY_LIMIT) },
     { what: 'outputs × frequencies', limit: grouped(ANSWER_VALUES) },
-    { what: 'body', limit: byteText(bodyLimit) },
+    { what: 'body; line of a batch', limit: byteText(bodyLimit) },
+    { what: 'lines of a batch', limit: grouped(mostLines) },
     { what: 'nesting of a body', limit: `${nestingLimit} levels` },
     { what: 'faults listed at once', limit: String(mostFaults) },
   ];
