@@ -28,7 +28,7 @@ describe('the settings', () => {
       HOME: '/root',
     });
     expect(settings).toMatchObject({ PORT: 0, WORKERS: 3, SOLVE_DEADLINE: 2.5, HOST: '::1' });
-    expect(Object.keys(settings)).toHaveLength(12);
+    expect(Object.keys(settings)).toHaveLength(17);
   });
 
   it('take an empty variable as not set', () => {
