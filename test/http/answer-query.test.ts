@@ -38,7 +38,7 @@ describe('the query of an answer', () => {
   });
 
   it.each([
-    [{ format: 'xml' }, /format is "xml", but must be one of: json, csv, arrow, svg, png/],
+    [{ format: 'yaml' }, /format is "yaml", but must be one of: json, csv, arrow, svg, png/],
     [{ format: '' }, /format is ""/],
     [{ format: 'CSV' }, /format is "CSV"/],
     [{ table: 'all' }, /table is "all", but must be one of: fields, modes, coefficients, transfer/],

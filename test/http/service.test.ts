@@ -12,6 +12,7 @@ const load = (file: string): string => readFileSync(new URL(file, examples), 'ut
 const files = readdirSync(examples);
 function pathOf(file: string): string {
   const request = JSON.parse(load(file)) as object;
+  if ('criteria' in request) return '/v1/checks';
   if ('input' in request) return '/v1/transfer-functions';
   return 'sample' in request ? '/v1/responses' : '/v1/modes';
 }
@@ -19,6 +20,7 @@ const schemaOf = {
   '/v1/modes': 'ModesAnswer',
   '/v1/responses': 'ResponsesAnswer',
   '/v1/transfer-functions': 'TransferFunctionsAnswer',
+  '/v1/checks': 'ChecksAnswer',
 } as Record<string, string>;
 
 function expectValid(schema: string, document: unknown): void {
