@@ -67,7 +67,10 @@ async function runBatch(url, sent, onLine = async () => undefined) {
   const [response] = await once(request, 'response');
   let answered = 0;
   for await (const chunk of response) {
-    for (const byte of chunk) if (byte === 10 && ++answered % 100 === 0) await onLine(answered);
+    // searched, not walked: a reader that walks over 75 MB byte by byte takes a core from the workers
+    for (let at = chunk.indexOf(10); at >= 0; at = chunk.indexOf(10, at + 1)) {
+      if (++answered % 100 === 0) await onLine(answered);
+    }
   }
   await sending;
   if (answered !== sent.length) throw new Error(`${answered} answers to ${sent.length} lines`);
