@@ -1,7 +1,7 @@
 import type { WaveMember } from '../members/wave-member.ts';
 import { cosine, meanSquare, meanSquareBetween, sinc } from '../numerics/wave-functions.ts';
 import { totalMass } from '../spectrum/spectrum-size.ts';
-import { ENDS, segmentMeanSquare, waveNumberSquare, type ModeShape } from './mode-shape.ts';
+import { ENDS, waveNumberSquare, type ModeShape } from './mode-shape.ts';
 import { StaticResponse } from './static-response.ts';
 
 /** Which ends move by one unit; uniform: every point does, no end being fixed. */
@@ -71,9 +71,4 @@ function uniformFactor(member: WaveMember, shape: ModeShape): number {
     }
   }
   return factor;
-}
-
-/** Share of a mode's own inertia in one segment, ρ∫φ² for unit modal mass. */
-export function inertiaShare(member: WaveMember, shape: ModeShape, i: number): number {
-  return member.inertia[i] * member.length[i] * segmentMeanSquare(member, i, shape.lambda, shape.ends);
 }

@@ -66,7 +66,7 @@ function statementOf(
   const subject = `The ${name}${average}`;
   const sampled = `the largest sampled value is ${shown(demand)} ${unit} at ${shown(at)} m and ${shown(time)} s`;
   const sure = upper === null ? '' : `, certainly not above ${shown(upper)} ${unit}`;
-  const series = `(${modesUsed} modes)`;
+  const series = `(${modesUsed} ${modesUsed === 1 ? 'mode' : 'modes'})`;
   switch (verdict) {
     case 'pass':
       return `${subject} stays at or below ${shown(limit)} ${unit} ${where} ${span}: ${sampled}${sure} ${series}.${gaugeTime > 0 ? ' It is the average that passes, not the value at an instant.' : ''}`;
